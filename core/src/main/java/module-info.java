@@ -3,7 +3,6 @@ module org.minorant.core {
     requires ojalgo;
 
     exports org.minorant.core;
-    exports org.minorant.core.certified;
     exports org.minorant.core.pair;
     exports org.minorant.core.state;
 }

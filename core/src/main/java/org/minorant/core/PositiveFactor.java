@@ -1,0 +1,52 @@
+package org.minorant.core;
+
+/**
+ * A positive operator written as a sum of squares: columns X (dimension × rank) with
+ *
+ * <pre>(1 − η) XX* − N₁ ≤ A ≤ (1 + η) XX* + N₂,   N₁, N₂ ≥ 0,  Tr N₁, Tr N₂ ≤ ν</pre>
+ *
+ * in the Loewner order. η is the relative error and ν the trace error; columns are exact numbers of about 32 digits.
+ *
+ * <p><b>Why.</b> Any quantity that is monotone and homogeneous in A, such as Tr[A ∧ B], inherits η as a relative error: it keeps
+ * its digits however small it is. ν is an absolute error, and is zero where the operator's own data fix its small
+ * eigenvalues (kets, factors, diagonal and well-conditioned positive matrices).
+ *
+ * @param columns X, with radius zero
+ * @param relativeError η, at least 0 and below 1
+ * @param traceError ν, at least 0
+ */
+public record PositiveFactor(EnclosedMatrix columns, double relativeError, double traceError) {
+
+    /**
+     * Validates the errors.
+     *
+     * @throws InvalidInputException if an error is negative, NaN or, for the relative one, not below 1
+     */
+    public PositiveFactor {
+        if (!(relativeError >= 0 && relativeError < 1 && traceError >= 0)) {
+            throw new InvalidInputException(
+                    "PositiveFactor",
+                    "the errors are " + relativeError + " and " + traceError,
+                    "0 <= relative < 1 and 0 <= trace",
+                    "check the derivation of the factor");
+        }
+    }
+
+    /**
+     * Returns the dimension of the space.
+     *
+     * @return the number of rows of X
+     */
+    public int dimension() {
+        return columns.rows();
+    }
+
+    /**
+     * Returns the number of columns, an upper bound on the rank up to the trace error.
+     *
+     * @return the number of columns of X
+     */
+    public int rank() {
+        return columns.columns();
+    }
+}

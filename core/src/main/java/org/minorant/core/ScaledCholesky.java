@@ -1,0 +1,123 @@
+package org.minorant.core;
+
+import org.minorant.core.internal.number.DoubleDouble;
+
+/**
+ * Cholesky factorisation A ≈ LL* in double-double with a certified relative error in the Loewner order.
+ *
+ * <p><b>Argument.</b> Let D be the diagonal matrix of powers of two near √a_ii and write A = D H D, L = D M. With E = A − LL* known
+ * entry by entry, ‖D⁻¹ED⁻¹‖ ≤ ε, and ‖M⁻¹‖ ≤ κ, every vector w obeys |⟨w,Ew⟩| ≤ ε‖Dw‖² ≤ εκ²‖M*Dw‖² = εκ²⟨w,LL*w⟩, so
+ * (1 − εκ²) LL* ≤ A ≤ (1 + εκ²) LL*. The condition number of H matters, not that of A: a graded matrix keeps the relative accuracy of
+ * its small eigenvalues (Demmel and Veselić, SIAM J. Matrix Anal. Appl. 13, 1204, 1992). κ comes from an approximate inverse W of M:
+ * ‖M⁻¹‖ ≤ ‖W‖/(1 − ‖1 − WM‖).
+ */
+record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
+
+    private static final ScaledCholesky FAILED = new ScaledCholesky(EnclosedMatrix.identity(1), Double.POSITIVE_INFINITY);
+
+    static ScaledCholesky of(HermitianOperator a) {
+        int n = a.rows();
+        int[] shift = new int[n];
+        EnclosedMatrix.Builder h = EnclosedMatrix.builder(n, n);
+        for (int i = 0; i < n; i++) {
+            if (!(a.re(i, i) > Double.MIN_NORMAL)) {
+                return FAILED;
+            }
+            shift[i] = Math.getExponent(a.re(i, i)) / 2;
+        }
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j < n; j++) {
+                int e = -shift[i] - shift[j];
+                h.set(i, j, Math.scalb(a.re(i, j), e), 0, Math.scalb(a.im(i, j), e), 0, underflow(a, i, j, e));
+            }
+        }
+        EnclosedMatrix scaled = h.build();
+        DoubleDouble[][][] m = factor(scaled);
+        if (m.length == 0) {
+            return FAILED;
+        }
+        EnclosedMatrix lower = assemble(m, new int[n]);
+        double epsilon = scaled.minus(lower.times(lower.adjoint())).frobeniusUpper();
+        double kappa = inverseNorm(lower);
+        double eta = epsilon * kappa * kappa * (1 + 0x1p-40);
+        return new ScaledCholesky(assemble(m, shift), eta < 1 ? eta : Double.POSITIVE_INFINITY);
+    }
+
+    /** What scaling by a power of two loses when the result is subnormal. */
+    private static double underflow(Operator a, int i, int j, int e) {
+        boolean exact = Math.scalb(Math.scalb(a.re(i, j), e), -e) == a.re(i, j) && Math.scalb(Math.scalb(a.im(i, j), e), -e) == a.im(i, j);
+        return exact ? 0 : 0x1p-1070;
+    }
+
+    /** Row-oriented Cholesky; an empty result if a pivot is not positive. Index: row, column, part (0 re, 1 im). */
+    private static DoubleDouble[][][] factor(EnclosedMatrix h) {
+        int n = h.rows();
+        DoubleDouble[][][] l = new DoubleDouble[n][][];
+        for (int i = 0; i < n; i++) {
+            l[i] = new DoubleDouble[i + 1][];
+            for (int j = 0; j <= i; j++) {
+                DoubleDouble x = DoubleDouble.of(h.re(i, j));
+                DoubleDouble y = DoubleDouble.of(h.im(i, j));
+                for (int k = 0; k < j; k++) {
+                    DoubleDouble[] p = l[i][k];
+                    DoubleDouble[] q = l[j][k];
+                    x = x.minus(p[0].times(q[0]).plus(p[1].times(q[1])));
+                    y = y.minus(p[1].times(q[0]).minus(p[0].times(q[1])));
+                }
+                if (i == j) {
+                    if (!(x.hi() > 0)) {
+                        return new DoubleDouble[0][][];
+                    }
+                    l[i][i] = new DoubleDouble[] {x.sqrt(), DoubleDouble.ZERO};
+                } else {
+                    l[i][j] = new DoubleDouble[] {x.dividedBy(l[j][j][0]), y.dividedBy(l[j][j][0])};
+                }
+            }
+        }
+        return l;
+    }
+
+    private static EnclosedMatrix assemble(DoubleDouble[][][] m, int[] shift) {
+        int n = m.length;
+        EnclosedMatrix.Builder b = EnclosedMatrix.builder(n, n);
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j <= i; j++) {
+                DoubleDouble x = m[i][j][0];
+                DoubleDouble y = m[i][j][1];
+                b.set(
+                        i,
+                        j,
+                        Math.scalb(x.hi(), shift[i]),
+                        Math.scalb(x.lo(), shift[i]),
+                        Math.scalb(y.hi(), shift[i]),
+                        Math.scalb(y.lo(), shift[i]),
+                        0);
+            }
+        }
+        return b.build();
+    }
+
+    /** A bound on the norm of the inverse of a lower triangular matrix; infinite if it cannot be had. */
+    private static double inverseNorm(EnclosedMatrix m) {
+        int n = m.rows();
+        EnclosedMatrix.Builder w = EnclosedMatrix.builder(n, n);
+        for (int c = 0; c < n; c++) {
+            double[] x = new double[n];
+            double[] y = new double[n];
+            for (int i = c; i < n; i++) {
+                double p = i == c ? 1 : 0;
+                double q = 0;
+                for (int k = c; k < i; k++) {
+                    p -= m.re(i, k) * x[k] - m.im(i, k) * y[k];
+                    q -= m.re(i, k) * y[k] + m.im(i, k) * x[k];
+                }
+                x[i] = p / m.re(i, i);
+                y[i] = q / m.re(i, i);
+                w.set(i, c, x[i], 0, y[i], 0, 0);
+            }
+        }
+        EnclosedMatrix inverse = w.build();
+        double rest = inverse.times(m).minus(EnclosedMatrix.identity(n)).frobeniusUpper();
+        return rest < 0.5 ? inverse.frobeniusUpper() / (1 - rest) * (1 + 0x1p-50) : Double.POSITIVE_INFINITY;
+    }
+}
