@@ -60,9 +60,13 @@ public final class DensityOperator extends PositiveOperator {
         double tolerance = a.rows() * TRACE_ROUNDING;
         if (!(Math.abs(trace - 1) <= tolerance)) {
             throw new InvalidInputException(
-                    "DensityOperator.of", "the trace is " + trace, "1 within " + tolerance, "use DensityOperator.nearest to normalise");
+                    "DensityOperator.of",
+                    "the trace is " + trace,
+                    "1 within " + tolerance,
+                    "use DensityOperator.nearest to normalise");
         }
-        return new DensityOperator(a instanceof PositiveOperator p ? p : PositiveOperator.ofEntries("DensityOperator.of", a));
+        return new DensityOperator(
+                a instanceof PositiveOperator p ? p : PositiveOperator.ofEntries("DensityOperator.of", a));
     }
 
     /**
@@ -84,7 +88,10 @@ public final class DensityOperator extends PositiveOperator {
         double tolerance = re.length * TRACE_ROUNDING;
         if (!(Math.abs(norm - 1) <= tolerance)) {
             throw new InvalidInputException(
-                    "DensityOperator.ofKet", "the squared norm is " + norm, "1 within " + tolerance, "divide the ket by its norm");
+                    "DensityOperator.ofKet",
+                    "the squared norm is " + norm,
+                    "1 within " + tolerance,
+                    "divide the ket by its norm");
         }
         return new DensityOperator(PositiveOperator.ofFactor(psi));
     }

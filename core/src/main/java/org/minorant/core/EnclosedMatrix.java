@@ -30,7 +30,8 @@ public final class EnclosedMatrix {
     private final double[][] il;
     private final double[][] radius;
 
-    private EnclosedMatrix(int rows, int columns, double[][] rh, double[][] rl, double[][] ih, double[][] il, double[][] radius) {
+    private EnclosedMatrix(
+            int rows, int columns, double[][] rh, double[][] rl, double[][] ih, double[][] il, double[][] radius) {
         this.rows = rows;
         this.columns = columns;
         this.rh = rh;
@@ -286,7 +287,10 @@ public final class EnclosedMatrix {
     public EnclosedMatrix times(EnclosedMatrix other) {
         if (columns != other.rows) {
             throw new InvalidInputException(
-                    "EnclosedMatrix.times", "the right factor has " + other.rows + " rows", columns + " rows", "check the order of the factors");
+                    "EnclosedMatrix.times",
+                    "the right factor has " + other.rows + " rows",
+                    columns + " rows",
+                    "check the order of the factors");
         }
         boolean complex = !isReal() || !other.isReal();
         Builder c = new Builder(rows, other.columns, complex);
@@ -441,7 +445,10 @@ public final class EnclosedMatrix {
     public Enclosure traceRe() {
         if (rows != columns) {
             throw new InvalidInputException(
-                    "EnclosedMatrix.traceRe", "the matrix is " + rows + " x " + columns, "a square matrix", "check the shape");
+                    "EnclosedMatrix.traceRe",
+                    "the matrix is " + rows + " x " + columns,
+                    "a square matrix",
+                    "check the shape");
         }
         DoubleDouble s = DoubleDouble.ZERO;
         double r = 0;
@@ -467,7 +474,9 @@ public final class EnclosedMatrix {
 
     private static Enclosure ball(DoubleDouble mid, double radius) {
         Enclosure exact = Enclosure.exact(mid.hi()).plus(Enclosure.exact(mid.lo()));
-        return radius == 0 ? exact : Enclosure.exact(mid.hi()).plus(Enclosure.exact(mid.lo()).widen(radius * UP));
+        return radius == 0
+                ? exact
+                : Enclosure.exact(mid.hi()).plus(Enclosure.exact(mid.lo()).widen(radius * UP));
     }
 
     /**

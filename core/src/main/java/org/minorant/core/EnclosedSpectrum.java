@@ -54,7 +54,8 @@ public final class EnclosedSpectrum {
         DoubleDouble[] values = r.values();
         EnclosedMatrix back = scaleColumns(v, values).times(v.adjoint());
         double residual = a.minus(back).frobeniusUpper();
-        double defect = v.adjoint().times(v).minus(EnclosedMatrix.identity(a.rows())).frobeniusUpper();
+        double defect =
+                v.adjoint().times(v).minus(EnclosedMatrix.identity(a.rows())).frobeniusUpper();
         return new EnclosedSpectrum(v, values, residual, defect);
     }
 
@@ -112,7 +113,8 @@ public final class EnclosedSpectrum {
      * @return Λ_i widened by residual + defect · max|Λ|
      */
     public Enclosure eigenvalue(int i) {
-        return Enclosure.exact(values[i].hi()).plus(Enclosure.exact(values[i].lo()).widen(eigenvalueRadius()));
+        return Enclosure.exact(values[i].hi())
+                .plus(Enclosure.exact(values[i].lo()).widen(eigenvalueRadius()));
     }
 
     /**

@@ -55,7 +55,10 @@ public final class Enclosure {
     public static Enclosure of(WideDouble lower, WideDouble upper) {
         if (lower.compareTo(upper) > 0) {
             throw new InvalidInputException(
-                    "Enclosure.of", "lower " + lower + " exceeds upper " + upper, "lower at most upper", "swap the ends");
+                    "Enclosure.of",
+                    "lower " + lower + " exceeds upper " + upper,
+                    "lower at most upper",
+                    "swap the ends");
         }
         return new Enclosure(lower, upper);
     }
@@ -182,7 +185,8 @@ public final class Enclosure {
      * @return whether lower ≤ value ≤ upper
      */
     public boolean contains(BigDecimal value) {
-        boolean above = lower.isInfinite() ? lower.signum() < 0 : lower.toBigDecimal().compareTo(value) <= 0;
+        boolean above =
+                lower.isInfinite() ? lower.signum() < 0 : lower.toBigDecimal().compareTo(value) <= 0;
         boolean below = upper.isInfinite() ? upper.signum() > 0 : value.compareTo(upper.toBigDecimal()) <= 0;
         return above && below;
     }

@@ -73,8 +73,10 @@ final class FactorOfEntries {
             if (s.value(c) > 0) {
                 DoubleDouble root = new DoubleDouble(s.value(c), s.valueTail(c)).sqrt();
                 for (int i = 0; i < n; i++) {
-                    DoubleDouble re = root.times(new DoubleDouble(s.vectors().re(i, c), s.vectors().reTail(i, c)));
-                    DoubleDouble im = root.times(new DoubleDouble(s.vectors().im(i, c), s.vectors().imTail(i, c)));
+                    DoubleDouble re = root.times(
+                            new DoubleDouble(s.vectors().re(i, c), s.vectors().reTail(i, c)));
+                    DoubleDouble im = root.times(
+                            new DoubleDouble(s.vectors().im(i, c), s.vectors().imTail(i, c)));
                     x.set(i, j, re.hi(), re.lo(), im.hi(), im.lo(), 0);
                 }
                 j++;

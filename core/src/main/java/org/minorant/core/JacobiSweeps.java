@@ -101,7 +101,14 @@ final class JacobiSweeps {
     }
 
     /** (u, w) becomes (c u − (sx − i sy) w, (sx + i sy) u + c w), entry by entry. */
-    private static void mix(DoubleDouble[] ur, DoubleDouble[] ui, DoubleDouble[] wr, DoubleDouble[] wi, DoubleDouble c, DoubleDouble sx, DoubleDouble sy) {
+    private static void mix(
+            DoubleDouble[] ur,
+            DoubleDouble[] ui,
+            DoubleDouble[] wr,
+            DoubleDouble[] wi,
+            DoubleDouble c,
+            DoubleDouble sx,
+            DoubleDouble sy) {
         for (int k = 0; k < ur.length; k++) {
             DoubleDouble a = ur[k];
             DoubleDouble b = ui[k];

@@ -1,8 +1,8 @@
 package org.minorant.core;
 
 import java.util.Arrays;
-import org.minorant.core.internal.message.Checks;
 import org.minorant.core.internal.kernel.Products;
+import org.minorant.core.internal.message.Checks;
 
 /**
  * A dense complex matrix, rows × columns, immutable: a linear map between two finite-dimensional spaces with chosen
@@ -57,7 +57,11 @@ public sealed class Operator permits HermitianOperator {
      */
     public static Operator of(double[][] re, double[][] im) {
         Checks.sameShape("Operator.of", re, im);
-        return new Operator(re.length, re[0].length, Checks.flatten("Operator.of, real part", re), Checks.flatten("Operator.of, imaginary part", im));
+        return new Operator(
+                re.length,
+                re[0].length,
+                Checks.flatten("Operator.of, real part", re),
+                Checks.flatten("Operator.of, imaginary part", im));
     }
 
     /**
@@ -221,7 +225,8 @@ public sealed class Operator permits HermitianOperator {
         double[] r = new double[rows * other.columns];
         double[] m = isReal() && other.isReal() ? new double[0] : new double[rows * other.columns];
         Products.multiply(rows, columns, other.columns, re, im, other.re, other.im, r, m);
-        return new Operator(rows, other.columns, Checks.finite("Operator.times", r), Checks.finite("Operator.times", m));
+        return new Operator(
+                rows, other.columns, Checks.finite("Operator.times", r), Checks.finite("Operator.times", m));
     }
 
     /**

@@ -15,6 +15,7 @@ import org.minorant.core.internal.number.DoubleDouble;
 public sealed class PositiveOperator extends HermitianOperator permits DensityOperator {
 
     private final double entryDefect;
+    private final boolean definedByFactor;
     /** Computed when first asked for if the operator was given by entries; the same value whoever computes it. */
     private volatile PositiveFactor factor;
 
@@ -23,11 +24,15 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
         super(n, re, im);
         this.entryDefect = entryDefect;
         this.factor = factor;
+        this.definedByFactor = factor != null;
     }
 
     /** Copies another operator's data. */
     PositiveOperator(PositiveOperator other) {
-        this(other.rows(), other.realParts(), other.imaginaryParts(), other.entryDefect, other.factor);
+        super(other.rows(), other.realParts(), other.imaginaryParts());
+        this.entryDefect = other.entryDefect;
+        this.factor = other.factor;
+        this.definedByFactor = other.definedByFactor;
     }
 
     /**
@@ -130,7 +135,8 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
         double defect = (entryDefect * weight + weight * 0x1p-52 * trace().re() * rows()) * (1 + 0x1p-50);
         PositiveFactor f = factor();
         DoubleDouble root = DoubleDouble.of(weight).sqrt();
-        EnclosedMatrix x = f.columns().times(root.hi()).plus(f.columns().times(root.lo())).midpoint();
+        EnclosedMatrix x =
+                f.columns().times(root.hi()).plus(f.columns().times(root.lo())).midpoint();
         PositiveFactor g = new PositiveFactor(
                 x, f.relativeError() + x.columns() * x.columns() * 0x1p-98, f.traceError() * weight * (1 + 0x1p-50));
         return new PositiveOperator(rows(), scaled.realParts(), scaled.imaginaryParts(), defect, g);
@@ -165,8 +171,8 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
      *
      * @return whether a factor defines the operator
      */
-    final boolean hasFactor() {
-        return factor != null;
+    public final boolean isDefinedByFactor() {
+        return definedByFactor;
     }
 
     /**

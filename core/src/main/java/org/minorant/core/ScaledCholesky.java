@@ -13,7 +13,8 @@ import org.minorant.core.internal.number.DoubleDouble;
  */
 record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
 
-    private static final ScaledCholesky FAILED = new ScaledCholesky(EnclosedMatrix.identity(1), Double.POSITIVE_INFINITY);
+    private static final ScaledCholesky FAILED =
+            new ScaledCholesky(EnclosedMatrix.identity(1), Double.POSITIVE_INFINITY);
 
     static ScaledCholesky of(HermitianOperator a) {
         int n = a.rows();
@@ -45,7 +46,8 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
 
     /** What scaling by a power of two loses when the result is subnormal. */
     private static double underflow(Operator a, int i, int j, int e) {
-        boolean exact = Math.scalb(Math.scalb(a.re(i, j), e), -e) == a.re(i, j) && Math.scalb(Math.scalb(a.im(i, j), e), -e) == a.im(i, j);
+        boolean exact = Math.scalb(Math.scalb(a.re(i, j), e), -e) == a.re(i, j)
+                && Math.scalb(Math.scalb(a.im(i, j), e), -e) == a.im(i, j);
         return exact ? 0 : 0x1p-1070;
     }
 

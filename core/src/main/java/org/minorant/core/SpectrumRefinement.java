@@ -35,7 +35,8 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
         v = orthonormal(orthonormal(v));
         EnclosedMatrix b = v.adjoint().times(mid.times(v)).midpoint();
         for (int round = 0; round < ROUNDS && !isDiagonal(b, norm); round++) {
-            v = orthonormal(orthonormal(v.times(EnclosedMatrix.identity(n).plus(correction(b, norm))).midpoint()));
+            v = orthonormal(orthonormal(v.times(EnclosedMatrix.identity(n).plus(correction(b, norm)))
+                    .midpoint()));
             b = v.adjoint().times(mid.times(v)).midpoint();
         }
         if (!isDiagonal(b, norm)) {
@@ -48,7 +49,8 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
 
     /** One Newton–Schulz step: V + ½V(1 − V*V), which squares the defect. */
     private static EnclosedMatrix orthonormal(EnclosedMatrix v) {
-        EnclosedMatrix defect = EnclosedMatrix.identity(v.columns()).minus(v.adjoint().times(v));
+        EnclosedMatrix defect =
+                EnclosedMatrix.identity(v.columns()).minus(v.adjoint().times(v));
         return v.plus(v.times(defect).times(0.5)).midpoint();
     }
 
@@ -90,7 +92,8 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
         int n = b.rows();
         Integer[] order = new Integer[n];
         Arrays.setAll(order, i -> i);
-        Arrays.sort(order, Comparator.comparingDouble((Integer i) -> b.re(i, i)).thenComparingDouble(i -> b.reTail(i, i)));
+        Arrays.sort(
+                order, Comparator.comparingDouble((Integer i) -> b.re(i, i)).thenComparingDouble(i -> b.reTail(i, i)));
         DoubleDouble[] values = new DoubleDouble[n];
         EnclosedMatrix.Builder w = EnclosedMatrix.builder(n, n);
         for (int j = 0; j < n; j++) {

@@ -67,7 +67,8 @@ public final class WideDouble implements Comparable<WideDouble> {
      */
     public static WideDouble of(double value, long exponent) {
         if (Double.isNaN(value)) {
-            throw new InvalidInputException("WideDouble.of", "the value is NaN", "a number", "check the computation before it");
+            throw new InvalidInputException(
+                    "WideDouble.of", "the value is NaN", "a number", "check the computation before it");
         }
         if (value == 0) {
             return ZERO;
@@ -118,7 +119,8 @@ public final class WideDouble implements Comparable<WideDouble> {
             return POSITIVE_INFINITY;
         }
         if (Double.isNaN(x) || Math.abs(x) > 7e8) {
-            throw new InvalidInputException("WideDouble.exp", "the exponent is " + x, "at most 7e8 in magnitude", "rescale");
+            throw new InvalidInputException(
+                    "WideDouble.exp", "the exponent is " + x, "at most 7e8 in magnitude", "rescale");
         }
         double k = Math.rint(x / (LN2_HEAD + LN2_MID));
         // x − k·LN2_HEAD and the next difference are exact or lose at most one unit of a number below one
@@ -319,7 +321,8 @@ public final class WideDouble implements Comparable<WideDouble> {
      */
     public WideDouble dividedByDown(WideDouble other) {
         if (other.significand == 0) {
-            throw new InvalidInputException("WideDouble.dividedBy", "the divisor is 0", "a number other than 0", "treat that case apart");
+            throw new InvalidInputException(
+                    "WideDouble.dividedBy", "the divisor is 0", "a number other than 0", "treat that case apart");
         }
         if (significand == 0) {
             return ZERO;
@@ -365,7 +368,8 @@ public final class WideDouble implements Comparable<WideDouble> {
 
     private long evenExponent() {
         if (significand < 0) {
-            throw new InvalidInputException("WideDouble.sqrt", "the value is negative: " + this, "at least 0", "clip it first");
+            throw new InvalidInputException(
+                    "WideDouble.sqrt", "the value is negative: " + this, "at least 0", "clip it first");
         }
         return Math.floorDiv(exponent, 2L) * 2;
     }
@@ -379,12 +383,17 @@ public final class WideDouble implements Comparable<WideDouble> {
     public BigDecimal toBigDecimal() {
         if (isInfinite() || Math.abs(exponent) > 1_000_000) {
             throw new InvalidInputException(
-                    "WideDouble.toBigDecimal", "the value is " + this, "finite, exponent at most a million", "use the logarithm");
+                    "WideDouble.toBigDecimal",
+                    "the value is " + this,
+                    "finite, exponent at most a million",
+                    "use the logarithm");
         }
         BigDecimal m = new BigDecimal(significand);
         BigDecimal two = BigDecimal.valueOf(2);
         int e = (int) exponent;
-        return e >= 0 ? m.multiply(two.pow(e)) : m.multiply(BigDecimal.valueOf(5).pow(-e)).scaleByPowerOfTen(e);
+        return e >= 0
+                ? m.multiply(two.pow(e))
+                : m.multiply(BigDecimal.valueOf(5).pow(-e)).scaleByPowerOfTen(e);
     }
 
     /**

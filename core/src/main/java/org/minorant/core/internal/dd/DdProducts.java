@@ -26,7 +26,8 @@ public final class DdProducts {
     }
 
     /** (ch, cl) += a · b in double-double; a is m × n, b n × p, c m × p, all arrays of rows; sign is 1 or −1. */
-    public static void addProduct(double[][] ah, double[][] al, double[][] bh, double[][] bl, double sign, double[][] ch, double[][] cl) {
+    public static void addProduct(
+            double[][] ah, double[][] al, double[][] bh, double[][] bl, double sign, double[][] ch, double[][] cl) {
         for (int i = 0; i < ah.length; i++) {
             double[] xh = ah[i];
             double[] xl = al[i];

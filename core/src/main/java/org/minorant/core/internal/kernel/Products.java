@@ -15,7 +15,15 @@ public final class Products {
      * are real.
      */
     public static void multiply(
-            int rows, int inner, int columns, double[] are, double[] aim, double[] bre, double[] bim, double[] cre, double[] cim) {
+            int rows,
+            int inner,
+            int columns,
+            double[] are,
+            double[] aim,
+            double[] bre,
+            double[] bim,
+            double[] cre,
+            double[] cim) {
         double[][] br = rows(bre, inner, columns);
         double[][] bi = bim.length == 0 ? new double[0][] : rows(bim, inner, columns);
         double[] sr = new double[columns];

@@ -11,7 +11,8 @@ public final class Checks {
     /** Refuses shapes that are empty or whose entries cannot be held. */
     public static void dimensions(String asked, int rows, int columns) {
         if (rows < 1 || columns < 1) {
-            throw new InvalidInputException(asked, "the shape is " + rows + " x " + columns, "at least 1 x 1", "give at least one entry");
+            throw new InvalidInputException(
+                    asked, "the shape is " + rows + " x " + columns, "at least 1 x 1", "give at least one entry");
         }
         long bytes = 16L * rows * columns;
         long limit = Math.min(Runtime.getRuntime().maxMemory(), 16L * Integer.MAX_VALUE);
@@ -61,7 +62,10 @@ public final class Checks {
         for (int i = 1; i < a.length; i++) {
             if (a[i].length != a[0].length) {
                 throw new InvalidInputException(
-                        asked, "row " + i + " has " + a[i].length + " entries", a[0].length + ", as row 0", "give every row the same length");
+                        asked,
+                        "row " + i + " has " + a[i].length + " entries",
+                        a[0].length + ", as row 0",
+                        "give every row the same length");
             }
         }
     }
@@ -69,7 +73,8 @@ public final class Checks {
     /** Refuses an array of the wrong length. */
     public static void length(String asked, double[] a, int length) {
         if (a.length != length) {
-            throw new InvalidInputException(asked, "the array has " + a.length + " entries", length + " entries", "check the shape");
+            throw new InvalidInputException(
+                    asked, "the array has " + a.length + " entries", length + " entries", "check the shape");
         }
     }
 
@@ -84,7 +89,8 @@ public final class Checks {
     }
 
     private static InvalidInputException notFinite(String asked, String where, double value) {
-        return new InvalidInputException(asked, where + " is " + value, "a finite number", "check the computation that made it");
+        return new InvalidInputException(
+                asked, where + " is " + value, "a finite number", "check the computation that made it");
     }
 
     /** Refuses an operator that is not square. */

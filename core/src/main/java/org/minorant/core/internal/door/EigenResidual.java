@@ -1,6 +1,5 @@
-package org.minorant.core;
+package org.minorant.core.internal.door;
 
-import org.minorant.core.internal.door.HermitianEigen;
 import org.minorant.core.internal.kernel.Products;
 
 /**
@@ -11,7 +10,7 @@ import org.minorant.core.internal.kernel.Products;
  * A = VΛV⁻¹ + RV⁻¹; with V⁻¹ = V* + D, ‖D‖ ≤ δ/√(1−δ), the Hermitian matrix A − ŨΛŨ* has Frobenius norm at most
  * (‖R‖_F + 2δ‖Λ‖_F)/√(1−δ), and the sum of all errors in trace norm is at most √n times that.
  */
-final class EigenResidual {
+public final class EigenResidual {
 
     private static final double U = 0x1p-53;
 
@@ -23,13 +22,11 @@ final class EigenResidual {
         this.traceError = traceError;
     }
 
-    static EigenResidual of(Operator a, HermitianEigen e) {
-        int n = a.rows();
+    /** Bounds the error of a decomposition of the n × n matrix (are, aim), row-major; an empty imaginary part means real. */
+    public static EigenResidual of(int n, double[] are, double[] aim, HermitianEigen e) {
         double[] vre = e.vectorsRe();
         double[] vim = e.vectorsIm();
         double[] lambda = e.values();
-        double[] are = a.realParts();
-        double[] aim = a.imaginaryParts();
         double[] pr = new double[n * n];
         double[] pi = new double[n * n];
         Products.multiply(n, n, n, are, aim, vre, vim, pr, pi);
@@ -88,12 +85,12 @@ final class EigenResidual {
     }
 
     /** A bound on the trace norm of A − ŨΛŨ*. */
-    double traceError() {
+    public double traceError() {
         return traceError;
     }
 
     /** An upper end of the trace of the negative part of A. */
-    double negativeTraceUpper() {
+    public double negativeTraceUpper() {
         double s = 0;
         for (double v : values) {
             s += Math.max(0, -v);
