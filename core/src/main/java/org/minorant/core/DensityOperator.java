@@ -1,8 +1,7 @@
 package org.minorant.core;
 
-import java.math.BigDecimal;
+import java.util.List;
 import org.minorant.core.internal.message.Checks;
-import org.minorant.core.internal.number.DoubleDouble;
 
 /**
  * A density operator: positive, of trace one; the state of a quantum system.
@@ -158,8 +157,31 @@ public final class DensityOperator extends PositiveOperator {
         return of((Operator) a);
     }
 
-    /** A decimal as a double-double, for the states that are made of exact arithmetic. */
-    static DoubleDouble exact(BigDecimal value) {
-        return DoubleDouble.of(value);
+    /**
+     * Returns the mixture Σ w_i ρ_i of the states meant, exactly; the entries are a copy of it, rounded once. A mixture of kets has as many columns
+     * in its factor as kets, and keeps relative accuracy: see {@link PositiveOperator#weightedSum}.
+     *
+     * @param states states of one dimension, at least one
+     * @param weights as many probabilities, each at least 0, summing to one within n · 2^-50 for n states; used as given
+     * @return the mixture; its trace is Σ w_i Tr ρ_i, one up to rounding
+     * @throws InvalidInputException if the list is empty, the lengths or dimensions differ, a weight is negative or not finite, or the weights do
+     *     not sum to one
+     */
+    public static DensityOperator mixture(List<DensityOperator> states, double... weights) {
+        String asked = "DensityOperator.mixture";
+        PositiveOperator sum = WeightedSum.of(asked, states, weights);
+        double total = 0;
+        for (double w : weights) {
+            total += w;
+        }
+        double tolerance = weights.length * TRACE_ROUNDING;
+        if (!(Math.abs(total - 1) <= tolerance)) {
+            throw new InvalidInputException(
+                    asked,
+                    "the weights sum to " + total,
+                    "1 within " + tolerance,
+                    "divide the weights by their sum, or use PositiveOperator.weightedSum");
+        }
+        return new DensityOperator(sum);
     }
 }
