@@ -316,19 +316,33 @@ public final class EnclosedMatrix {
         double up = 1 + (columns + 16) * 0x1p-51;
         double[][] mb = b.moduli();
         boolean exact = isZero(b.radius);
+        boolean[] nonzero = b.nonzeroColumns();
         for (int i = 0; i < rows; i++) {
             double[] row = r[i];
+            boolean zero = true;
             for (int k = 0; k < columns; k++) {
                 double m = modulus(rh[i][k], im(i, k));
+                zero &= m == 0 && radius[i][k] == 0;
                 addScaled(row, (gamma * m + radius[i][k]) * UP, mb[k]);
                 if (!exact) {
                     addScaled(row, (m + radius[i][k]) * UP, b.radius[k]);
                 }
             }
             for (int j = 0; j < row.length; j++) {
-                row[j] = row[j] * up + DdProducts.underflow(columns);
+                // products with exact zeros are exact
+                row[j] = row[j] * up + (zero || !nonzero[j] ? 0 : DdProducts.underflow(columns));
             }
         }
+    }
+
+    private boolean[] nonzeroColumns() {
+        boolean[] nonzero = new boolean[columns];
+        for (int i = 0; i < rows; i++) {
+            for (int j = 0; j < columns; j++) {
+                nonzero[j] |= rh[i][j] != 0 || im(i, j) != 0 || radius[i][j] != 0;
+            }
+        }
+        return nonzero;
     }
 
     private static void addScaled(double[] c, double x, double[] b) {
@@ -430,7 +444,8 @@ public final class EnclosedMatrix {
                     c.il[i][j] = y.lo();
                 }
                 double r = f * radius[i][j] + loss * f * modulus(rh[i][j], im(i, j));
-                c.radius[i][j] = r * UP + (factor == 0 ? 0 : 0x1p-1068);
+                // an exact zero stays one; otherwise the trailing part may be lost in gradual underflow
+                c.radius[i][j] = r * UP + (factor == 0 || r == 0 && x.hi() == 0 && im(i, j) == 0 ? 0 : 0x1p-1068);
             }
         }
         return c.build();
@@ -470,6 +485,17 @@ public final class EnclosedMatrix {
      */
     public Enclosure enclosureRe(int i, int j) {
         return ball(new DoubleDouble(rh[i][j], rl[i][j]), radius[i][j]);
+    }
+
+    /**
+     * Returns an enclosure of the imaginary part of an entry.
+     *
+     * @param i row, from 0
+     * @param j column, from 0
+     * @return Im entry(i, j)
+     */
+    public Enclosure enclosureIm(int i, int j) {
+        return ball(new DoubleDouble(im(i, j), imTail(i, j)), radius[i][j]);
     }
 
     private static Enclosure ball(DoubleDouble mid, double radius) {

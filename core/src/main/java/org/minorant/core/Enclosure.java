@@ -370,6 +370,16 @@ public final class Enclosure {
     }
 
     /**
+     * Returns an enclosure of the square, never negative.
+     *
+     * @return this²
+     */
+    public Enclosure square() {
+        Enclosure s = times(this);
+        return lower.signum() * upper.signum() < 0 ? new Enclosure(WideDouble.ZERO, s.upper) : s;
+    }
+
+    /**
      * Returns an enclosure of the square root. A negative lower end counts as 0, for quantities known not to be negative.
      *
      * @return √this

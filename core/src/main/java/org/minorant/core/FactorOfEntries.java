@@ -22,11 +22,22 @@ final class FactorOfEntries {
         if (Positivity.isDiagonal(a)) {
             return diagonal(a);
         }
-        ScaledCholesky c = ScaledCholesky.of(a);
+        ScaledCholesky c = ScaledCholesky.of(EnclosedMatrix.of(a));
         if (c.relativeError() <= WORTH) {
             return new PositiveFactor(c.factor(), c.relativeError(), 0);
         }
         return spectral(a);
+    }
+
+    /** A square factor of XX*, or the given one if that would cost relative accuracy. */
+    static PositiveFactor reduced(PositiveFactor f) {
+        EnclosedMatrix x = f.columns();
+        ScaledCholesky c = ScaledCholesky.of(x.times(x.adjoint()));
+        if (!(c.relativeError() <= WORTH)) {
+            return f;
+        }
+        double relative = (f.relativeError() + c.relativeError()) * (1 + 0x1p-40);
+        return new PositiveFactor(c.factor(), relative, f.traceError());
     }
 
     private static PositiveFactor diagonal(PositiveOperator a) {

@@ -1,5 +1,6 @@
 package org.minorant.core;
 
+import java.util.OptionalInt;
 import java.util.function.Supplier;
 
 /**
@@ -12,19 +13,32 @@ final class FactorSource {
     private volatile PositiveFactor value;
     private volatile Supplier<PositiveFactor> recipe;
 
-    private FactorSource(PositiveFactor value, Supplier<PositiveFactor> recipe) {
+    private final OptionalInt columns;
+
+    private FactorSource(PositiveFactor value, Supplier<PositiveFactor> recipe, OptionalInt columns) {
         this.value = value;
         this.recipe = recipe;
+        this.columns = columns;
     }
 
     /** A factor at hand. */
     static FactorSource of(PositiveFactor factor) {
-        return new FactorSource(factor, () -> factor);
+        return new FactorSource(factor, () -> factor, OptionalInt.of(factor.rank()));
     }
 
-    /** A factor to be worked out. */
+    /** A factor to be worked out by decomposing a matrix. */
     static FactorSource later(Supplier<PositiveFactor> recipe) {
-        return new FactorSource(null, recipe);
+        return new FactorSource(null, recipe, OptionalInt.empty());
+    }
+
+    /** A factor to be put together from others; the number of columns is known if no matrix has to be decomposed. */
+    static FactorSource later(Supplier<PositiveFactor> recipe, OptionalInt columns) {
+        return new FactorSource(null, recipe, columns);
+    }
+
+    /** The number of columns, if it is known without decomposing a matrix; it does not depend on what was asked before. */
+    OptionalInt columns() {
+        return columns;
     }
 
     boolean isAtHand() {

@@ -20,9 +20,6 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
     /**
      * Validates the errors.
      *
-     * @param columns X, with radius zero
-     * @param relativeError η, at least 0 and below 1
-     * @param traceError ν, at least 0
      * @throws InvalidInputException if an error is negative, NaN or, for the relative one, not below 1
      */
     public PositiveFactor {
@@ -51,5 +48,15 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
      */
     public int rank() {
         return columns.columns();
+    }
+
+    /**
+     * Returns a factor of the same operator with at most as many columns as dimensions, by Cholesky factorisation of XX* in double-double; this factor itself if it
+     * has no more columns already, or if XX* is too ill-conditioned to keep its relative accuracy.
+     *
+     * @return a factor that is not wider than it is high, where that costs no accuracy worth having
+     */
+    public PositiveFactor reduced() {
+        return rank() <= dimension() ? this : FactorOfEntries.reduced(this);
     }
 }

@@ -1,6 +1,7 @@
 package org.minorant.core;
 
 import java.util.List;
+import java.util.OptionalInt;
 import org.minorant.core.internal.message.Checks;
 
 /**
@@ -20,7 +21,7 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
     private final FactorSource factor;
 
     /** Takes over validated arrays of entries that define the operator. */
-    private PositiveOperator(int n, double[] re, double[] im, double entryDefect) {
+    PositiveOperator(int n, double[] re, double[] im, double entryDefect) {
         super(n, re, im);
         this.entryDefect = entryDefect;
         this.factor = FactorSource.later(() -> FactorOfEntries.of(this));
@@ -206,6 +207,29 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
      */
     public final boolean hasFactorAtHand() {
         return factor.isAtHand();
+    }
+
+    /**
+     * Returns the number of columns of {@link #factor()} if it is known without decomposing a matrix: the operator was given by a factor, or
+     * computed from operators that all were. It depends on how the operator was made only, not on what was asked of it before.
+     *
+     * @return the number of columns, an upper bound on the rank; empty if finding it takes a decomposition
+     */
+    public final OptionalInt knownColumns() {
+        return factor.columns();
+    }
+
+    /**
+     * Returns the compression of an operator to some of the basis vectors: the principal submatrix. Its factor is the rows of the whole one's,
+     * with the same relative error.
+     *
+     * @param a the operator
+     * @param indices the basis vectors to keep, distinct, in the order wanted, at least one
+     * @return the operator on the span of these vectors
+     * @throws InvalidInputException if there is no index or one is out of range
+     */
+    public static PositiveOperator compression(PositiveOperator a, int... indices) {
+        return Compression.of(a, indices);
     }
 
     /**

@@ -16,7 +16,7 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
     private static final ScaledCholesky FAILED =
             new ScaledCholesky(EnclosedMatrix.identity(1), Double.POSITIVE_INFINITY);
 
-    static ScaledCholesky of(HermitianOperator a) {
+    static ScaledCholesky of(EnclosedMatrix a) {
         int n = a.rows();
         int[] shift = new int[n];
         EnclosedMatrix.Builder h = EnclosedMatrix.builder(n, n);
@@ -29,7 +29,14 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
         for (int i = 0; i < n; i++) {
             for (int j = 0; j < n; j++) {
                 int e = -shift[i] - shift[j];
-                h.set(i, j, Math.scalb(a.re(i, j), e), 0, Math.scalb(a.im(i, j), e), 0, underflow(a, i, j, e));
+                h.set(
+                        i,
+                        j,
+                        Math.scalb(a.re(i, j), e),
+                        Math.scalb(a.reTail(i, j), e),
+                        Math.scalb(a.im(i, j), e),
+                        Math.scalb(a.imTail(i, j), e),
+                        Math.scalb(a.radius(i, j), e) + underflow(a, i, j, e));
             }
         }
         EnclosedMatrix scaled = h.build();
@@ -44,11 +51,18 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
         return new ScaledCholesky(assemble(m, shift), eta < 1 ? eta : Double.POSITIVE_INFINITY);
     }
 
-    /** What scaling by a power of two loses when the result is subnormal. */
-    private static double underflow(Operator a, int i, int j, int e) {
-        boolean exact = Math.scalb(Math.scalb(a.re(i, j), e), -e) == a.re(i, j)
-                && Math.scalb(Math.scalb(a.im(i, j), e), -e) == a.im(i, j);
+    /** What scaling by a power of two loses when a result is subnormal. */
+    private static double underflow(EnclosedMatrix a, int i, int j, int e) {
+        boolean exact = survives(a.re(i, j), e)
+                && survives(a.reTail(i, j), e)
+                && survives(a.im(i, j), e)
+                && survives(a.imTail(i, j), e)
+                && survives(a.radius(i, j), e);
         return exact ? 0 : 0x1p-1070;
+    }
+
+    private static boolean survives(double v, int e) {
+        return Math.scalb(Math.scalb(v, e), -e) == v;
     }
 
     /** Row-oriented Cholesky; an empty result if a pivot is not positive. Index: row, column, part (0 re, 1 im). */
@@ -58,8 +72,8 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
         for (int i = 0; i < n; i++) {
             l[i] = new DoubleDouble[i + 1][];
             for (int j = 0; j <= i; j++) {
-                DoubleDouble x = DoubleDouble.of(h.re(i, j));
-                DoubleDouble y = DoubleDouble.of(h.im(i, j));
+                DoubleDouble x = new DoubleDouble(h.re(i, j), h.reTail(i, j));
+                DoubleDouble y = new DoubleDouble(h.im(i, j), h.imTail(i, j));
                 for (int k = 0; k < j; k++) {
                     DoubleDouble[] p = l[i][k];
                     DoubleDouble[] q = l[j][k];

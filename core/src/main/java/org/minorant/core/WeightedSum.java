@@ -2,6 +2,7 @@ package org.minorant.core;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.OptionalInt;
 import org.minorant.core.internal.message.Checks;
 
 /**
@@ -44,7 +45,21 @@ final class WeightedSum {
                 Checks.finite(asked, re),
                 Checks.finite(asked, im),
                 defect * (1 + (w.length + (double) n * n) * 0x1p-51),
-                FactorSource.later(() -> factor(terms, w)));
+                FactorSource.later(() -> factor(terms, w), columns(terms, w)));
+    }
+
+    private static OptionalInt columns(List<PositiveOperator> terms, double[] w) {
+        int sum = 0;
+        for (int t = 0; t < w.length; t++) {
+            if (w[t] > 0) {
+                OptionalInt c = terms.get(t).knownColumns();
+                if (c.isEmpty()) {
+                    return c;
+                }
+                sum += c.getAsInt();
+            }
+        }
+        return OptionalInt.of(Math.max(sum, 1));
     }
 
     private static PositiveFactor factor(List<PositiveOperator> terms, double[] w) {

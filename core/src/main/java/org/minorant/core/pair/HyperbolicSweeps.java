@@ -1,0 +1,277 @@
+package org.minorant.core.pair;
+
+import org.minorant.core.EnclosedMatrix;
+import org.minorant.core.internal.kernel.Rotations;
+
+/**
+ * Finds, in double, the transformation that turns columns X of A and Y of B into orthogonal columns without changing A − B: ordinary
+ * rotations within each operator, hyperbolic ones across. What it finds is not trusted; {@link RotationCertificate} verifies it.
+ *
+ * <p>For x from A and y from B, a = ‖x‖², b = ‖y‖², h = x*y, the step x' = cx + sy, y' = s̄x + cy with
+ *
+ * <pre>s = −2c h̄/S,  S = a + b + r,  r² = (a−b)² + 4(ab − |h|²),  c² = S/2r</pre>
+ *
+ * makes x'*y' = 0 and lowers both traces by 2|h|²/S. Columns are held explicitly and their inner products are carried along: the columns
+ * alone have a floor near 1e-32 of the traces, the inner products alone lose near-dependent columns.
+ *
+ * <p>Inner products across are held in units of 2^e, so that an answer of 1e-300 of the traces takes part with all its digits; their squares
+ * meet same-type ones through the factor q = 2^2e, which may underflow to zero without harm.
+ */
+final class HyperbolicSweeps {
+
+    private static final int MOST_SWEEPS = 60;
+    /** A rotation that adds less than this part of the sum cannot be seen in the answer; r² of them cannot either. */
+    private static final double NEGLIGIBLE = 1e-25;
+
+    private static final double ORTHOGONAL = 1e-16;
+    private static final double SHORT_OF_EQUAL = 1e-14;
+
+    private final int k;
+    private final int r;
+    private final double unit;
+    private final double q;
+    /** Columns x_1..x_k, y_1..y_l, one array each. */
+    private final double[][] re;
+
+    private final double[][] im;
+    /** Row j holds the coefficients of column j in the original columns; those across types in units of 2^e. */
+    private final double[][] vr;
+
+    private final double[][] vi;
+    /** g[i][j] = (column i)*(column j), across types in units of 2^e. */
+    private final double[][] gr;
+
+    private final double[][] gi;
+    private final double[] norm;
+    private double total;
+
+    private HyperbolicSweeps(EnclosedMatrix x, EnclosedMatrix y, int exponent) {
+        k = x.columns();
+        r = k + y.columns();
+        unit = Math.scalb(1.0, Math.max(exponent, -1060));
+        q = exponent < -530 ? 0 : unit * unit;
+        int m = x.rows();
+        boolean real = x.isReal() && y.isReal();
+        re = new double[r][m];
+        im = new double[r][real ? 0 : m];
+        vr = new double[r][r];
+        vi = new double[r][real ? 0 : r];
+        gr = new double[r][r];
+        gi = new double[r][real ? 0 : r];
+        norm = new double[r];
+        for (int j = 0; j < r; j++) {
+            EnclosedMatrix from = j < k ? x : y;
+            int c = j < k ? j : j - k;
+            for (int i = 0; i < m; i++) {
+                re[j][i] = from.re(i, c);
+                if (!real) {
+                    im[j][i] = from.im(i, c);
+                }
+            }
+            vr[j][j] = 1;
+        }
+    }
+
+    /**
+     * Runs the sweeps.
+     *
+     * @param x columns of A
+     * @param y columns of B
+     * @param gx X*X
+     * @param gy Y*Y
+     * @param cross X*Y / 2^exponent
+     * @param exponent the unit of the inner products across
+     * @return the finished state
+     */
+    static HyperbolicSweeps run(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent) {
+        HyperbolicSweeps s = new HyperbolicSweeps(x, y, exponent);
+        s.fill(gx, 0, 0);
+        s.fill(gy, s.k, s.k);
+        s.fill(cross, 0, s.k);
+        s.fill(cross.adjoint(), s.k, 0);
+        for (int sweep = 0; sweep < MOST_SWEEPS; sweep++) {
+            for (int j = 0; j < s.r; j++) {
+                s.norm[j] = s.squared(j);
+            }
+            double before = s.total;
+            boolean turned = s.sweep();
+            double added = s.total - before;
+            if (!turned || sweep > 0 && added <= 1e-17 * s.total) {
+                break;
+            }
+        }
+        return s;
+    }
+
+    private void fill(EnclosedMatrix g, int row, int column) {
+        for (int i = 0; i < g.rows(); i++) {
+            for (int j = 0; j < g.columns(); j++) {
+                gr[row + i][column + j] = g.re(i, j);
+                if (gi[0].length != 0) {
+                    gi[row + i][column + j] = g.im(i, j);
+                }
+            }
+        }
+    }
+
+    private double squared(int j) {
+        return Rotations.dotRe(re[j], im[j], re[j], im[j]);
+    }
+
+    private double imag(int i, int j) {
+        return gi[i].length == 0 ? 0 : gi[i][j];
+    }
+
+    private boolean sweep() {
+        boolean turned = false;
+        for (int p = 0; p < r - 1; p++) {
+            for (int c = p + 1; c < r; c++) {
+                if (norm[p] > 0 && norm[c] > 0 && (gr[p][c] != 0 || imag(p, c) != 0)) {
+                    turned |= p < k && c >= k ? hyperbolic(p, c) : unitary(p, c);
+                }
+            }
+        }
+        return turned;
+    }
+
+    private boolean hyperbolic(int p, int c) {
+        double a = norm[p];
+        double b = norm[c];
+        double hr = gr[p][c];
+        double hi = imag(p, c);
+        double h2 = hr * hr + hi * hi;
+        if (2 * h2 / (a + b) <= NEGLIGIBLE * total) {
+            return false;
+        }
+        double d = a * b - q * h2;
+        if (q * h2 > 0.25 * a * b) {
+            hr = Rotations.dotRe(re[p], im[p], re[c], im[c]) / unit;
+            hi = Rotations.dotIm(re[p], im[p], re[c], im[c]) / unit;
+            h2 = hr * hr + hi * hi;
+            d = a * Rotations.distance(re[c], im[c], re[p], im[p], unit * hr / a, unit * hi / a);
+        }
+        double exactRoot = Math.sqrt((a - b) * (a - b) + 4 * d);
+        // equal columns would need an infinite angle; stopping short loses 1e-14 of what they share
+        double root = Math.max(exactRoot, SHORT_OF_EQUAL * (a + b));
+        double s = a + b + root;
+        total += 2 * h2 / s;
+        // t in units of 2^e; 1 − |t|² written without cancellation
+        double tr = -2 * hr / s;
+        double ti = 2 * hi / s;
+        double cosh = s / Math.sqrt(root * root + 2 * root * (a + b) + exactRoot * exactRoot);
+        turn(p, c, cosh, cosh * tr, cosh * ti, true);
+        return true;
+    }
+
+    private boolean unitary(int p, int c) {
+        double a = norm[p];
+        double b = norm[c];
+        double hr = gr[p][c];
+        double hi = imag(p, c);
+        double h = Math.sqrt(hr * hr + hi * hi);
+        if (!(h > ORTHOGONAL * Math.sqrt(a) * Math.sqrt(b)) || !(h > Double.MIN_NORMAL)) {
+            return false;
+        }
+        // x' = cx − s e^{-iφ} y, y' = s e^{iφ} x + cy, with h = |h| e^{iφ}
+        double zeta = (b - a) / (2 * h);
+        double t = (zeta >= 0 ? 1 : -1) / (Math.abs(zeta) + Math.hypot(1, zeta));
+        double cos = 1 / Math.sqrt(1 + t * t);
+        double sin = cos * t;
+        turn(p, c, cos, -sin * hr / h, sin * hi / h, false);
+        return true;
+    }
+
+    /**
+     * Columns: p' = c p + s c', c'' = ±s̄ p + c c' (plus for hyperbolic). Inner products of every other column z follow, with the factor 2^2e where
+     * a product of two cross quantities meets a same-type one.
+     */
+    private void turn(int p, int m, double c, double sr, double si, boolean hyperbolic) {
+        double tr = hyperbolic ? sr : -sr;
+        double ti = hyperbolic ? -si : si;
+        double u = hyperbolic ? unit : 1;
+        Rotations.mix(re[p], im[p], re[m], im[m], c, u * sr, u * si, u * tr, u * ti);
+        norm[p] = squared(p);
+        norm[m] = squared(m);
+        mixCoefficients(p, m, c, sr, si, tr, ti, hyperbolic);
+        for (int z = 0; z < r; z++) {
+            if (z != p && z != m && norm[z] > 0) {
+                mixProducts(z, p, m, c, sr, si, tr, ti, hyperbolic);
+            }
+        }
+        setProduct(p, m, 0, 0);
+    }
+
+    private void mixCoefficients(int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
+        if (!hyperbolic) {
+            Rotations.mix(vr[p], vi[p], vr[m], vi[m], c, sr, si, tr, ti);
+            return;
+        }
+        // in the x rows (0..k) column p is plain and column m in units of 2^e; in the y rows it is the other way round
+        Rotations.mixRange(vr[p], vi[p], vr[m], vi[m], 0, k, c, q * sr, q * si, tr, ti);
+        Rotations.mixRange(vr[p], vi[p], vr[m], vi[m], k, r, c, sr, si, q * tr, q * ti);
+    }
+
+    private void mixProducts(int z, int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
+        double pr = gr[z][p];
+        double pi = imag(z, p);
+        double mr = gr[z][m];
+        double mi = imag(z, m);
+        boolean zx = z < k;
+        // p is of type x in a hyperbolic turn, m of type y
+        double up = hyperbolic && zx ? q : 1;
+        double um = hyperbolic && !zx ? q : 1;
+        setIfTrusted(z, p, c * pr, c * pi, up * (sr * mr - si * mi), up * (sr * mi + si * mr));
+        setIfTrusted(z, m, c * mr, c * mi, um * (tr * pr - ti * pi), um * (tr * pi + ti * pr));
+    }
+
+    /** Stores the sum of two terms as (column z)*(column j), unless the sum cancels: then it is computed from the columns. */
+    private void setIfTrusted(int z, int j, double xr, double xi, double yr, double yi) {
+        double size = Math.sqrt(xr * xr + xi * xi) + Math.sqrt(yr * yr + yi * yi);
+        boolean across = (z < k) != (j < k);
+        double scale = across ? q : 1;
+        if (scale * size * size <= norm[z] * norm[j]) {
+            setProduct(z, j, xr + yr, xi + yi);
+        } else {
+            double u = across ? unit : 1;
+            setProduct(
+                    z,
+                    j,
+                    Rotations.dotRe(re[z], im[z], re[j], im[j]) / u,
+                    Rotations.dotIm(re[z], im[z], re[j], im[j]) / u);
+        }
+    }
+
+    private void setProduct(int i, int j, double x, double y) {
+        gr[i][j] = x;
+        gr[j][i] = x;
+        if (gi[0].length != 0) {
+            gi[i][j] = y;
+            gi[j][i] = -y;
+        }
+    }
+
+    /** The coefficient of original column i in final column j, across types in units of 2^e: real part. */
+    double coefficientRe(int i, int j) {
+        return vr[j][i];
+    }
+
+    /** The coefficient of original column i in final column j, across types in units of 2^e: imaginary part. */
+    double coefficientIm(int i, int j) {
+        return vi[j].length == 0 ? 0 : vi[j][i];
+    }
+
+    /** The sum of all decreases: f in units of 2^2e, to about double accuracy. */
+    double total() {
+        return total;
+    }
+
+    /** The number of columns of A. */
+    int split() {
+        return k;
+    }
+
+    /** The number of columns in all. */
+    int columns() {
+        return r;
+    }
+}
