@@ -19,7 +19,10 @@ final class Compression {
         }
         if (Arrays.stream(keep).distinct().count() != m) {
             throw new InvalidInputException(
-                    asked, "an index occurs twice in " + Arrays.toString(keep), "distinct indices", "list each basis vector once");
+                    asked,
+                    "an index occurs twice in " + Arrays.toString(keep),
+                    "distinct indices",
+                    "list each basis vector once");
         }
         double[] re = new double[m * m];
         double[] im = new double[a.isReal() ? 0 : m * m];
@@ -38,7 +41,8 @@ final class Compression {
         OptionalInt columns = a.knownColumns().isEmpty()
                 ? OptionalInt.empty()
                 : OptionalInt.of(rows(a.factor(), keep).rank());
-        return new PositiveOperator(m, re, im, a.entryDefect(), FactorSource.later(() -> rows(a.factor(), keep), columns));
+        return new PositiveOperator(
+                m, re, im, a.entryDefect(), FactorSource.later(() -> rows(a.factor(), keep), columns));
     }
 
     /** The chosen rows of a factor, without the columns that vanish there. */

@@ -10,9 +10,16 @@ public final class InvalidInputException extends IllegalArgumentException {
 
     private static final long serialVersionUID = 1L;
 
+    /** What the caller asked for. */
     private final String asked;
+
+    /** What was found, and where. */
     private final String found;
+
+    /** What would have been accepted. */
     private final String limit;
+
+    /** What the caller can do. */
     private final String cure;
 
     /**

@@ -9,7 +9,7 @@ import org.minorant.core.internal.message.Checks;
  * bases.
  *
  * <p><b>Accuracy.</b> Entries are doubles. Sums round once per entry; a product's entry is within
- * (n+2)·2^-52·Σ|a||b| of the exact one. Where a certified result is wanted, see {@link org.minorant.core.certified}.
+ * (n+2)·2^-52·Σ|a||b| of the exact one. Where a certified result is wanted, see {@link EnclosedMatrix}.
  *
  * <p><b>Entries</b> are finite by construction. An operator whose imaginary parts are all zero is held as a real matrix, and
  * costs half the memory. Immutable and thread-safe.

@@ -20,6 +20,9 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
     /**
      * Validates the errors.
      *
+     * @param columns X, with radius zero
+     * @param relativeError η, at least 0 and below 1
+     * @param traceError ν, at least 0
      * @throws InvalidInputException if an error is negative, NaN or, for the relative one, not below 1
      */
     public PositiveFactor {

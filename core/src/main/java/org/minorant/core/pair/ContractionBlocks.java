@@ -17,8 +17,8 @@ record ContractionBlocks(EnclosedMatrix contraction, EnclosedMatrix first, Enclo
         int k = s.split();
         int l = s.columns() - k;
         EnclosedMatrix first = RotationCertificate.exact(k, k, s::coefficientRe, s::coefficientIm);
-        EnclosedMatrix second =
-                RotationCertificate.exact(l, l, (i, j) -> s.coefficientRe(k + i, k + j), (i, j) -> s.coefficientIm(k + i, k + j));
+        EnclosedMatrix second = RotationCertificate.exact(
+                l, l, (i, j) -> s.coefficientRe(k + i, k + j), (i, j) -> s.coefficientIm(k + i, k + j));
         // solve V₁₁* N = −V₂₁* or V₂₂* N* = −V₁₂*
         boolean left = k <= l;
         int m = left ? k : l;

@@ -79,7 +79,14 @@ final class FactorPair extends PositivePair {
         DoubleDouble r = DoubleDouble.of(re);
         DoubleDouble s = DoubleDouble.of(im);
         double size = Math.abs(r.hi()) + Math.abs(s.hi());
-        b.set(i, j, r.hi(), r.lo(), s.hi(), s.lo(), size == 0 && re.signum() == 0 && im.signum() == 0 ? 0 : size * 0x1p-103 + 0x1p-1070);
+        b.set(
+                i,
+                j,
+                r.hi(),
+                r.lo(),
+                s.hi(),
+                s.lo(),
+                size == 0 && re.signum() == 0 && im.signum() == 0 ? 0 : size * 0x1p-103 + 0x1p-1070);
     }
 
     @Override
@@ -101,10 +108,13 @@ final class FactorPair extends PositivePair {
             f = columnsOnly(wa.toDoubleDown(), wb.toDoubleDown());
         }
         double eta = Math.max(first.relativeError(), second.relativeError()) + 0x1p-97;
-        Enclosure errors = Enclosure.of(wa, wa).times(first.traceError()).plus(Enclosure.of(wb, wb).times(second.traceError()));
+        Enclosure errors = Enclosure.of(wa, wa)
+                .times(first.traceError())
+                .plus(Enclosure.of(wb, wb).times(second.traceError()));
         Enclosure wide = f.times(Enclosure.of(1 - eta, 1 + eta));
         Enclosure all = Enclosure.of(
-                wide.lowerWide().plusDown(errors.upperWide().negate()), wide.upperWide().plusUp(errors.upperWide()));
+                wide.lowerWide().plusDown(errors.upperWide().negate()),
+                wide.upperWide().plusUp(errors.upperWide()));
         return Enclosure.of(scaled(all.lowerWide(), shift), scaled(all.upperWide(), shift));
     }
 

@@ -83,7 +83,13 @@ final class HyperbolicSweeps {
      * @param exponent the unit of the inner products across
      * @return the finished state
      */
-    static HyperbolicSweeps run(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent) {
+    static HyperbolicSweeps run(
+            EnclosedMatrix x,
+            EnclosedMatrix y,
+            EnclosedMatrix gx,
+            EnclosedMatrix gy,
+            EnclosedMatrix cross,
+            int exponent) {
         HyperbolicSweeps s = new HyperbolicSweeps(x, y, exponent);
         s.fill(gx, 0, 0);
         s.fill(gy, s.k, s.k);
@@ -201,7 +207,8 @@ final class HyperbolicSweeps {
         setProduct(p, m, 0, 0);
     }
 
-    private void mixCoefficients(int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
+    private void mixCoefficients(
+            int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
         if (!hyperbolic) {
             Rotations.mix(vr[p], vi[p], vr[m], vi[m], c, sr, si, tr, ti);
             return;
@@ -211,7 +218,8 @@ final class HyperbolicSweeps {
         Rotations.mixRange(vr[p], vi[p], vr[m], vi[m], k, r, c, sr, si, q * tr, q * ti);
     }
 
-    private void mixProducts(int z, int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
+    private void mixProducts(
+            int z, int p, int m, double c, double sr, double si, double tr, double ti, boolean hyperbolic) {
         double pr = gr[z][p];
         double pi = imag(z, p);
         double mr = gr[z][m];

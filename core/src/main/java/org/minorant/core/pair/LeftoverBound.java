@@ -57,7 +57,8 @@ final class LeftoverBound {
      * @param seen what of f is known already, in units of 2^2e
      * @return an upper end of f / 2^2e
      */
-    static WideDouble of(EnclosedMatrix gramX, EnclosedMatrix gramY, EnclosedMatrix across, int exponent, WideDouble seen) {
+    static WideDouble of(
+            EnclosedMatrix gramX, EnclosedMatrix gramY, EnclosedMatrix across, int exponent, WideDouble seen) {
         return new LeftoverBound(gramX, gramY, across, exponent).bound(exponent, seen);
     }
 
@@ -73,7 +74,8 @@ final class LeftoverBound {
             kept[j] = weightLower(j) > light && weightLower(j) > 0;
             for (int b = 0; b < a && kept[j]; b++) {
                 int i = order[b];
-                kept[j] = !kept[i] || overlapUpper(i, j) <= epsilon * Math.sqrt(weightLower(i)) * Math.sqrt(weightLower(j));
+                kept[j] = !kept[i]
+                        || overlapUpper(i, j) <= epsilon * Math.sqrt(weightLower(i)) * Math.sqrt(weightLower(j));
             }
             if (!kept[j]) {
                 dropped = dropped.plusUp(WideDouble.of(weightUpper(j)));

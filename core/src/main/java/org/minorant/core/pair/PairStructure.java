@@ -105,7 +105,9 @@ final class PairStructure {
             }
             groups.get(number[r]).add(i);
         }
-        return groups.stream().map(g -> g.stream().mapToInt(Integer::intValue).toArray()).toArray(int[][]::new);
+        return groups.stream()
+                .map(g -> g.stream().mapToInt(Integer::intValue).toArray())
+                .toArray(int[][]::new);
     }
 
     private static void link(PositiveOperator a, int[] root) {

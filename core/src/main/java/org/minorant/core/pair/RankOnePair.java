@@ -36,7 +36,13 @@ final class RankOnePair extends PositivePair {
     /** Whether the rank-one operator is the second of the pair. */
     private final boolean swapped;
 
-    private RankOnePair(double[][] measure, double relativeError, double traceErrorB, PositiveOperator a, PositiveOperator b, boolean swapped) {
+    private RankOnePair(
+            double[][] measure,
+            double relativeError,
+            double traceErrorB,
+            PositiveOperator a,
+            PositiveOperator b,
+            boolean swapped) {
         this.weightLower = measure[0];
         this.weightUpper = measure[1];
         this.valueLower = measure[2];
@@ -71,7 +77,8 @@ final class RankOnePair extends PositivePair {
             measure[3][i] = Math.max(0, v.upper());
         }
         weights(measure, s.vectors().adjoint().times(psi.columns()));
-        // in the coordinates V*: A becomes V*AV, B becomes V*BV with V*V = 1 + O(defect); see EnclosedSpectrum for residual and defect
+        // in the coordinates V*: A becomes V*AV, B becomes V*BV with V*V = 1 + O(defect); see EnclosedSpectrum for
+        // residual and defect
         double eta = psi.relativeError() + 3 * s.defect();
         double nu = (Math.sqrt(n) * s.residual() + rest) * (1 + 0x1p-40) + b.entryDefect();
         return new RankOnePair(measure, eta, nu, rankOne, b, swapped);
@@ -91,11 +98,14 @@ final class RankOnePair extends PositivePair {
     Enclosure value(WideDouble wa, WideDouble wb) {
         WideDouble a = swapped ? wb : wa;
         WideDouble b = swapped ? wa : wb;
-        Enclosure f = SecularRoot.enclose(weightLower, weightUpper, valueLower, valueUpper, b.dividedByDown(a), b.dividedByUp(a));
+        Enclosure f = SecularRoot.enclose(
+                weightLower, weightUpper, valueLower, valueUpper, b.dividedByDown(a), b.dividedByUp(a));
         Enclosure scaled = f.times(Enclosure.of(a, a));
         Enclosure wide = scaled.times(Enclosure.of(1 - relativeError, 1 + relativeError));
         Enclosure nu = Enclosure.of(b, b).times(traceErrorB);
-        return Enclosure.of(wide.lowerWide().plusDown(nu.upperWide().negate()), wide.upperWide().plusUp(nu.upperWide()));
+        return Enclosure.of(
+                wide.lowerWide().plusDown(nu.upperWide().negate()),
+                wide.upperWide().plusUp(nu.upperWide()));
     }
 
     @Override

@@ -40,7 +40,8 @@ final class RotationCertificate {
     /** Gx N. */
     private final EnclosedMatrix gxN;
 
-    private RotationCertificate(EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, EnclosedMatrix n) {
+    private RotationCertificate(
+            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, EnclosedMatrix n) {
         this.gx = gx;
         this.gy = gy;
         this.cross = cross;
@@ -60,15 +61,18 @@ final class RotationCertificate {
      * @param sweeps the finished rotations
      * @return an enclosure of f
      */
-    static Enclosure enclose(EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, HyperbolicSweeps sweeps) {
+    static Enclosure enclose(
+            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, HyperbolicSweeps sweeps) {
         ContractionBlocks blocks = ContractionBlocks.of(sweeps, exponent);
-        return new RotationCertificate(gx, gy, cross, exponent, blocks.contraction()).enclose(blocks.first(), blocks.second());
+        return new RotationCertificate(gx, gy, cross, exponent, blocks.contraction())
+                .enclose(blocks.first(), blocks.second());
     }
 
     private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second) {
         EnclosedMatrix nn = n.times(n.adjoint());
         EnclosedMatrix left = EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn));
-        EnclosedMatrix right = EnclosedMatrix.identity(gy.rows()).minus(scaleByQ(n.adjoint().times(n)));
+        EnclosedMatrix right =
+                EnclosedMatrix.identity(gy.rows()).minus(scaleByQ(n.adjoint().times(n)));
         EnclosedMatrix p = refine(first, left);
         EnclosedMatrix p2 = refine(second, right);
         EnclosedMatrix e = defect(p, left);
@@ -83,20 +87,28 @@ final class RotationCertificate {
         EnclosedMatrix f = p.adjoint().times(phi).times(p);
         EnclosedMatrix ef = e.times(f);
         double rest = Math.pow(e.frobeniusUpper(), 3) * f.frobeniusUpper() / (1 - epsilon) * (1 + 0x1p-40);
-        Enclosure value = f.traceRe().minus(ef.traceRe()).plus(e.times(ef).traceRe()).widen(rest);
+        Enclosure value =
+                f.traceRe().minus(ef.traceRe()).plus(e.times(ef).traceRe()).widen(rest);
         Enclosure leftover = leftover(p, p2, mixed, quadratic, value).dividedBy(Enclosure.of(1 - epsilon, 1));
         Enclosure total = Enclosure.of(value.lowerWide(), value.upperWide().plusUp(leftover.upperWide()));
         return Enclosure.of(
-                total.lowerWide().timesPowerOfTwo(2L * exponent), total.upperWide().timesPowerOfTwo(2L * exponent));
+                total.lowerWide().timesPowerOfTwo(2L * exponent),
+                total.upperWide().timesPowerOfTwo(2L * exponent));
     }
 
     /** Bounds f(A',B') in units of 2^2e. */
-    private Enclosure leftover(EnclosedMatrix p, EnclosedMatrix p2, EnclosedMatrix mixed, EnclosedMatrix quadratic, Enclosure value) {
-        EnclosedMatrix riccati = cross.minus(gxN).minus(nGy).plus(scaleByQ(n.times(cross.adjoint().times(n))));
+    private Enclosure leftover(
+            EnclosedMatrix p, EnclosedMatrix p2, EnclosedMatrix mixed, EnclosedMatrix quadratic, Enclosure value) {
+        EnclosedMatrix riccati = cross.minus(gxN)
+                .minus(nGy)
+                .plus(scaleByQ(n.times(cross.adjoint().times(n))));
         EnclosedMatrix across = p.adjoint().times(riccati).times(p2);
-        EnclosedMatrix gramX = p.adjoint().times(gx.minus(scaleByQ(mixed)).plus(scaleByQ(quadratic))).times(p);
+        EnclosedMatrix gramX = p.adjoint()
+                .times(gx.minus(scaleByQ(mixed)).plus(scaleByQ(quadratic)))
+                .times(p);
         EnclosedMatrix v = cross.adjoint().times(n);
-        EnclosedMatrix inner = gy.minus(scaleByQ(v.plus(v.adjoint()))).plus(scaleByQ(n.adjoint().times(gxN)));
+        EnclosedMatrix inner = gy.minus(scaleByQ(v.plus(v.adjoint())))
+                .plus(scaleByQ(n.adjoint().times(gxN)));
         EnclosedMatrix gramY = p2.adjoint().times(inner).times(p2);
         WideDouble seen = value.lowerWide().max(WideDouble.ZERO);
         return Enclosure.of(WideDouble.ZERO, LeftoverBound.of(gramX, gramY, across, exponent, seen));
@@ -129,7 +141,9 @@ final class RotationCertificate {
             if (size < FINE || !(size < 0.9)) {
                 return p;
             }
-            EnclosedMatrix step = EnclosedMatrix.identity(p.columns()).minus(e.times(0.5)).plus(e.times(e).times(0.375));
+            EnclosedMatrix step = EnclosedMatrix.identity(p.columns())
+                    .minus(e.times(0.5))
+                    .plus(e.times(e).times(0.375));
             p = p.times(step).midpoint();
         }
         return p;

@@ -43,7 +43,9 @@ final class SecularRoot {
             WideDouble gap = guess.timesPowerOfTwo(-bits);
             WideDouble low = guess.plusDown(gap.negate());
             WideDouble high = guess.plusUp(gap).min(total.lowerWide());
-            if (excess(low).lowerWide().signum() > 0 && high.compareTo(low) > 0 && excess(high).upperWide().signum() < 0) {
+            if (excess(low).lowerWide().signum() > 0
+                    && high.compareTo(low) > 0
+                    && excess(high).upperWide().signum() < 0) {
                 return Enclosure.of(low, high);
             }
         }
@@ -64,7 +66,9 @@ final class SecularRoot {
                 Enclosure w = Enclosure.of(weightLower[i], weightUpper[i]);
                 // b/(λ+b) increases with b and decreases with λ
                 Enclosure b = value[i];
-                WideDouble low = b.lowerWide().signum() == 0 ? WideDouble.ZERO : b.lowerWide().dividedByDown(lambda.upperWide().plusUp(b.lowerWide()));
+                WideDouble low = b.lowerWide().signum() == 0
+                        ? WideDouble.ZERO
+                        : b.lowerWide().dividedByDown(lambda.upperWide().plusUp(b.lowerWide()));
                 WideDouble high = b.upperWide().dividedByUp(lambda.lowerWide().plusDown(b.upperWide()));
                 s = s.plus(w.times(Enclosure.of(low, high)));
             }
@@ -85,8 +89,11 @@ final class SecularRoot {
                 if (weightUpper[i] > 0) {
                     WideDouble denominator = lambda.upperWide().plusUp(value[i].upperWide());
                     if (denominator.signum() > 0) {
-                        double ratio = value[i].upperWide().dividedByDown(denominator).toDoubleDown();
-                        double rest = WideDouble.of(weightUpper[i]).dividedByDown(denominator).toDoubleDown();
+                        double ratio =
+                                value[i].upperWide().dividedByDown(denominator).toDoubleDown();
+                        double rest = WideDouble.of(weightUpper[i])
+                                .dividedByDown(denominator)
+                                .toDoubleDown();
                         slope += ratio * rest;
                     }
                 }

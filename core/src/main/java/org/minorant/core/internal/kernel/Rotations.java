@@ -47,7 +47,8 @@ public final class Rotations {
     }
 
     /** (x, y) becomes (c x + s y, t x + c y) for complex s and t. */
-    public static void mix(double[] xr, double[] xi, double[] yr, double[] yi, double c, double sr, double si, double tr, double ti) {
+    public static void mix(
+            double[] xr, double[] xi, double[] yr, double[] yi, double c, double sr, double si, double tr, double ti) {
         if (xi.length == 0) {
             for (int i = 0; i < xr.length; i++) {
                 double a = xr[i];
