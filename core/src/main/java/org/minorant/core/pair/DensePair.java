@@ -17,42 +17,22 @@ final class DensePair extends PositivePair {
 
     private static final double U = 0x1p-53;
 
-    /** Enclosures at most this wide are not refined. */
-    private static final double NARROW = 1e-12;
-
-    /** Beyond this dimension refining would take minutes. */
-    private static final int REFINED = 128;
-
     private final PositiveOperator a;
     private final PositiveOperator b;
-    /** Made when first needed; the same value whoever makes it. */
-    private volatile FactorPair factored;
+    private final Refinement refinement;
 
     DensePair(PositiveOperator a, PositiveOperator b) {
         this.a = a;
         this.b = b;
+        this.refinement = new Refinement(a, b);
     }
 
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
-        Enclosure f = fromEigenvalues(wa, wb);
-        if (f.lowerWide().signum() > 0 && f.relativeWidth() <= NARROW || dimension() > REFINED) {
-            return f;
-        }
-        return refined(wa, wb, f);
+        return refinement.narrow(fromEigenvalues(wa, wb), wa, wb);
     }
 
-    /** The certificate of relative accuracy, where the eigenvalues leave the answer too wide. */
-    private Enclosure refined(WideDouble wa, WideDouble wb, Enclosure f) {
-        FactorPair p = factored;
-        if (p == null) {
-            p = new FactorPair(a.factor().reduced(), b.factor().reduced());
-            factored = p;
-        }
-        return f.intersect(p.value(wa, wb));
-    }
-
-    private Enclosure fromEigenvalues(WideDouble wa, WideDouble wb) {
+    Enclosure fromEigenvalues(WideDouble wa, WideDouble wb) {
         long shift = Math.max(wa.exponent(), wb.exponent());
         // a weight that underflows here is below 1e-300 of the other; losing it is inside the error below
         double x = wa.timesPowerOfTwo(-shift).toDoubleDown();

@@ -1,9 +1,12 @@
 package org.minorant.core.pair;
 
 import java.math.BigDecimal;
+import java.util.Optional;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.Enclosure;
+import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
+import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
 
@@ -21,29 +24,96 @@ final class FactorPair extends PositivePair {
     /** Weights beyond 2^±this would over- or underflow when squared; 1e±300 is within. */
     private static final long FAR = 505;
 
-    private final PositiveFactor first;
-    private final PositiveFactor second;
+    /** Columns that the rotations work on; only their inner products below enter the certificate. */
+    private final EnclosedMatrix x;
+
+    private final EnclosedMatrix y;
+    private final double relativeError;
+    private final double traceErrorA;
+    private final double traceErrorB;
     private final EnclosedMatrix gx;
     private final EnclosedMatrix gy;
     private final EnclosedMatrix cross;
     private final Enclosure traceA;
     private final Enclosure traceB;
+    /** The same operators by their entries, for answers that the rotations leave wide (operators equal in many directions). */
+    private final Optional<DensePair> entries;
 
     FactorPair(PositiveFactor first, PositiveFactor second) {
-        this.first = first;
-        this.second = second;
-        EnclosedMatrix x = first.columns();
-        EnclosedMatrix y = second.columns();
+        this(first, second, Optional.empty());
+    }
+
+    /** The pair of two operators through their factors. */
+    static FactorPair fromOperators(PositiveOperator a, PositiveOperator b) {
+        return new FactorPair(a.factor().reduced(), b.factor().reduced(), Optional.of(new DensePair(a, b)));
+    }
+
+    private FactorPair(PositiveFactor first, PositiveFactor second, Optional<DensePair> entries) {
+        this.entries = entries;
+        this.x = first.columns();
+        this.y = second.columns();
         this.gx = x.adjoint().times(x);
         this.gy = y.adjoint().times(y);
         this.cross = crossProducts(x, y);
-        this.traceA = withErrors(gx.traceRe(), first);
-        this.traceB = withErrors(gy.traceRe(), second);
+        this.relativeError = Math.max(first.relativeError(), second.relativeError());
+        this.traceErrorA = first.traceError();
+        this.traceErrorB = second.traceError();
+        this.traceA = withErrors(gx.traceRe(), first.relativeError(), traceErrorA);
+        this.traceB = withErrors(gy.traceRe(), second.relativeError(), traceErrorB);
     }
 
-    private static Enclosure withErrors(Enclosure trace, PositiveFactor f) {
-        return trace.times(Enclosure.of(1 - f.relativeError(), 1 + f.relativeError()))
-                .widen(f.traceError())
+    private FactorPair(EnclosedMatrix z, EnclosedMatrix gram, int k, double traceErrorA, double traceErrorB) {
+        int r = gram.rows();
+        this.entries = Optional.empty();
+        this.x = block(z, 0, z.rows(), 0, k);
+        this.y = block(z, 0, z.rows(), k, r);
+        this.gx = block(gram, 0, k, 0, k);
+        this.gy = block(gram, k, r, k, r);
+        this.cross = block(gram, 0, k, k, r);
+        this.relativeError = 0;
+        this.traceErrorA = traceErrorA;
+        this.traceErrorB = traceErrorB;
+        this.traceA = withErrors(gx.traceRe(), 0, traceErrorA);
+        this.traceB = withErrors(gy.traceRe(), 0, traceErrorB);
+    }
+
+    /**
+     * The pair whose columns have a given Gram matrix G, taken as exact: the certificate needs the inner products only, and the rotations any columns that come close.
+     *
+     * <p>If G is singular within rounding, the operator meant is its positive part; columns then differ by at most e = √‖G₊ − G‖₁ in Frobenius norm (Powers and Størmer, Comm. Math. Phys. 16, 1, 1970:
+     * ‖√G − √G'‖_F² ≤ ‖G − G'‖₁), which changes XX* by at most 2e‖X‖_F + e² in trace norm.
+     */
+    static FactorPair fromGram(PositiveOperator gram, int firstColumns) {
+        int r = gram.dimension();
+        if (firstColumns < 1 || firstColumns >= r) {
+            throw new InvalidInputException(
+                    "PositivePair.ofGram",
+                    firstColumns + " of " + r + " columns belong to the first operator",
+                    "at least 1 and fewer than all",
+                    "split the columns between the two operators");
+        }
+        double e = Math.sqrt(gram.entryDefect()) * (1 + 0x1p-50);
+        EnclosedMatrix z = gram.factor().columns().adjoint();
+        EnclosedMatrix g = EnclosedMatrix.of(gram);
+        double x = block(z, 0, z.rows(), 0, firstColumns).frobeniusUpper() + e;
+        double y = block(z, 0, z.rows(), firstColumns, r).frobeniusUpper() + e;
+        return new FactorPair(
+                z, g, firstColumns, (2 * e * x + e * e) * (1 + 0x1p-40), (2 * e * y + e * e) * (1 + 0x1p-40));
+    }
+
+    private static EnclosedMatrix block(EnclosedMatrix m, int row, int toRow, int column, int toColumn) {
+        EnclosedMatrix.Builder b = EnclosedMatrix.builder(toRow - row, toColumn - column);
+        for (int i = row; i < toRow; i++) {
+            for (int j = column; j < toColumn; j++) {
+                b.set(i - row, j - column, m.re(i, j), m.reTail(i, j), m.im(i, j), m.imTail(i, j), m.radius(i, j));
+            }
+        }
+        return b.build();
+    }
+
+    private static Enclosure withErrors(Enclosure trace, double relative, double absolute) {
+        return trace.times(Enclosure.of(1 - relative, 1 + relative))
+                .widen(absolute)
                 .max(Enclosure.ZERO);
     }
 
@@ -107,15 +177,17 @@ final class FactorPair extends PositivePair {
         } else {
             f = columnsOnly(wa.toDoubleDown(), wb.toDoubleDown());
         }
-        double eta = Math.max(first.relativeError(), second.relativeError()) + 0x1p-97;
+        double eta = relativeError + 0x1p-97;
         Enclosure errors = Enclosure.of(wa, wa)
-                .times(first.traceError())
-                .plus(Enclosure.of(wb, wb).times(second.traceError()));
-        Enclosure wide = f.times(Enclosure.of(1 - eta, 1 + eta));
+                .times(traceErrorA)
+                .plus(Enclosure.of(wb, wb).times(traceErrorB));
+        Enclosure relative = f.times(Enclosure.of(1 - eta, 1 + eta));
         Enclosure all = Enclosure.of(
-                wide.lowerWide().plusDown(errors.upperWide().negate()),
-                wide.upperWide().plusUp(errors.upperWide()));
-        return Enclosure.of(scaled(all.lowerWide(), shift), scaled(all.upperWide(), shift));
+                relative.lowerWide().plusDown(errors.upperWide().negate()),
+                relative.upperWide().plusUp(errors.upperWide()));
+        Enclosure result = Enclosure.of(scaled(all.lowerWide(), shift), scaled(all.upperWide(), shift));
+        boolean wide = !(result.relativeWidth() <= Refinement.NARROW);
+        return wide && entries.isPresent() ? result.intersect(entries.get().fromEigenvalues(a, b)) : result;
     }
 
     private static WideDouble scaled(WideDouble x, long shift) {
@@ -146,9 +218,9 @@ final class FactorPair extends PositivePair {
         }
         int e = Math.getExponent(largest);
         EnclosedMatrix unitCross = powerOfTwo(m, -e);
-        EnclosedMatrix x = scale(first.columns(), sa).midpoint();
-        EnclosedMatrix y = scale(second.columns(), sb).midpoint();
-        HyperbolicSweeps sweeps = HyperbolicSweeps.run(x, y, wgx, wgy, unitCross, e);
+        EnclosedMatrix wx = scale(x, sa).midpoint();
+        EnclosedMatrix wy = scale(y, sb).midpoint();
+        HyperbolicSweeps sweeps = HyperbolicSweeps.run(wx, wy, wgx, wgy, unitCross, e);
         return RotationCertificate.enclose(wgx, wgy, unitCross, e, sweeps);
     }
 
@@ -174,7 +246,7 @@ final class FactorPair extends PositivePair {
 
     @Override
     public int dimension() {
-        return first.dimension();
+        return x.rows();
     }
 
     @Override

@@ -19,12 +19,14 @@ import org.minorant.core.internal.kernel.Rotations;
  */
 final class HyperbolicSweeps {
 
-    private static final int MOST_SWEEPS = 60;
+    private static final int MOST_SWEEPS = 40;
     /** A rotation that adds less than this part of the sum cannot be seen in the answer; r² of them cannot either. */
     private static final double NEGLIGIBLE = 1e-25;
 
     private static final double ORTHOGONAL = 1e-16;
     private static final double SHORT_OF_EQUAL = 1e-14;
+    /** Overlaps met below this are squared by the rotations of the sweep that met them. */
+    private static final double NEARLY_ORTHOGONAL = 1e-4;
 
     private final int k;
     private final int r;
@@ -44,6 +46,8 @@ final class HyperbolicSweeps {
     private final double[][] gi;
     private final double[] norm;
     private double total;
+    /** The largest normalised inner product met within one operator during the sweep. */
+    private double overlap;
 
     private HyperbolicSweeps(EnclosedMatrix x, EnclosedMatrix y, int exponent) {
         k = x.columns();
@@ -95,18 +99,39 @@ final class HyperbolicSweeps {
         s.fill(gy, s.k, s.k);
         s.fill(cross, 0, s.k);
         s.fill(cross.adjoint(), s.k, 0);
+        s.measure();
+        s.orthogonalise(0, s.k);
+        s.orthogonalise(s.k, s.r);
         for (int sweep = 0; sweep < MOST_SWEEPS; sweep++) {
-            for (int j = 0; j < s.r; j++) {
-                s.norm[j] = s.squared(j);
-            }
+            s.measure();
             double before = s.total;
+            s.overlap = 0;
             boolean turned = s.sweep();
             double added = s.total - before;
-            if (!turned || sweep > 0 && added <= 1e-17 * s.total) {
+            if (!turned || sweep > 0 && added <= 1e-17 * s.total && s.overlap < NEARLY_ORTHOGONAL) {
                 break;
             }
         }
         return s;
+    }
+
+    private void measure() {
+        for (int j = 0; j < r; j++) {
+            norm[j] = squared(j);
+        }
+    }
+
+    /** Makes the columns of one operator orthogonal first: equal or nearly equal operators then meet column by column. */
+    private void orthogonalise(int from, int to) {
+        boolean turned = true;
+        for (int sweep = 0; turned && sweep < MOST_SWEEPS; sweep++) {
+            turned = false;
+            for (int p = from; p < to - 1; p++) {
+                for (int c = p + 1; c < to; c++) {
+                    turned |= norm[p] > 0 && norm[c] > 0 && unitary(p, c);
+                }
+            }
+        }
     }
 
     private void fill(EnclosedMatrix g, int row, int column) {
@@ -166,7 +191,18 @@ final class HyperbolicSweeps {
         double ti = 2 * hi / s;
         double cosh = s / Math.sqrt(root * root + 2 * root * (a + b) + exactRoot * exactRoot);
         turn(p, c, cosh, cosh * tr, cosh * ti, true);
+        if (root > exactRoot) {
+            // what is left of equal columns is rounding noise; turning it further would only blow up the coefficients
+            retire(p);
+            retire(c);
+        }
         return true;
+    }
+
+    private void retire(int j) {
+        norm[j] = 0;
+        java.util.Arrays.fill(re[j], 0);
+        java.util.Arrays.fill(im[j], 0);
     }
 
     private boolean unitary(int p, int c) {
@@ -177,6 +213,10 @@ final class HyperbolicSweeps {
         double h = Math.sqrt(hr * hr + hi * hi);
         if (!(h > ORTHOGONAL * Math.sqrt(a) * Math.sqrt(b)) || !(h > Double.MIN_NORMAL)) {
             return false;
+        }
+        // columns too light for the answer are rounding noise and never settle
+        if (Math.min(a, b) > 1e-18 * q * total) {
+            overlap = Math.max(overlap, h / Math.sqrt(a) / Math.sqrt(b));
         }
         // x' = cx − s e^{-iφ} y, y' = s e^{iφ} x + cy, with h = |h| e^{iφ}
         double zeta = (b - a) / (2 * h);

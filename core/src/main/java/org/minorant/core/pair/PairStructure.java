@@ -43,20 +43,17 @@ final class PairStructure {
         }
         OptionalInt columnsA = a.knownColumns();
         OptionalInt columnsB = b.knownColumns();
-        if (columnsA.isPresent() && columnsA.getAsInt() == 1 && exactDiagonal(b)) {
+        boolean few = columnsA.isPresent()
+                && columnsB.isPresent()
+                && columnsA.getAsInt() + columnsB.getAsInt() <= FEW_COLUMNS;
+        if (columnsA.isPresent() && columnsA.getAsInt() == 1 && (exactDiagonal(b) || !few)) {
             return RankOnePair.of(a, b, false);
         }
-        if (columnsB.isPresent() && columnsB.getAsInt() == 1 && exactDiagonal(a)) {
+        if (columnsB.isPresent() && columnsB.getAsInt() == 1 && (exactDiagonal(a) || !few)) {
             return RankOnePair.of(b, a, true);
         }
-        if (columnsA.isPresent() && columnsB.isPresent() && columnsA.getAsInt() + columnsB.getAsInt() <= FEW_COLUMNS) {
-            return new FactorPair(a.factor().reduced(), b.factor().reduced());
-        }
-        if (columnsA.isPresent() && columnsA.getAsInt() == 1) {
-            return RankOnePair.of(a, b, false);
-        }
-        if (columnsB.isPresent() && columnsB.getAsInt() == 1) {
-            return RankOnePair.of(b, a, true);
+        if (few) {
+            return FactorPair.fromOperators(a, b);
         }
         return new DensePair(a, b);
     }

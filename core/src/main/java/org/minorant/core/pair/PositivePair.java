@@ -72,6 +72,30 @@ public abstract sealed class PositivePair permits CommutingPair, DensePair, Dire
     }
 
     /**
+     * Returns the pair of a rank-one operator A = ψψ* and an operator B of which only the spectral measure in ψ is given: B = Σ b_i |v_i⟩⟨v_i| on the span that ψ = Σ √w_i v_i meets.
+     *
+     * @param weights w_i = |⟨v_i,ψ⟩|², each at least 0 and finite
+     * @param values b_i, each at least 0 and finite
+     * @return the pair
+     * @throws InvalidInputException if the lengths differ or are zero, or a number is negative or not finite
+     */
+    public static PositivePair ofSpectralMeasure(double[] weights, double[] values) {
+        return RankOnePair.ofMeasure(weights, values);
+    }
+
+    /**
+     * Returns the pair A = XX*, B = YY* of which only the Gram matrix G = Z*Z of the columns Z = [X Y] is given; the curve depends on nothing else.
+     *
+     * @param gram the inner products of the columns
+     * @param firstColumns how many of them belong to A, at least 1, fewer than all
+     * @return the pair
+     * @throws InvalidInputException if the number of columns is out of range
+     */
+    public static PositivePair ofGram(PositiveOperator gram, int firstColumns) {
+        return FactorPair.fromGram(gram, firstColumns);
+    }
+
+    /**
      * Returns f(t) = Tr[A ∧ tB].
      *
      * @param t the weight on B, at least 0 and finite

@@ -1,126 +1,178 @@
 package org.minorant.core.pair;
 
 import org.minorant.core.EnclosedMatrix;
-import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.Enclosure;
+import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
+import org.minorant.core.internal.door.EigenResidual;
+import org.minorant.core.internal.door.HermitianEigen;
 
 /**
- * A rank-one operator A = ψψ* against any B, through the spectral measure (w_i, b_i) of B in ψ: w_i = |⟨v_i,ψ⟩|².
+ * A rank-one operator A = ψψ* against any B, through the spectral measure (w_i, b_i) of B in ψ: w_i = |⟨v_i,ψ⟩|². B is decomposed once; every further value of the curve costs
+ * one root of a secular equation.
  *
- * <p><b>Definition.</b> A − B has at most one positive eigenvalue λ, the root of Σ w_i/(λ + b_i) = 1 (Golub, SIAM Rev. 15, 318, 1973), and f = a − λ with a = Σ w_i. In δ = a − λ the
- * equation reads
+ * <p><b>Definition.</b> A − B has at most one positive eigenvalue λ, the root of Σ w_i/(λ + b_i) = 1 (Golub, SIAM Rev. 15, 318, 1973), and f = a − λ with a = Σ w_i; see {@link SecularRoot}.
  *
- * <pre>δ = g(δ) = Σ w_i b_i / (a − δ + b_i),</pre>
- *
- * all terms positive, so that a tiny f keeps its digits. g is increasing and convex with g(0) ≥ 0; f is its smallest fixed point in [0, a].
- *
- * <p><b>Enclosure.</b> h = g − id is positive before f and, being convex, negative between f and the next root. A double root-finder proposes δ; a point below it where h &gt; 0 is certain is a
- * lower end <em>if</em> it is not beyond the second root, which h &lt; 0 at a later point, certain as well, shows; that later point is the upper end. Signs are decided in outward-rounded
- * arithmetic on intervals for w_i and b_i.
+ * <p><b>Enclosure.</b> For diagonal B the measure is exact up to an outward-rounded product, and f keeps its relative accuracy at any depth. Otherwise B = ŨΛŨ* + E with ‖E‖₁ bounded by
+ * EigenResidual, and the computed amplitudes differ from Ũ*ψ by at most (δ + γ)‖ψ‖, which changes ψψ* by at most 2(δ + γ)(1 + δ + γ)‖ψ‖² in trace norm: an absolute error, which is then narrowed by
+ * {@link FactorPair} where it is too wide.
  */
 final class RankOnePair extends PositivePair {
 
-    private final double[] weightLower;
-    private final double[] weightUpper;
-    private final double[] valueLower;
-    private final double[] valueUpper;
-    private final Enclosure traceA;
-    private final Enclosure traceB;
-    /** Relative and trace error of the measure, in the sense of {@link PositiveFactor}. */
-    private final double relativeError;
+    private static final double U = 0x1p-53;
 
-    private final double traceErrorB;
+    private final Enclosure[] weights;
+    private final Enclosure[] values;
+    private final Enclosure traceOne;
+    private final Enclosure traceOther;
+    private final double relativeError;
+    /** Trace errors of the rank-one operator and of the other. */
+    private final double errorOne;
+
+    private final double errorOther;
     /** Whether the rank-one operator is the second of the pair. */
     private final boolean swapped;
 
+    private final Refinement refinement;
+
     private RankOnePair(
-            double[][] measure,
-            double relativeError,
-            double traceErrorB,
-            PositiveOperator a,
-            PositiveOperator b,
-            boolean swapped) {
-        this.weightLower = measure[0];
-        this.weightUpper = measure[1];
-        this.valueLower = measure[2];
-        this.valueUpper = measure[3];
-        this.relativeError = relativeError;
-        this.traceErrorB = traceErrorB;
-        this.traceA = a.traceEnclosure();
-        this.traceB = b.traceEnclosure();
+            Measure measure, Enclosure traceOne, Enclosure traceOther, boolean swapped, Refinement refinement) {
+        this.weights = measure.weights;
+        this.values = measure.values;
+        this.relativeError = measure.relativeError;
+        this.errorOne = measure.errorOne;
+        this.errorOther = measure.errorOther;
+        this.traceOne = traceOne;
+        this.traceOther = traceOther;
         this.swapped = swapped;
+        this.refinement = refinement;
     }
 
-    /** The pair (ψψ*, B), or (B, ψψ*) if swapped, from the certified spectrum of B. */
+    /** A spectral measure with the errors it was found to: of ψψ* (relative, trace) and of B (trace). */
+    private record Measure(
+            Enclosure[] weights, Enclosure[] values, double relativeError, double errorOne, double errorOther) {}
+
+    /** The pair (ψψ*, B), or (B, ψψ*) if swapped. */
     static RankOnePair of(PositiveOperator rankOne, PositiveOperator b, boolean swapped) {
+        boolean diagonal = !b.isDefinedByFactor() && PairStructure.isDiagonal(b);
+        Refinement refinement = swapped ? new Refinement(b, rankOne) : new Refinement(rankOne, b);
+        return new RankOnePair(
+                diagonal ? exact(rankOne, b) : decomposed(rankOne, b),
+                rankOne.traceEnclosure(),
+                b.traceEnclosure(),
+                swapped,
+                diagonal ? Refinement.NONE : refinement);
+    }
+
+    /** The pair of a vector and an operator of which only the spectral measure is given, exactly. */
+    static RankOnePair ofMeasure(double[] weights, double[] values) {
+        String asked = "PositivePair.ofSpectralMeasure";
+        if (weights.length == 0 || weights.length != values.length) {
+            throw new InvalidInputException(
+                    asked,
+                    "there are " + weights.length + " weights and " + values.length + " values",
+                    "as many of each, at least 1",
+                    "give one weight per eigenvalue");
+        }
+        Enclosure[] w = new Enclosure[weights.length];
+        Enclosure[] b = new Enclosure[weights.length];
+        Enclosure one = Enclosure.ZERO;
+        Enclosure other = Enclosure.ZERO;
+        for (int i = 0; i < w.length; i++) {
+            if (!(weights[i] >= 0 && values[i] >= 0 && weights[i] + values[i] < Double.POSITIVE_INFINITY)) {
+                throw new InvalidInputException(
+                        asked,
+                        "weight and value " + i + " are " + weights[i] + " and " + values[i],
+                        "at least 0 and finite",
+                        "check the measure");
+            }
+            w[i] = Enclosure.exact(weights[i]);
+            b[i] = Enclosure.exact(values[i]);
+            one = one.plus(w[i]);
+            other = other.plus(b[i]);
+        }
+        return new RankOnePair(new Measure(w, b, 0, 0, 0), one, other, false, Refinement.NONE);
+    }
+
+    private static Measure exact(PositiveOperator rankOne, PositiveOperator b) {
         PositiveFactor psi = rankOne.factor();
         int n = b.dimension();
-        boolean diagonal = PairStructure.isDiagonal(b) && !b.isDefinedByFactor();
-        double[][] measure = new double[4][n];
-        if (diagonal) {
-            for (int i = 0; i < n; i++) {
-                measure[2][i] = measure[3][i] = Math.max(0, b.re(i, i));
-            }
-            weights(measure, psi.columns());
-            return new RankOnePair(measure, psi.relativeError(), b.entryDefect(), rankOne, b, swapped);
-        }
-        EnclosedSpectrum s = EnclosedSpectrum.of(b);
-        double rest = 0;
+        Enclosure[] weights = new Enclosure[n];
+        Enclosure[] values = new Enclosure[n];
         for (int i = 0; i < n; i++) {
-            Enclosure v = Enclosure.exact(s.value(i)).plus(Enclosure.exact(s.valueTail(i)));
-            // what is negative belongs to the residual below: the operator meant is the positive part
-            rest += Math.max(0, -s.value(i)) * (1 + 0x1p-40);
-            measure[2][i] = Math.max(0, v.lower());
-            measure[3][i] = Math.max(0, v.upper());
+            EnclosedMatrix x = psi.columns();
+            weights[i] = x.enclosureRe(i, 0).square().plus(x.enclosureIm(i, 0).square());
+            values[i] = Enclosure.exact(Math.max(0, b.re(i, i)));
         }
-        weights(measure, s.vectors().adjoint().times(psi.columns()));
-        // in the coordinates V*: A becomes V*AV, B becomes V*BV with V*V = 1 + O(defect); see EnclosedSpectrum for
-        // residual and defect
-        double eta = psi.relativeError() + 3 * s.defect();
-        double nu = (Math.sqrt(n) * s.residual() + rest) * (1 + 0x1p-40) + b.entryDefect();
-        return new RankOnePair(measure, eta, nu, rankOne, b, swapped);
+        return new Measure(weights, values, psi.relativeError(), psi.traceError(), 0);
     }
 
-    private static void weights(double[][] measure, EnclosedMatrix amplitudes) {
-        for (int i = 0; i < amplitudes.rows(); i++) {
-            Enclosure re = amplitudes.enclosureRe(i, 0);
-            Enclosure im = amplitudes.enclosureIm(i, 0);
-            Enclosure w = re.square().plus(im.square());
-            measure[0][i] = Math.max(0, w.lower());
-            measure[1][i] = w.upper();
+    private static Measure decomposed(PositiveOperator rankOne, PositiveOperator b) {
+        PositiveFactor psi = rankOne.factor();
+        int n = b.dimension();
+        double[] re = b.realParts();
+        double[] im = b.imaginaryParts();
+        HermitianEigen e = HermitianEigen.of(n, re, im);
+        EigenResidual residual = EigenResidual.of(n, re, im, e);
+        double[] vr = e.vectorsRe();
+        double[] vi = e.vectorsIm();
+        Enclosure[] weights = new Enclosure[n];
+        Enclosure[] values = new Enclosure[n];
+        double norm = 0;
+        for (int j = 0; j < n; j++) {
+            double x = 0;
+            double y = 0;
+            for (int i = 0; i < n; i++) {
+                double p = psi.columns().re(i, 0);
+                double q = psi.columns().im(i, 0);
+                x += vr[i * n + j] * p + vi[i * n + j] * q;
+                y += vr[i * n + j] * q - vi[i * n + j] * p;
+            }
+            weights[j] = Enclosure.exact(x).square().plus(Enclosure.exact(y).square());
+            // the operator meant is the positive part; cutting here is inside the entry defect
+            values[j] = Enclosure.exact(Math.max(0, e.values()[j]));
+            norm += x * x + y * y;
         }
+        // rounding of the amplitudes, and of ψ to double: γ in norm
+        double gamma = residual.defect() + (4.0 * n + 16) * Math.sqrt(n) * U;
+        double errorOne = 2.2 * gamma * norm + psi.traceError();
+        double errorOther = 2 * (residual.traceError() + b.entryDefect());
+        return new Measure(weights, values, psi.relativeError(), errorOne, errorOther);
     }
 
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
-        WideDouble a = swapped ? wb : wa;
-        WideDouble b = swapped ? wa : wb;
-        Enclosure f = SecularRoot.enclose(
-                weightLower, weightUpper, valueLower, valueUpper, b.dividedByDown(a), b.dividedByUp(a));
-        Enclosure scaled = f.times(Enclosure.of(a, a));
-        Enclosure wide = scaled.times(Enclosure.of(1 - relativeError, 1 + relativeError));
-        Enclosure nu = Enclosure.of(b, b).times(traceErrorB);
-        return Enclosure.of(
-                wide.lowerWide().plusDown(nu.upperWide().negate()),
-                wide.upperWide().plusUp(nu.upperWide()));
+        WideDouble one = swapped ? wb : wa;
+        WideDouble other = swapped ? wa : wb;
+        Enclosure ratio = Enclosure.of(other, other).dividedBy(Enclosure.of(one, one));
+        Enclosure f = SecularRoot.enclose(weights, values, ratio)
+                .times(Enclosure.of(1 - relativeError, 1 + relativeError))
+                .plus(Enclosure.of(-errorOne, errorOne))
+                .times(Enclosure.of(one, one));
+        Enclosure nu = Enclosure.of(other, other).times(errorOther);
+        return refinement.narrow(
+                Enclosure.of(
+                        f.lowerWide().plusDown(nu.upperWide().negate()),
+                        f.upperWide().plusUp(nu.upperWide())),
+                wa,
+                wb);
     }
 
     @Override
     public Enclosure firstTrace() {
-        return swapped ? traceB : traceA;
+        return swapped ? traceOther : traceOne;
     }
 
     @Override
     public Enclosure secondTrace() {
-        return swapped ? traceA : traceB;
+        return swapped ? traceOne : traceOther;
     }
 
     @Override
     public int dimension() {
-        return weightLower.length;
+        return weights.length;
     }
 
     @Override

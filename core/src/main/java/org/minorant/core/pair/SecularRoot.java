@@ -4,33 +4,38 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
 
 /**
- * Encloses the smallest fixed point δ in [0, a] of g(δ) = Σ w_i t b_i / (a − δ + t b_i), a = Σ w_i; see {@link RankOnePair}.
+ * Encloses f = a − λ for the root λ of Σ w_i/(λ + t b_i) = 1, a = Σ w_i. In δ = a − λ the equation reads
  *
- * <p>Uses wide exponents throughout: roots far below the smallest double are found as well.
+ * <pre>δ = g(δ) = Σ w_i t b_i / (a − δ + t b_i),</pre>
+ *
+ * all terms positive, so that a tiny f keeps its digits. g is increasing and convex with g(0) ≥ 0, and f is its smallest fixed point in [0, a].
+ *
+ * <p><b>Enclosure.</b> h = g − id is positive before f and, being convex, negative between f and the next root. A point where h &gt; 0 is certain is a lower end if h &lt; 0 is certain at a later
+ * point (it cannot be beyond the second root then), and that later point is the upper end. Signs are decided in outward-rounded arithmetic on intervals for w_i and b_i, with wide exponents
+ * throughout.
  */
 final class SecularRoot {
 
     private static final int MOST_STEPS = 200;
 
-    private final double[] weightLower;
-    private final double[] weightUpper;
+    private final Enclosure[] weight;
     private final Enclosure[] value;
     private final Enclosure total;
 
-    private SecularRoot(double[] wl, double[] wu, double[] bl, double[] bu, Enclosure t) {
-        weightLower = wl;
-        weightUpper = wu;
-        value = new Enclosure[wl.length];
+    private SecularRoot(Enclosure[] weights, Enclosure[] values, Enclosure t) {
+        weight = weights;
+        value = new Enclosure[weights.length];
         Enclosure sum = Enclosure.ZERO;
-        for (int i = 0; i < wl.length; i++) {
-            value[i] = Enclosure.of(bl[i], bu[i]).times(t);
-            sum = sum.plus(Enclosure.of(wl[i], wu[i]));
+        for (int i = 0; i < weights.length; i++) {
+            value[i] = values[i].times(t);
+            sum = sum.plus(weights[i]);
         }
         total = sum;
     }
 
-    static Enclosure enclose(double[] wl, double[] wu, double[] bl, double[] bu, WideDouble tLower, WideDouble tUpper) {
-        return new SecularRoot(wl, wu, bl, bu, Enclosure.of(tLower, tUpper)).enclose();
+    /** The fixed point for weights w_i, values b_i and the weight t on B. */
+    static Enclosure enclose(Enclosure[] weights, Enclosure[] values, Enclosure t) {
+        return new SecularRoot(weights, values, t).enclose();
     }
 
     private Enclosure enclose() {
@@ -62,15 +67,14 @@ final class SecularRoot {
         Enclosure lambda = total.minus(Enclosure.of(delta, delta)).max(Enclosure.ZERO);
         Enclosure s = Enclosure.ZERO;
         for (int i = 0; i < value.length; i++) {
-            if (weightUpper[i] > 0 && value[i].upperWide().signum() > 0) {
-                Enclosure w = Enclosure.of(weightLower[i], weightUpper[i]);
+            if (weight[i].upperWide().signum() > 0 && value[i].upperWide().signum() > 0) {
                 // b/(λ+b) increases with b and decreases with λ
                 Enclosure b = value[i];
                 WideDouble low = b.lowerWide().signum() == 0
                         ? WideDouble.ZERO
                         : b.lowerWide().dividedByDown(lambda.upperWide().plusUp(b.lowerWide()));
                 WideDouble high = b.upperWide().dividedByUp(lambda.lowerWide().plusDown(b.upperWide()));
-                s = s.plus(w.times(Enclosure.of(low, high)));
+                s = s.plus(weight[i].times(Enclosure.of(low, high)));
             }
         }
         return s;
@@ -86,14 +90,13 @@ final class SecularRoot {
             Enclosure lambda = total.minus(Enclosure.of(d, d));
             double slope = -1 - value.length * 0x1p-48;
             for (int i = 0; i < value.length; i++) {
-                if (weightUpper[i] > 0) {
+                if (weight[i].upperWide().signum() > 0) {
                     WideDouble denominator = lambda.upperWide().plusUp(value[i].upperWide());
                     if (denominator.signum() > 0) {
                         double ratio =
                                 value[i].upperWide().dividedByDown(denominator).toDoubleDown();
-                        double rest = WideDouble.of(weightUpper[i])
-                                .dividedByDown(denominator)
-                                .toDoubleDown();
+                        double rest =
+                                weight[i].upperWide().dividedByDown(denominator).toDoubleDown();
                         slope += ratio * rest;
                     }
                 }

@@ -16,10 +16,12 @@ public final class EigenResidual {
 
     private final double[] values;
     private final double traceError;
+    private final double defect;
 
-    private EigenResidual(double[] values, double traceError) {
+    private EigenResidual(double[] values, double traceError, double defect) {
         this.values = values;
         this.traceError = traceError;
+        this.defect = defect;
     }
 
     /** Bounds the error of a decomposition of the n × n matrix (are, aim), row-major; an empty imaginary part means real. */
@@ -60,7 +62,7 @@ public final class EigenResidual {
             throw new ArithmeticException("the eigenvectors are not orthonormal: defect " + defect);
         }
         double error = (residual + 2 * defect * Math.sqrt(values)) / Math.sqrt(1 - defect);
-        return new EigenResidual(lambda, error * Math.sqrt(n) * (1 + 8L * n * n * U) + 0x1p-1000);
+        return new EigenResidual(lambda, error * Math.sqrt(n) * (1 + 8L * n * n * U) + 0x1p-1000, defect);
     }
 
     private static double frobenius(double[] re, double[] im) {
@@ -82,6 +84,11 @@ public final class EigenResidual {
             }
         }
         return t;
+    }
+
+    /** A bound on ‖V*V − 1‖, and so on ‖V − Ũ‖. */
+    public double defect() {
+        return defect;
     }
 
     /** A bound on the trace norm of A − ŨΛŨ*. */
