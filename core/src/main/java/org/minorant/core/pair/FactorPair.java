@@ -45,7 +45,23 @@ final class FactorPair extends PositivePair {
 
     /** The pair of two operators through their factors. */
     static FactorPair fromOperators(PositiveOperator a, PositiveOperator b) {
-        return new FactorPair(a.factor().reduced(), b.factor().reduced(), Optional.of(new DensePair(a, b)));
+        return fromOperators(a, b, QuarterTurns.find(a, b), Optional.of(new DensePair(a, b)));
+    }
+
+    /** The same, made real by the turns if the factors follow them. */
+    static FactorPair fromOperators(
+            PositiveOperator a, PositiveOperator b, Optional<QuarterTurns> turns, Optional<DensePair> entries) {
+        PositiveFactor x = a.factor().reduced();
+        PositiveFactor y = b.factor().reduced();
+        Optional<EnclosedMatrix> rx = turns.flatMap(t -> t.columns(x.columns()));
+        Optional<EnclosedMatrix> ry = turns.flatMap(t -> t.columns(y.columns()));
+        if (rx.isEmpty() || ry.isEmpty()) {
+            return new FactorPair(x, y, entries);
+        }
+        return new FactorPair(
+                new PositiveFactor(rx.get(), x.relativeError(), x.traceError()),
+                new PositiveFactor(ry.get(), y.relativeError(), y.traceError()),
+                entries);
     }
 
     private FactorPair(PositiveFactor first, PositiveFactor second, Optional<DensePair> entries) {

@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.Optional;
 import org.minorant.core.Enclosure;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
@@ -33,7 +34,7 @@ final class Refinement {
         }
         FactorPair p = factored;
         if (p == null) {
-            p = new FactorPair(a.factor().reduced(), b.factor().reduced());
+            p = FactorPair.fromOperators(a, b, QuarterTurns.find(a, b), Optional.empty());
             factored = p;
         }
         return f.intersect(p.value(wa, wb));

@@ -178,4 +178,28 @@ class PairStructureTest {
         assertEquals(Enclosure.ZERO, p.traceMinimum(0));
         assertEquals(Enclosure.ZERO, p.traceMinimum(0, 1));
     }
+
+    @Test
+    void quarterTurnsMakeAPairRealAndKeepItsCurve() {
+        // Bloch vectors in the y-z plane: off-diagonal entries are imaginary
+        PositiveOperator a = DensityOperator.ofBloch(0, 0.6, 0.5);
+        PositiveOperator b = DensityOperator.ofBloch(0, -0.3, 0.7);
+        QuarterTurns turns = QuarterTurns.find(a, b).orElseThrow();
+        assertTrue(turns.columns(a.factor().columns()).orElseThrow().isReal());
+        Enclosure turned = FactorPair.fromOperators(a, b).traceMinimum(0.8);
+        Enclosure plain = new FactorPair(a.factor(), b.factor()).traceMinimum(0.8);
+        turned.intersect(plain);
+        // in the x-z plane they are real: the same curve by rotation about z
+        Enclosure real = PositivePair.of(DensityOperator.ofBloch(0.6, 0, 0.5), DensityOperator.ofBloch(-0.3, 0, 0.7))
+                .traceMinimum(0.8);
+        turned.intersect(real);
+        PositiveOperator dense = byEntries(a);
+        QuarterTurns byEntry = QuarterTurns.find(dense, byEntries(b)).orElseThrow();
+        assertEquals(Math.abs(dense.im(1, 0)), Math.abs(byEntry.entry(1, 0, dense.re(1, 0), dense.im(1, 0))));
+        assertTrue(QuarterTurns.find(a, DensityOperator.ofBloch(0.1, 0.2, 0)).isEmpty());
+        // a cycle of three imaginary entries cannot be turned real
+        double[][] im = {{0, 0.1, 0.1}, {-0.1, 0, 0.1}, {-0.1, -0.1, 0}};
+        PositiveOperator cycle = PositiveOperator.of(new double[][] {{1, 0, 0}, {0, 1, 0}, {0, 0, 1}}, im);
+        assertTrue(QuarterTurns.find(cycle, cycle).isEmpty());
+    }
 }
