@@ -1,5 +1,8 @@
 package org.minorant.core;
 
+import java.util.Arrays;
+import java.util.Comparator;
+import java.util.stream.IntStream;
 import org.minorant.core.internal.number.DoubleDouble;
 
 /**
@@ -10,6 +13,9 @@ import org.minorant.core.internal.number.DoubleDouble;
  * (1 − εκ²) LL* ≤ A ≤ (1 + εκ²) LL*. The condition number of H matters, not that of A: a graded matrix keeps the relative accuracy of
  * its small eigenvalues (Demmel and Veselić, SIAM J. Matrix Anal. Appl. 13, 1204, 1992). κ comes from an approximate inverse W of M:
  * ‖M⁻¹‖ ≤ ‖W‖/(1 − ‖1 − WM‖).
+ *
+ * <p><b>Order.</b> Rows are taken by decreasing diagonal, and put back afterwards: L is lower triangular in that order only. What holds above holds in any order, but the
+ * columns of L are well-conditioned up to their lengths only in this one.
  */
 record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
 
@@ -18,25 +24,29 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
 
     static ScaledCholesky of(EnclosedMatrix a) {
         int n = a.rows();
-        int[] shift = new int[n];
+        int[] power = new int[n];
         EnclosedMatrix.Builder h = EnclosedMatrix.builder(n, n);
         for (int i = 0; i < n; i++) {
             if (!(a.re(i, i) > Double.MIN_NORMAL)) {
                 return FAILED;
             }
-            shift[i] = Math.getExponent(a.re(i, i)) / 2;
+            power[i] = Math.getExponent(a.re(i, i)) / 2;
         }
+        int[] order = heaviestFirst(power);
+        int[] shift = Arrays.stream(order).map(i -> power[i]).toArray();
         for (int i = 0; i < n; i++) {
             for (int j = 0; j < n; j++) {
                 int e = -shift[i] - shift[j];
+                int p = order[i];
+                int q = order[j];
                 h.set(
                         i,
                         j,
-                        Math.scalb(a.re(i, j), e),
-                        Math.scalb(a.reTail(i, j), e),
-                        Math.scalb(a.im(i, j), e),
-                        Math.scalb(a.imTail(i, j), e),
-                        Math.scalb(a.radius(i, j), e) + underflow(a, i, j, e));
+                        Math.scalb(a.re(p, q), e),
+                        Math.scalb(a.reTail(p, q), e),
+                        Math.scalb(a.im(p, q), e),
+                        Math.scalb(a.imTail(p, q), e),
+                        Math.scalb(a.radius(p, q), e) + underflow(a, p, q, e));
             }
         }
         EnclosedMatrix scaled = h.build();
@@ -44,11 +54,20 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
         if (m.length == 0) {
             return FAILED;
         }
-        EnclosedMatrix lower = assemble(m, new int[n]);
+        EnclosedMatrix lower = assemble(m, new int[n], IntStream.range(0, n).toArray());
         double epsilon = scaled.minus(lower.times(lower.adjoint())).frobeniusUpper();
         double kappa = inverseNorm(lower);
         double eta = epsilon * kappa * kappa * (1 + 0x1p-40);
-        return new ScaledCholesky(assemble(m, shift), eta < 1 ? eta : Double.POSITIVE_INFINITY);
+        return new ScaledCholesky(assemble(m, shift, order), eta < 1 ? eta : Double.POSITIVE_INFINITY);
+    }
+
+    /** The indices by decreasing power: light columns then lie in light rows, and are not nearly parallel to heavy ones. */
+    private static int[] heaviestFirst(int[] power) {
+        return IntStream.range(0, power.length)
+                .boxed()
+                .sorted(Comparator.comparingInt(i -> -power[i]))
+                .mapToInt(Integer::intValue)
+                .toArray();
     }
 
     /** What scaling by a power of two loses when a result is subnormal. */
@@ -93,7 +112,8 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
         return l;
     }
 
-    private static EnclosedMatrix assemble(DoubleDouble[][][] m, int[] shift) {
+    /** Row i, times 2^shift[i], becomes row order[i]. */
+    private static EnclosedMatrix assemble(DoubleDouble[][][] m, int[] shift, int[] order) {
         int n = m.length;
         EnclosedMatrix.Builder b = EnclosedMatrix.builder(n, n);
         for (int i = 0; i < n; i++) {
@@ -101,7 +121,7 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
                 DoubleDouble x = m[i][j][0];
                 DoubleDouble y = m[i][j][1];
                 b.set(
-                        i,
+                        order[i],
                         j,
                         Math.scalb(x.hi(), shift[i]),
                         Math.scalb(x.lo(), shift[i]),
