@@ -1,5 +1,8 @@
 package org.minorant.core;
 
+import java.util.Arrays;
+import org.minorant.core.internal.kernel.Cholesky;
+
 /**
  * A proof of positive definiteness in double: if the floating-point Cholesky factorisation of A − s·1 runs to completion, A is
  * positive definite, provided s exceeds the backward error.
@@ -19,34 +22,16 @@ final class CholeskyTest {
         if (!(trace > 0x1p-900)) {
             return false;
         }
-        double[][] lr = new double[n][];
-        double[][] li = new double[n][];
-        for (int i = 0; i < n; i++) {
-            double[] r = new double[i + 1];
-            double[] m = new double[i + 1];
-            for (int j = 0; j <= i; j++) {
-                double x = a.re(i, j);
-                double y = a.im(i, j);
-                double[] br = j < i ? lr[j] : r;
-                double[] bi = j < i ? li[j] : m;
-                for (int k = 0; k < j; k++) {
-                    x -= r[k] * br[k] + m[k] * bi[k];
-                    y -= m[k] * br[k] - r[k] * bi[k];
-                }
-                if (j < i) {
-                    r[j] = x / br[j];
-                    m[j] = y / br[j];
-                } else {
-                    double pivot = x - shift;
-                    if (!(pivot > 0)) {
-                        return false;
-                    }
-                    r[i] = Math.sqrt(pivot);
-                }
-            }
-            lr[i] = r;
-            li[i] = m;
+        double[][] re = rows(a.realParts(), n);
+        double[][] im = rows(a.imaginaryParts(), n);
+        return Cholesky.completes(re, im, shift);
+    }
+
+    private static double[][] rows(double[] flat, int n) {
+        double[][] r = new double[flat.length / n][];
+        for (int i = 0; i < r.length; i++) {
+            r[i] = Arrays.copyOfRange(flat, i * n, (i + 1) * n);
         }
-        return true;
+        return r;
     }
 }

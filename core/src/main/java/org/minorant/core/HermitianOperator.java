@@ -159,6 +159,6 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
      * @return n eigenvalues
      */
     public final double[] eigenvalues() {
-        return HermitianEigen.of(rows(), realParts(), imaginaryParts()).values();
+        return HermitianEigen.valuesOf(rows(), realParts(), imaginaryParts());
     }
 }

@@ -19,11 +19,15 @@ final class DensePair extends PositivePair {
 
     private final PositiveOperator a;
     private final PositiveOperator b;
+    private final int exponentA;
+    private final int exponentB;
     private final Refinement refinement;
 
     DensePair(PositiveOperator a, PositiveOperator b) {
         this.a = a;
         this.b = b;
+        this.exponentA = exponent(a);
+        this.exponentB = exponent(b);
         this.refinement = new Refinement(a, b);
     }
 
@@ -33,23 +37,32 @@ final class DensePair extends PositivePair {
     }
 
     Enclosure fromEigenvalues(WideDouble wa, WideDouble wb) {
-        long shift = Math.max(wa.exponent(), wb.exponent());
+        // both operators are brought to order one by powers of two, or tiny ones would lose their error bound to
+        // underflow
+        long ea = wa.exponent() + exponentA;
+        long eb = wb.exponent() + exponentB;
+        long shift = largest(a) == 0 ? eb : largest(b) == 0 ? ea : Math.max(ea, eb);
         // a weight that underflows here is below 1e-300 of the other; losing it is inside the error below
-        double x = wa.timesPowerOfTwo(-shift).toDoubleDown();
-        double y = wb.timesPowerOfTwo(-shift).toDoubleDown();
+        double x = WideDouble.of(wa.significand(), ea - shift).toDoubleDown();
+        double y = WideDouble.of(wb.significand(), eb - shift).toDoubleDown();
         int n = a.dimension();
         double[] re = new double[n * n];
         double[] im = a.isReal() && b.isReal() ? new double[0] : new double[n * n];
         double size = 0;
+        // in two steps, as the power itself may be out of range
+        double halfA = Math.scalb(1.0, -exponentA / 2);
+        double restA = Math.scalb(1.0, -exponentA + exponentA / 2);
+        double halfB = Math.scalb(1.0, -exponentB / 2);
+        double restB = Math.scalb(1.0, -exponentB + exponentB / 2);
         for (int i = 0; i < n; i++) {
             for (int j = 0; j < n; j++) {
-                double p = x * a.re(i, j);
-                double q = y * b.re(i, j);
+                double p = x * (a.re(i, j) * halfA * restA);
+                double q = y * (b.re(i, j) * halfB * restB);
                 re[i * n + j] = p - q;
                 size += p * p + q * q;
                 if (im.length != 0) {
-                    double r = x * a.im(i, j);
-                    double s = y * b.im(i, j);
+                    double r = x * (a.im(i, j) * halfA * restA);
+                    double s = y * (b.im(i, j) * halfB * restB);
                     im[i * n + j] = r - s;
                     size += r * r + s * s;
                 }
@@ -57,17 +70,40 @@ final class DensePair extends PositivePair {
         }
         // two products and a difference: at most 2u(|p| + |q|) in each entry, ≤ 2√2·u·√(p²+q²); trace norm ≤ √n ·
         // Frobenius norm
-        double rounding = Math.sqrt(n) * 3 * U * Math.sqrt(size) * (1 + 1e-6) + n * 0x1p-1000;
+        double rounding = Math.sqrt(n) * 3 * U * Math.sqrt(size) * (1 + 1e-6) + (double) n * n * 0x1p-1000;
         HermitianEigen e = HermitianEigen.of(n, re, im);
         double error = EigenResidual.of(n, re, im, e).traceError() + rounding;
         Enclosure norm = Enclosure.ZERO;
         for (double v : e.values()) {
             norm = norm.plus(Enclosure.exact(Math.abs(v)));
         }
-        double defects = (x * a.entryDefect() + y * b.entryDefect()) * (1 + 0x1p-50);
-        Enclosure sum = entryTrace(a).times(x).plus(entryTrace(b).times(y)).minus(norm.widen(error));
-        Enclosure f = sum.times(0.5).widen(defects);
-        return Enclosure.of(f.lowerWide().timesPowerOfTwo(shift), f.upperWide().timesPowerOfTwo(shift));
+        Enclosure sum = scaled(entryTrace(a), -exponentA)
+                .times(x)
+                .plus(scaled(entryTrace(b), -exponentB).times(y))
+                .minus(norm.widen(error));
+        Enclosure defects = scaled(Enclosure.exact(a.entryDefect()), -exponentA)
+                .times(x)
+                .plus(scaled(Enclosure.exact(b.entryDefect()), -exponentB).times(y));
+        Enclosure f = sum.times(0.5).plus(defects.hull(defects.negate()));
+        return scaled(f, shift);
+    }
+
+    private static Enclosure scaled(Enclosure e, long power) {
+        return Enclosure.of(e.lowerWide().timesPowerOfTwo(power), e.upperWide().timesPowerOfTwo(power));
+    }
+
+    /** The exponent of two of the largest entry; 0 for the zero operator. */
+    private static int exponent(PositiveOperator p) {
+        return (int) WideDouble.of(largest(p)).exponent();
+    }
+
+    private static double largest(PositiveOperator p) {
+        double most = 0;
+        // of a positive operator the largest entry is on the diagonal, up to what rounding made of it
+        for (int i = 0; i < p.dimension(); i++) {
+            most = Math.max(most, Math.abs(p.re(i, i)));
+        }
+        return most;
     }
 
     /** The trace of the entries as stored, which is what the eigenvalues belong to. */

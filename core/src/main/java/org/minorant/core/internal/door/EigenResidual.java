@@ -1,14 +1,17 @@
 package org.minorant.core.internal.door;
 
-import org.minorant.core.internal.kernel.Products;
+import org.minorant.core.internal.kernel.Defects;
 
 /**
- * What a double eigendecomposition A ≈ VΛV* is worth, a posteriori: bounds on ‖AV − VΛ‖_F and ‖V*V − 1‖_F that include the
- * rounding of their own computation, with two matrix products.
+ * What a double eigendecomposition A ≈ VΛV* is worth, a posteriori: from bounds on R = AV − VΛ and on δ ≥ ‖V*V − 1‖_F that include the
+ * rounding of their own computation ({@link Defects}).
  *
- * <p><b>Argument.</b> Let ‖V*V − 1‖ ≤ δ &lt; ½ and V = Ũ(1 + Δ)^½ with Ũ unitary (polar form), so ‖V − Ũ‖ ≤ δ. From AV = VΛ + R follows
- * A = VΛV⁻¹ + RV⁻¹; with V⁻¹ = V* + D, ‖D‖ ≤ δ/√(1−δ), the Hermitian matrix A − ŨΛŨ* has Frobenius norm at most
- * (‖R‖_F + 2δ‖Λ‖_F)/√(1−δ), and the sum of all errors in trace norm is at most √n times that.
+ * <p><b>Argument.</b> Let δ &lt; ½ and V = ŨS with Ũ unitary and S = (V*V)^½ (polar form), so ‖S − 1‖_F ≤ δ and ‖S⁻¹‖ ≤ 1/√(1−δ). From
+ * A = VΛV⁻¹ + RV⁻¹ and VΛV⁻¹ = Ũ SΛS⁻¹ Ũ* follows A − ŨΛŨ* = Ũ((S−1)Λ − Λ(S−1))S⁻¹Ũ* + RV⁻¹, of Frobenius norm at most
+ *
+ * <pre>(‖R‖_F + 2δ max|Λ|)/√(1−δ);</pre>
+ *
+ * its trace norm is at most √n times that, and so is Σ|λ_i(A) − Λ_i| in any common order (Mirsky).
  */
 public final class EigenResidual {
 
@@ -24,79 +27,59 @@ public final class EigenResidual {
         this.defect = defect;
     }
 
-    /** Bounds the error of a decomposition of the n × n matrix (are, aim), row-major; an empty imaginary part means real. */
+    /**
+     * Bounds the error of a decomposition.
+     *
+     * @param n the dimension
+     * @param are real parts of the matrix, row-major
+     * @param aim imaginary parts, row-major; empty for a real matrix
+     * @param e a decomposition of that matrix
+     * @return its error
+     * @throws ArithmeticException if the vectors are not nearly orthonormal
+     */
     public static EigenResidual of(int n, double[] are, double[] aim, HermitianEigen e) {
-        double[] vre = e.vectorsRe();
-        double[] vim = e.vectorsIm();
-        double[] lambda = e.values();
-        double[] pr = new double[n * n];
-        double[] pi = new double[n * n];
-        Products.multiply(n, n, n, are, aim, vre, vim, pr, pi);
-        double residual = 0;
-        double values = 0;
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j < n; j++) {
-                double x = pr[i * n + j] - vre[i * n + j] * lambda[j];
-                double y = pi[i * n + j] - vim[i * n + j] * lambda[j];
-                residual += x * x + y * y;
-            }
-            values += lambda[i] * lambda[i];
+        if (n != e.dimension() || (aim.length == 0) != (e.rowsIm().length == 0)) {
+            throw new IllegalArgumentException("the decomposition belongs to another matrix");
         }
-        double normA = frobenius(are, aim);
-        double normV = frobenius(vre, vim);
-        // rounding of the product: γ ‖|A||V|‖_F ≤ γ ‖A‖_F ‖V‖_F, of the differences: 3u ‖V‖_F max|Λ|
-        double gamma = 4 * (n + 4) * U;
-        residual = Math.sqrt(residual) + gamma * normA * normV + 4 * U * normV * Math.sqrt(values);
-        double[] tr = transpose(vre, n, 1);
-        double[] ti = transpose(vim, n, -1);
-        Products.multiply(n, n, n, tr, ti, vre, vim, pr, pi);
-        double defect = 0;
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j < n; j++) {
-                double x = pr[i * n + j] - (i == j ? 1 : 0);
-                defect += x * x + pi[i * n + j] * pi[i * n + j];
-            }
-        }
-        defect = Math.sqrt(defect) + gamma * normV * normV;
+        Scale s = Scale.of(n, are, aim);
+        double[] lambda = s.scaled(e.values());
+        double residual = Defects.residual(
+                (i, row) -> s.copyRow(are, i, row), (i, row) -> s.copyRow(aim, i, row), e.rowsRe(), e.rowsIm(), lambda);
+        double defect = Defects.orthonormality(e.rowsRe(), e.rowsIm());
         if (!(defect < 0.5)) {
             throw new ArithmeticException("the eigenvectors are not orthonormal: defect " + defect);
         }
-        double error = (residual + 2 * defect * Math.sqrt(values)) / Math.sqrt(1 - defect);
-        return new EigenResidual(lambda, error * Math.sqrt(n) * (1 + 8L * n * n * U) + 0x1p-1000, defect);
+        double most = 0;
+        for (double l : lambda) {
+            most = Math.max(most, Math.abs(l));
+        }
+        double error = (residual + 2 * defect * most) / Math.sqrt(1 - defect) * Math.sqrt(n) * (1 + 16 * U);
+        return new EigenResidual(e.values(), s.unscaleUp(error), defect);
     }
 
-    private static double frobenius(double[] re, double[] im) {
-        double s = 0;
-        for (double v : re) {
-            s += v * v;
-        }
-        for (double v : im) {
-            s += v * v;
-        }
-        return Math.sqrt(s);
-    }
-
-    private static double[] transpose(double[] a, int n, double sign) {
-        double[] t = new double[a.length];
-        for (int i = 0; i < n && a.length != 0; i++) {
-            for (int j = 0; j < n; j++) {
-                t[j * n + i] = sign * a[i * n + j];
-            }
-        }
-        return t;
-    }
-
-    /** A bound on ‖V*V − 1‖, and so on ‖V − Ũ‖. */
+    /**
+     * Returns a bound on ‖V*V − 1‖_F, and so on ‖V − Ũ‖_F.
+     *
+     * @return the defect of orthonormality
+     */
     public double defect() {
         return defect;
     }
 
-    /** A bound on the trace norm of A − ŨΛŨ*. */
+    /**
+     * Returns a bound on the trace norm of A − ŨΛŨ*.
+     *
+     * @return the bound, possibly infinite if it exceeds the largest double
+     */
     public double traceError() {
         return traceError;
     }
 
-    /** An upper end of the trace of the negative part of A. */
+    /**
+     * Returns an upper end of the trace of the negative part of A.
+     *
+     * @return the bound
+     */
     public double negativeTraceUpper() {
         double s = 0;
         for (double v : values) {
