@@ -7,11 +7,12 @@ import org.minorant.core.internal.kernel.Defects;
  * rounding of their own computation ({@link Defects}).
  *
  * <p><b>Argument.</b> Let δ &lt; ½ and V = ŨS with Ũ unitary and S = (V*V)^½ (polar form), so ‖S − 1‖_F ≤ δ and ‖S⁻¹‖ ≤ 1/√(1−δ). From
- * A = VΛV⁻¹ + RV⁻¹ and VΛV⁻¹ = Ũ SΛS⁻¹ Ũ* follows A − ŨΛŨ* = Ũ((S−1)Λ − Λ(S−1))S⁻¹Ũ* + RV⁻¹, of Frobenius norm at most
+ * A = VΛV⁻¹ + RV⁻¹ and VΛV⁻¹ = Ũ SΛS⁻¹ Ũ* follows A − ŨΛŨ* = Ũ((S−1)Λ − Λ(S−1))S⁻¹Ũ* + RV⁻¹. Since ‖XY‖₁ ≤ ‖X‖_F ‖Y‖_F and ‖R‖₁ ≤ √n ‖R‖_F,
+ * its trace norm is at most
  *
- * <pre>(‖R‖_F + 2δ max|Λ|)/√(1−δ);</pre>
+ * <pre>(√n ‖R‖_F + 2δ ‖Λ‖_F)/√(1−δ),</pre>
  *
- * its trace norm is at most √n times that, and so is Σ|λ_i(A) − Λ_i| in any common order (Mirsky).
+ * and so is Σ|λ_i(A) − Λ_i| with both in ascending order (Mirsky).
  */
 public final class EigenResidual {
 
@@ -49,11 +50,12 @@ public final class EigenResidual {
         if (!(defect < 0.5)) {
             throw new ArithmeticException("the eigenvectors are not orthonormal: defect " + defect);
         }
-        double most = 0;
+        double norm = 0;
         for (double l : lambda) {
-            most = Math.max(most, Math.abs(l));
+            norm += l * l;
         }
-        double error = (residual + 2 * defect * most) / Math.sqrt(1 - defect) * Math.sqrt(n) * (1 + 16 * U);
+        norm = Math.sqrt(norm) * (1 + n * U) + 0x1p-500;
+        double error = (Math.sqrt(n) * residual + 2 * defect * norm) / Math.sqrt(1 - defect) * (1 + 16 * U);
         return new EigenResidual(e.values(), s.unscaleUp(error), defect);
     }
 
