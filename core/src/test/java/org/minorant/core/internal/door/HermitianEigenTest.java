@@ -89,12 +89,15 @@ class HermitianEigenTest {
                 }
             }
             // subnormal entries keep few digits, but they are digits of this matrix
-            Flat c = a.scaled(-1040);
-            HermitianEigen f = HermitianEigen.of(n, c.re(), c.im());
-            Flat back = c.scaled(1000).scaled(40);
-            HermitianEigen g = HermitianEigen.of(n, back.re(), back.im());
-            for (int i = 0; i < n; i++) {
-                assertEquals(Math.scalb(g.values()[i], -1040), f.values()[i]);
+            for (int power : new int[] {-1040, -1070}) {
+                Flat c = a.scaled(power);
+                HermitianEigen f = HermitianEigen.of(n, c.re(), c.im());
+                Flat back = c.scaled(1000).scaled(-power - 1000);
+                HermitianEigen g = HermitianEigen.of(n, back.re(), back.im());
+                assertArrayEquals(g.vectorsRe(), f.vectorsRe(), "2^" + power);
+                for (int i = 0; i < n; i++) {
+                    assertEquals(Math.scalb(g.values()[i], power), f.values()[i]);
+                }
             }
         }
     }
