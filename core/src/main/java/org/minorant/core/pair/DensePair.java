@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.Optional;
 import org.minorant.core.Enclosure;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
@@ -21,6 +22,9 @@ final class DensePair extends PositivePair {
     private final PositiveOperator b;
     private final int exponentA;
     private final int exponentB;
+    /** Exact phases that make both operators real; a real problem costs a quarter. */
+    private final Optional<QuarterTurns> turns;
+
     private final Refinement refinement;
 
     DensePair(PositiveOperator a, PositiveOperator b) {
@@ -28,6 +32,7 @@ final class DensePair extends PositivePair {
         this.b = b;
         this.exponentA = exponent(a);
         this.exponentB = exponent(b);
+        this.turns = QuarterTurns.find(a, b);
         this.refinement = new Refinement(a, b);
     }
 
@@ -47,7 +52,8 @@ final class DensePair extends PositivePair {
         double y = WideDouble.of(wb.significand(), eb - shift).toDoubleDown();
         int n = a.dimension();
         double[] re = new double[n * n];
-        double[] im = a.isReal() && b.isReal() ? new double[0] : new double[n * n];
+        boolean real = a.isReal() && b.isReal();
+        double[] im = real || turns.isPresent() ? new double[0] : new double[n * n];
         double size = 0;
         // in two steps, as the power itself may be out of range
         double halfA = Math.scalb(1.0, -exponentA / 2);
@@ -58,14 +64,19 @@ final class DensePair extends PositivePair {
             for (int j = 0; j < n; j++) {
                 double p = x * (a.re(i, j) * halfA * restA);
                 double q = y * (b.re(i, j) * halfB * restB);
-                re[i * n + j] = p - q;
                 size += p * p + q * q;
-                if (im.length != 0) {
+                double difference = p - q;
+                if (!real) {
                     double r = x * (a.im(i, j) * halfA * restA);
                     double s = y * (b.im(i, j) * halfB * restB);
-                    im[i * n + j] = r - s;
                     size += r * r + s * s;
+                    if (turns.isPresent()) {
+                        difference = turns.get().entry(i, j, difference, r - s);
+                    } else {
+                        im[i * n + j] = r - s;
+                    }
                 }
+                re[i * n + j] = difference;
             }
         }
         // two products and a difference: at most 2u(|p| + |q|) in each entry, ≤ 2√2·u·√(p²+q²); trace norm ≤ √n ·
