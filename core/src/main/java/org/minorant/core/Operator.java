@@ -34,8 +34,16 @@ public sealed class Operator permits HermitianOperator {
     Operator(int rows, int columns, double[] re, double[] im) {
         this.rows = rows;
         this.columns = columns;
-        this.re = re;
-        this.im = im.length == 0 || isZero(im) ? new double[0] : im;
+        this.re = withoutNegativeZeros(re);
+        this.im = im.length == 0 || isZero(im) ? new double[0] : withoutNegativeZeros(im);
+    }
+
+    /** Zeros have one sign, so that equal operators have equal bits, also after the adjoint or a file. */
+    private static double[] withoutNegativeZeros(double[] a) {
+        for (int i = 0; i < a.length; i++) {
+            a[i] += 0.0;
+        }
+        return a;
     }
 
     private static boolean isZero(double[] a) {
