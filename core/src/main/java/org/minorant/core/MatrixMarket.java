@@ -20,22 +20,23 @@ import org.minorant.core.internal.file.MatrixMarketWriter;
  * 0.5 0
  * </pre>
  *
- * <p><b>Accepted.</b> Layout array or coordinate; field real, complex, integer (whole numbers up to 2^53) or, in the coordinate layout, pattern
- * (every listed entry is one); symmetry general, symmetric, skew-symmetric or hermitian. The banner may be in any case. Comments stand between the
- * banner and the size line, blank lines anywhere after the banner. Indices start at 1. One entry on each line, lines of at most 1024 characters.
- * Symmetric storage lists the lower triangle (row at least column) only, and the diagonal of a hermitian matrix is real.
+ * <p><b>Accepted.</b> Layout array or coordinate; field real, complex, integer (whole numbers up to 2^53) or, in the coordinate layout,
+ * pattern (every listed entry is one); symmetry general, symmetric, skew-symmetric or hermitian. The banner may be in any case. Comments
+ * stand between the banner and the size line, blank lines anywhere after the banner. Indices start at 1. One entry on each line, lines of
+ * at most 1024 characters. Symmetric storage lists the lower triangle (row at least column) only, and the diagonal of a hermitian matrix is
+ * real.
  *
- * <p><b>Refused</b>, with the line: everything else, and in particular entries in the upper triangle of symmetric storage; an entry listed twice;
- * NaN, infinity, and numbers too large for a double; text after the last entry. A number is rounded to the nearest double.
+ * <p><b>Refused</b>, with the line: everything else, and in particular entries in the upper triangle of symmetric storage; an entry listed
+ * twice; NaN, infinity, and numbers too large for a double; text after the last entry. A number is rounded to the nearest double.
  *
  * <p><b>Memory.</b> What the file declares is compared with its length before anything is allocated. A coordinate file may declare up to 2^24
  * entries (dimension 4096), more only if an eighth of them are listed. A matrix of which four copies do not fit in the heap is refused.
  *
- * <p><b>Written</b> files read back to the same bits: each number has the fewest of 15, 16 or 17 digits that do. A state that was given by a ket or a
- * factor is written by its entries, which are a rounded copy of it; a ket can be written as a matrix of one column instead.
+ * <p><b>Written</b> files read back to the same bits: each number has the fewest of 15, 16 or 17 digits that do. A state that was given by
+ * a ket or a factor is written by its entries, which are a rounded copy of it; a ket can be written as a matrix of one column instead.
  *
- * <p>Stateless and thread-safe. Source: R. F. Boisvert, R. Pozo, K. A. Remington, The Matrix Market exchange formats: initial design, NISTIR 5935
- * (1996), from memory.
+ * <p>Stateless and thread-safe. Source: R. F. Boisvert, R. Pozo, K. A. Remington, The Matrix Market exchange formats: initial design,
+ * NISTIR 5935 (1996), from memory.
  */
 public final class MatrixMarket {
 
@@ -84,8 +85,8 @@ public final class MatrixMarket {
      *
      * @param path the file
      * @return the state
-     * @throws InvalidInputException if the file is refused, or as {@link DensityOperator#of(Operator)} or {@link DensityOperator#ofKet(double[],
-     *     double[])}
+     * @throws InvalidInputException if the file is refused, or as {@link DensityOperator#of(Operator)} or {@link
+     *     DensityOperator#ofKet(double[], double[])}
      * @throws IOException if the file cannot be read
      */
     public static DensityOperator readDensityOperator(Path path) throws IOException {
@@ -93,8 +94,8 @@ public final class MatrixMarket {
     }
 
     /**
-     * Writes an operator in the array layout, replacing the file. The field is real or complex, the symmetry symmetric or hermitian if the operator
-     * is {@link HermitianOperator} by type, general otherwise.
+     * Writes an operator in the array layout, replacing the file. The field is real or complex, the symmetry symmetric or hermitian if the
+     * operator is {@link HermitianOperator} by type, general otherwise.
      *
      * @param path the file
      * @param a the operator

@@ -10,21 +10,23 @@ import org.minorant.core.internal.file.NpyFormat;
 /**
  * Operators in the {@code .npy} format, an open binary format for one array.
  *
- * <p><b>Accepted.</b> Versions 1.0, 2.0 and 3.0; types {@code <f8}, {@code >f8}, {@code <c16} and {@code >c16} (float64 and complex128 in either
- * byte order); row-major and column-major order; two dimensions, or one, which makes a matrix of one column. The header must be exactly the
- * dictionary of {@code descr}, {@code fortran_order} and {@code shape}, then spaces and a line feed, at most 64 KiB; it is parsed, never evaluated.
+ * <p><b>Accepted.</b> Versions 1.0, 2.0 and 3.0; types {@code <f8}, {@code >f8}, {@code <c16} and {@code >c16} (float64 and complex128 in
+ * either byte order); row-major and column-major order; two dimensions, or one, which makes a matrix of one column. The header must be
+ * exactly the dictionary of {@code descr}, {@code fortran_order} and {@code shape}, then spaces and a line feed, at most 64 KiB; it is
+ * parsed, never evaluated.
  *
- * <p><b>Refused</b>, with the byte counted from 0: everything else, and in particular other types, empty arrays, NaN and infinities, and a file that is
- * longer or shorter than its header declares.
+ * <p><b>Refused</b>, with the byte counted from 0: everything else, and in particular other types, empty arrays, NaN and infinities, and a
+ * file that is longer or shorter than its header declares.
  *
- * <p><b>Memory.</b> The declared shape is compared with the length of the file before anything is allocated. A matrix of which four copies do not fit in
- * the heap is refused.
+ * <p><b>Memory.</b> The declared shape is compared with the length of the file before anything is allocated. A matrix of which four copies
+ * do not fit in the heap is refused.
  *
- * <p><b>Written</b> files are version 1.0 (the others are for headers above 64 KiB and for field names), row-major, little-endian, and read back to the
- * same bits. A state that was given by a ket or a factor is written by its entries, which are a rounded copy of it; a ket can be written as a matrix
- * of one column instead.
+ * <p><b>Written</b> files are version 1.0 (the others are for headers above 64 KiB and for field names), row-major, little-endian, and read
+ * back to the same bits. A state that was given by a ket or a factor is written by its entries, which are a rounded copy of it; a ket can
+ * be written as a matrix of one column instead.
  *
- * <p>Stateless and thread-safe. Source: R. Kern, A simple file format for NumPy arrays, NEP 1 (2007), and its later text on versions 2 and 3, from memory.
+ * <p>Stateless and thread-safe. Source: R. Kern, A simple file format for NumPy arrays, NEP 1 (2007), and its later text on versions 2 and
+ * 3, from memory.
  */
 public final class NumpyFile {
 
@@ -73,8 +75,8 @@ public final class NumpyFile {
      *
      * @param path the file
      * @return the state
-     * @throws InvalidInputException if the file is refused, or as {@link DensityOperator#of(Operator)} or {@link DensityOperator#ofKet(double[],
-     *     double[])}
+     * @throws InvalidInputException if the file is refused, or as {@link DensityOperator#of(Operator)} or {@link
+     *     DensityOperator#ofKet(double[], double[])}
      * @throws IOException if the file cannot be read
      */
     public static DensityOperator readDensityOperator(Path path) throws IOException {

@@ -8,9 +8,9 @@ import java.util.regex.Pattern;
 /**
  * Doubles as decimal text, both ways.
  *
- * <p>Written with the fewest of 15, 16 or 17 significant digits that read back to the same bits; the text does not depend on the version of the
- * platform, as that of {@link Double#toString(double)} does. Read as {@link Double#parseDouble} does, rounded to nearest, but only what a file may
- * hold: no NaN, infinity, hexadecimal or type suffix.
+ * <p>Written with the fewest of 15, 16 or 17 significant digits that read back to the same bits; the text does not depend on the version of
+ * the platform, as that of {@link Double#toString(double)} does. Read as {@link Double#parseDouble} does, rounded to nearest, but only what
+ * a file may hold: no NaN, infinity, hexadecimal or type suffix.
  */
 final class Decimal {
 

@@ -61,8 +61,8 @@ public record FileSource(String asked) {
     }
 
     /**
-     * The largest number of entries that may be held: complex entries take 16 bytes, and an operator is copied up to three times on its way to a
-     * state.
+     * The largest number of entries that may be held: complex entries take 16 bytes, and an operator is copied up to three times on its way
+     * to a state.
      */
     public static long entriesThatFit() {
         return Math.min(Runtime.getRuntime().maxMemory() / 64, Integer.MAX_VALUE - 8L);

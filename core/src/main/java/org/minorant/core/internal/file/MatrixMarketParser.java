@@ -17,8 +17,8 @@ import org.minorant.core.internal.file.MatrixMarketHeader.Symmetry;
 public final class MatrixMarketParser {
 
     /**
-     * A coordinate file can declare a matrix far larger than itself. Up to this many entries (dimension 4096) it is believed; beyond, the entries
-     * listed must make up an eighth of the matrix.
+     * A coordinate file can declare a matrix far larger than itself. Up to this many entries (dimension 4096) it is believed; beyond, the
+     * entries listed must make up an eighth of the matrix.
      */
     private static final long SPARSE_ENTRIES = 1L << 24;
 

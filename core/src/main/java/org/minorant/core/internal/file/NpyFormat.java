@@ -11,7 +11,8 @@ import org.minorant.core.Operator;
 /**
  * The {@code .npy} format, both ways: six bytes of magic, two of version, the length of the header, the header, the numbers.
  *
- * <p>Source of the format: R. Kern, A simple file format for NumPy arrays, NEP 1 (2007), and the versions 2 and 3 in its later text, from memory.
+ * <p>Source of the format: R. Kern, A simple file format for NumPy arrays, NEP 1 (2007), and the versions 2 and 3 in its later text, from
+ * memory.
  */
 public final class NpyFormat {
 

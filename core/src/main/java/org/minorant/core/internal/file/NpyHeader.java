@@ -6,8 +6,8 @@ import java.util.List;
 import org.minorant.core.InvalidInputException;
 
 /**
- * The header of a {@code .npy} file: a Python dictionary literal with the keys {@code descr}, {@code fortran_order} and {@code shape}, each once,
- * in any order. Read by hand, character by character; nothing is evaluated.
+ * The header of a {@code .npy} file: a Python dictionary literal with the keys {@code descr}, {@code fortran_order} and {@code shape}, each
+ * once, in any order. Read by hand, character by character; nothing is evaluated.
  *
  * @param order the byte order of the numbers
  * @param complex whether each entry is two numbers, real and imaginary part

@@ -14,7 +14,9 @@ public final class Checks {
             throw new InvalidInputException(
                     asked, "the shape is " + rows + " x " + columns, "at least 1 x 1", "give at least one entry");
         }
-        long bytes = 16L * rows * columns;
+        long entries = (long) rows * columns;
+        // saturates: sixteen times the largest shape does not fit in a long
+        long bytes = entries > Long.MAX_VALUE / 16 ? Long.MAX_VALUE : 16 * entries;
         long limit = Math.min(Runtime.getRuntime().maxMemory(), 16L * Integer.MAX_VALUE);
         if (bytes > limit) {
             throw new InvalidInputException(
