@@ -445,7 +445,7 @@ public final class EnclosedMatrix {
                 }
                 double r = f * radius[i][j] + loss * f * modulus(rh[i][j], im(i, j));
                 // an exact zero stays one; otherwise the trailing part may be lost in gradual underflow
-                c.radius[i][j] = r * UP + (factor == 0 || r == 0 && x.hi() == 0 && im(i, j) == 0 ? 0 : 0x1p-1068);
+                c.radius[i][j] = r * UP + (factor == 0 || r == 0 && rh[i][j] == 0 && im(i, j) == 0 ? 0 : 0x1p-1068);
             }
         }
         return c.build();

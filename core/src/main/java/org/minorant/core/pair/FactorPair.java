@@ -28,6 +28,10 @@ final class FactorPair extends PositivePair {
     private final EnclosedMatrix x;
 
     private final EnclosedMatrix y;
+    /** A is 2^powerA times what x, gx and traceErrorA describe, so that these are on the scale of one; B likewise. */
+    private final int powerA;
+
+    private final int powerB;
     private final double relativeError;
     private final double traceErrorA;
     private final double traceErrorB;
@@ -66,31 +70,41 @@ final class FactorPair extends PositivePair {
 
     private FactorPair(PositiveFactor first, PositiveFactor second, Optional<DensePair> entries) {
         this.entries = entries;
-        this.x = first.columns();
-        this.y = second.columns();
+        UnitFactor a = UnitFactor.of(first);
+        UnitFactor b = UnitFactor.of(second);
+        this.x = a.columns();
+        this.y = b.columns();
+        this.powerA = a.power();
+        this.powerB = b.power();
         this.gx = x.adjoint().times(x);
         this.gy = y.adjoint().times(y);
         this.cross = crossProducts(x, y);
-        this.relativeError = Math.max(first.relativeError(), second.relativeError());
-        this.traceErrorA = first.traceError();
-        this.traceErrorB = second.traceError();
-        this.traceA = withErrors(gx.traceRe(), first.relativeError(), traceErrorA);
-        this.traceB = withErrors(gy.traceRe(), second.relativeError(), traceErrorB);
+        this.relativeError = Math.max(a.relativeError(), b.relativeError());
+        this.traceErrorA = a.traceError();
+        this.traceErrorB = b.traceError();
+        this.traceA = withErrors(gx.traceRe(), a.relativeError(), traceErrorA);
+        this.traceB = withErrors(gy.traceRe(), b.relativeError(), traceErrorB);
     }
 
     private FactorPair(EnclosedMatrix z, EnclosedMatrix gram, int k, double traceErrorA, double traceErrorB) {
         int r = gram.rows();
         this.entries = Optional.empty();
-        this.x = block(z, 0, z.rows(), 0, k);
-        this.y = block(z, 0, z.rows(), k, r);
-        this.gx = block(gram, 0, k, 0, k);
-        this.gy = block(gram, k, r, k, r);
-        this.cross = block(gram, 0, k, k, r);
+        EnclosedMatrix first = block(z, 0, z.rows(), 0, k);
+        EnclosedMatrix second = block(z, 0, z.rows(), k, r);
+        int ea = UnitFactor.exponent(first);
+        int eb = UnitFactor.exponent(second);
+        this.powerA = 2 * ea;
+        this.powerB = 2 * eb;
+        this.x = UnitFactor.scale(first, -ea).midpoint();
+        this.y = UnitFactor.scale(second, -eb).midpoint();
+        this.gx = UnitFactor.scale(block(gram, 0, k, 0, k), -powerA);
+        this.gy = UnitFactor.scale(block(gram, k, r, k, r), -powerB);
+        this.cross = UnitFactor.scale(block(gram, 0, k, k, r), -ea - eb);
         this.relativeError = 0;
-        this.traceErrorA = traceErrorA;
-        this.traceErrorB = traceErrorB;
-        this.traceA = withErrors(gx.traceRe(), 0, traceErrorA);
-        this.traceB = withErrors(gy.traceRe(), 0, traceErrorB);
+        this.traceErrorA = Math.scalb(traceErrorA, -powerA) + (traceErrorA == 0 ? 0 : Double.MIN_VALUE);
+        this.traceErrorB = Math.scalb(traceErrorB, -powerB) + (traceErrorB == 0 ? 0 : Double.MIN_VALUE);
+        this.traceA = withErrors(gx.traceRe(), 0, this.traceErrorA);
+        this.traceB = withErrors(gy.traceRe(), 0, this.traceErrorB);
     }
 
     /**
@@ -176,7 +190,9 @@ final class FactorPair extends PositivePair {
     }
 
     @Override
-    Enclosure value(WideDouble a, WideDouble b) {
+    Enclosure value(WideDouble weightA, WideDouble weightB) {
+        WideDouble a = weightA.timesPowerOfTwo(powerA);
+        WideDouble b = weightB.timesPowerOfTwo(powerB);
         long shift = centre(a, b);
         WideDouble wa = a.timesPowerOfTwo(-shift);
         WideDouble wb = b.timesPowerOfTwo(-shift);
@@ -203,7 +219,12 @@ final class FactorPair extends PositivePair {
                 relative.upperWide().plusUp(errors.upperWide()));
         Enclosure result = Enclosure.of(scaled(all.lowerWide(), shift), scaled(all.upperWide(), shift));
         boolean wide = !(result.relativeWidth() <= Refinement.NARROW);
-        return wide && entries.isPresent() ? result.intersect(entries.get().fromEigenvalues(a, b)) : result;
+        return wide && entries.isPresent() ? result.intersect(entries.get().fromEigenvalues(weightA, weightB)) : result;
+    }
+
+    private static Enclosure unscaled(Enclosure trace, int power) {
+        return Enclosure.of(
+                trace.lowerWide().timesPowerOfTwo(power), trace.upperWide().timesPowerOfTwo(power));
     }
 
     private static WideDouble scaled(WideDouble x, long shift) {
@@ -252,12 +273,12 @@ final class FactorPair extends PositivePair {
 
     @Override
     public Enclosure firstTrace() {
-        return traceA;
+        return unscaled(traceA, powerA);
     }
 
     @Override
     public Enclosure secondTrace() {
-        return traceB;
+        return unscaled(traceB, powerB);
     }
 
     @Override
