@@ -7,8 +7,12 @@ import org.minorant.core.internal.number.DoubleDouble;
  * The factor of a qubit state given by its Bloch vector: Cholesky of [[a, c̄], [c, b]] with a = (1+z)/2, b = (1−z)/2, c = (x+iy)/2 and
  * det = (1 − x² − y² − z²)/4 evaluated exactly.
  *
- * <p><b>Error.</b> Each entry of L has relative error at most 2^-99. With L̂ = L(1 + Ξ), |Ξ₂₁| ≤ 2^-98 |c|/√(a·det/a) ≤ 2^-99/√det, so the
- * relative error in the Loewner order is at most 3‖Ξ‖ ≤ 2^-96/√det.
+ * <p><b>Error.</b> Each entry of L has relative error at most 2^-99. With L̂ = L(1 + Ξ), |Ξ₂₁| ≤ 2^-98 |c|/√det ≤ 2^-99/√det and ‖Ξ‖ ≤ 2^-98/√det, so the
+ * relative error in the Loewner order is at most 2‖Ξ‖ + ‖Ξ‖² ≤ 2^-96/√det.
+ *
+ * <p><b>Pure states.</b> x² + y² + z² = 1 holds exactly for dyadic numbers on the axes only (squares are 0 or 1 modulo 4, so a common denominator
+ * can always be halved); the direction of their kets is exact. A vector longer than one has a direction that is rounded, which is no relative error: see
+ * {@link FactorRounding}.
  */
 final class BlochState {
 
@@ -26,23 +30,35 @@ final class BlochState {
         BigDecimal zz = new BigDecimal(z);
         DoubleDouble up = DoubleDouble.of(one.add(zz).multiply(half));
         DoubleDouble down = DoubleDouble.of(one.subtract(zz).multiply(half));
+        if (square.compareTo(one) == 0) {
+            return PositiveOperator.ofFactor(axis(x, y, z));
+        }
         boolean upper = z >= 0;
         DoubleDouble root = (upper ? up : down).sqrt();
         DoubleDouble cr = DoubleDouble.of(x / 2).dividedBy(root);
         DoubleDouble ci = DoubleDouble.of(y / 2).dividedBy(root);
-        EnclosedMatrix.Builder b = EnclosedMatrix.builder(2, det.hi() > 0 ? 2 : 1);
+        EnclosedMatrix.Builder b = EnclosedMatrix.builder(2, 2);
         int p = upper ? 0 : 1;
         int q = 1 - p;
         double sign = upper ? 1 : -1;
         b.set(p, 0, root.hi(), root.lo(), 0, 0, 0);
         b.set(q, 0, cr.hi(), cr.lo(), sign * ci.hi(), sign * ci.lo(), 0);
-        double error = 0x1p-98;
-        if (det.hi() > 0) {
-            DoubleDouble rest = det.sqrt().dividedBy(root);
-            b.set(q, 1, rest.hi(), rest.lo(), 0, 0, 0);
-            error = 0x1p-96 / Math.sqrt(det.hi());
-        }
+        DoubleDouble rest = det.sqrt().dividedBy(root);
+        b.set(q, 1, rest.hi(), rest.lo(), 0, 0, 0);
+        double error = 0x1p-96 / Math.sqrt(det.hi());
         return PositiveOperator.ofFactor(new PositiveFactor(b.build(), error, 0));
+    }
+
+    /** The eigenstates of the Pauli operators: (1, 0), (0, 1) or √½ (1, x + iy), where only the length is rounded. */
+    private static PositiveFactor axis(double x, double y, double z) {
+        EnclosedMatrix.Builder b = EnclosedMatrix.builder(2, 1);
+        if (z != 0) {
+            return new PositiveFactor(b.set(z > 0 ? 0 : 1, 0, 1, 0, 0, 0, 0).build(), 0, 0);
+        }
+        DoubleDouble s = DoubleDouble.of(0.5).sqrt();
+        b.set(0, 0, s.hi(), s.lo(), 0, 0, 0);
+        b.set(1, 0, x * s.hi(), x * s.lo(), y * s.hi(), y * s.lo(), 0);
+        return new PositiveFactor(b.build(), 0x1p-100, 0);
     }
 
     private static BigDecimal square(double v) {
@@ -72,6 +88,6 @@ final class BlochState {
         EnclosedMatrix.Builder b = EnclosedMatrix.builder(2, 1);
         b.set(upper ? 0 : 1, 0, a.hi(), a.lo(), 0, 0, 0);
         b.set(upper ? 1 : 0, 0, cr.hi(), cr.lo(), ci.hi(), ci.lo(), 0);
-        return PositiveOperator.ofFactor(new PositiveFactor(b.build(), 0x1p-96, 0));
+        return PositiveOperator.ofFactor(FactorRounding.entrywise(b.build(), 0x1p-98));
     }
 }

@@ -34,8 +34,10 @@ final class Compression {
                 }
             }
         }
-        // compressing does not increase the trace norm
-        if (!a.isDefinedByFactor()) {
+        // compressing does not increase the trace norm; the positive part of a block is the block of the positive part
+        // only if
+        // nothing was cut off or the block does not interact with the rest
+        if (!a.isDefinedByFactor() && (a.entryDefect() == 0 || isBlock(a, keep))) {
             return new PositiveOperator(m, re, im, a.entryDefect());
         }
         OptionalInt columns = a.knownColumns().isEmpty()
@@ -43,6 +45,21 @@ final class Compression {
                 : OptionalInt.of(rows(a.factor(), keep).rank());
         return new PositiveOperator(
                 m, re, im, a.entryDefect(), FactorSource.later(() -> rows(a.factor(), keep), columns));
+    }
+
+    private static boolean isBlock(PositiveOperator a, int[] keep) {
+        boolean[] kept = new boolean[a.rows()];
+        for (int i : keep) {
+            kept[i] = true;
+        }
+        for (int i : keep) {
+            for (int j = 0; j < a.rows(); j++) {
+                if (!kept[j] && (a.re(i, j) != 0 || a.im(i, j) != 0)) {
+                    return false;
+                }
+            }
+        }
+        return true;
     }
 
     /** The chosen rows of a factor, without the columns that vanish there. */

@@ -184,4 +184,53 @@ public final class DensityOperator extends PositiveOperator {
         }
         return new DensityOperator(sum);
     }
+
+    /** Takes over a positive operator that is a state by a theorem; rounding of its trace is not refused. */
+    static DensityOperator trusted(PositiveOperator p) {
+        return p instanceof DensityOperator d ? d : new DensityOperator(p);
+    }
+
+    /**
+     * Returns the nearest state in Hilbert–Schmidt norm: see {@link StateRepair#NEAREST}.
+     *
+     * @param a a square operator
+     * @return the state, given by its factor, and what was repaired
+     * @throws InvalidInputException if the operator is not square
+     */
+    public static Repaired<DensityOperator> nearest(Operator a) {
+        return nearest(a, StateRepair.NEAREST);
+    }
+
+    /**
+     * Returns a state near an operator.
+     *
+     * @param a a square operator
+     * @param how what is done to the spectrum of its Hermitian part
+     * @return the state, given by its factor, and what was repaired
+     * @throws InvalidInputException if the operator is not square or, where its positive part is to be normalised, has none
+     */
+    public static Repaired<DensityOperator> nearest(Operator a, StateRepair how) {
+        return Repairs.state(a, how);
+    }
+
+    /**
+     * Returns the product state.
+     *
+     * @param other the state of the second system
+     * @return this ⊗ other, with the factor of {@link PositiveOperator#tensor}
+     * @throws InvalidInputException as {@link Operator#tensor}
+     */
+    public DensityOperator tensor(DensityOperator other) {
+        return new DensityOperator(super.tensor((PositiveOperator) other));
+    }
+
+    @Override
+    public DensityOperator conjugate() {
+        return new DensityOperator(super.conjugate());
+    }
+
+    @Override
+    public DensityOperator transpose() {
+        return conjugate();
+    }
 }

@@ -1,5 +1,6 @@
 package org.minorant.core;
 
+import java.util.Optional;
 import org.minorant.core.internal.number.DoubleDouble;
 
 /**
@@ -22,22 +23,22 @@ final class FactorOfEntries {
         if (Positivity.isDiagonal(a)) {
             return diagonal(a);
         }
-        ScaledCholesky c = ScaledCholesky.of(EnclosedMatrix.of(a));
-        if (c.relativeError() <= WORTH) {
-            return new PositiveFactor(c.factor(), c.relativeError(), 0);
-        }
-        return spectral(a);
+        return square(EnclosedMatrix.of(a), 0, 0).orElseGet(() -> spectral(a));
     }
 
     /** A square factor of XX*, or the given one if that would cost relative accuracy. */
     static PositiveFactor reduced(PositiveFactor f) {
         EnclosedMatrix x = f.columns();
-        ScaledCholesky c = ScaledCholesky.of(x.times(x.adjoint()));
-        if (!(c.relativeError() <= WORTH)) {
-            return f;
-        }
-        double relative = (f.relativeError() + c.relativeError()) * (1 + 0x1p-40);
-        return new PositiveFactor(c.factor(), relative, f.traceError());
+        return square(x.times(x.adjoint()), f.relativeError(), f.traceError()).orElse(f);
+    }
+
+    /** A square factor of an operator within the given errors of an enclosed matrix, if that keeps relative accuracy. */
+    static Optional<PositiveFactor> square(EnclosedMatrix a, double relativeError, double traceError) {
+        ScaledCholesky c = ScaledCholesky.of(a);
+        return c.relativeError() <= WORTH
+                ? Optional.of(new PositiveFactor(
+                        c.factor(), FactorSums.combined(relativeError, c.relativeError()), traceError))
+                : Optional.empty();
     }
 
     private static PositiveFactor diagonal(PositiveOperator a) {
@@ -67,7 +68,44 @@ final class FactorOfEntries {
      * from ŨΛ₊Ũ* to XX* costs another 2.1 δ‖Λ‖_F and the rounding of X, at most 2^-98 Tr. The trace norm is √n times larger.
      */
     private static PositiveFactor spectral(PositiveOperator a) {
-        EnclosedSpectrum s = EnclosedSpectrum.of(a);
+        double most = 0;
+        for (int i = 0; i < a.rows(); i++) {
+            most = Math.max(most, Math.abs(a.re(i, i)));
+        }
+        // squares of eigenvalues neither over- nor underflow at order one; an even power of two, so that the factor
+        // follows exactly
+        int k = Math.getExponent(most) / 2;
+        int n = a.rows();
+        double[] re = scaled(a.realParts(), -2 * k);
+        double[] im = scaled(a.imaginaryParts(), -2 * k);
+        PositiveFactor f = spectralAtOrderOne(EnclosedSpectrum.of(new HermitianOperator(n, re, im)));
+        EnclosedMatrix x = f.columns();
+        EnclosedMatrix.Builder b = EnclosedMatrix.builder(n, f.rank());
+        for (int i = 0; i < n; i++) {
+            for (int j = 0; j < f.rank(); j++) {
+                b.set(
+                        i,
+                        j,
+                        Math.scalb(x.re(i, j), k),
+                        Math.scalb(x.reTail(i, j), k),
+                        Math.scalb(x.im(i, j), k),
+                        Math.scalb(x.imTail(i, j), k),
+                        0);
+            }
+        }
+        // what either scaling loses to underflow is below 2^-1000 of the largest entry
+        double error = (f.traceError() + 0x1p-900) * (1 + 0x1p-50);
+        return new PositiveFactor(b.build(), 0, Math.scalb(error, 2 * k) + Double.MIN_VALUE);
+    }
+
+    private static double[] scaled(double[] a, int e) {
+        for (int i = 0; i < a.length; i++) {
+            a[i] = Math.scalb(a[i], e);
+        }
+        return a;
+    }
+
+    private static PositiveFactor spectralAtOrderOne(EnclosedSpectrum s) {
         int n = s.dimension();
         int rank = 0;
         double norm = 0;

@@ -41,10 +41,6 @@ final class FactorSource {
         return columns;
     }
 
-    boolean isAtHand() {
-        return value != null;
-    }
-
     PositiveFactor get() {
         PositiveFactor f = value;
         if (f == null) {

@@ -14,9 +14,6 @@ import org.minorant.core.internal.number.DoubleDouble;
  */
 final class FactorSums {
 
-    /** Products of doubles above this are exact sums of two doubles. */
-    private static final double SAFE = 0x1p-900;
-
     private FactorSums() {}
 
     /** w·A for A given by its factor. */
@@ -51,33 +48,23 @@ final class FactorSums {
     /** 2^k s X, if every entry of it is an exact sum of two doubles. */
     private static Optional<EnclosedMatrix> exactly(EnclosedMatrix x, double s, int k) {
         EnclosedMatrix.Builder b = EnclosedMatrix.builder(x.rows(), x.columns());
-        boolean power = s == 1;
+        DoubleDouble root = DoubleDouble.of(s);
         for (int i = 0; i < x.rows(); i++) {
             for (int j = 0; j < x.columns(); j++) {
                 DoubleDouble re = new DoubleDouble(x.re(i, j), x.reTail(i, j));
                 DoubleDouble im = new DoubleDouble(x.im(i, j), x.imTail(i, j));
-                if (!power) {
-                    if (!isExact(re, s) || !isExact(im, s)) {
-                        return Optional.empty();
-                    }
-                    re = re.times(s);
-                    im = im.times(s);
+                if (!ExactProduct.isExact(re, root) || !ExactProduct.isExact(im, root)) {
+                    return Optional.empty();
                 }
-                if (!survives(re, k) || !survives(im, k)) {
+                re = re.times(s);
+                im = im.times(s);
+                if (!ExactProduct.survives(re, k) || !ExactProduct.survives(im, k)) {
                     return Optional.empty();
                 }
                 set(b, i, j, re, im, k);
             }
         }
         return Optional.of(b.build());
-    }
-
-    private static boolean isExact(DoubleDouble x, double s) {
-        return x.lo() == 0 && (x.hi() == 0 || Math.abs(x.hi() * s) >= SAFE);
-    }
-
-    private static boolean survives(DoubleDouble x, int k) {
-        return Math.scalb(Math.scalb(x.hi(), k), -k) == x.hi() && Math.scalb(Math.scalb(x.lo(), k), -k) == x.lo();
     }
 
     private static EnclosedMatrix product(EnclosedMatrix x, DoubleDouble s, int k) {

@@ -270,6 +270,107 @@ public sealed class Operator permits HermitianOperator {
     }
 
     /**
+     * Returns the product with a complex number.
+     *
+     * @param factor the number
+     * @return factor · this; each entry within √5 · 2^-53 of its modulus, relatively
+     * @throws InvalidInputException if a part of the factor is not finite or an entry overflows
+     */
+    public final Operator times(Complex factor) {
+        Checks.finite("Operator.times, factor", new double[] {factor.re(), factor.im()});
+        return TensorProducts.tensor(
+                "Operator.times", new Operator(1, 1, new double[] {factor.re()}, new double[] {factor.im()}), this);
+    }
+
+    /**
+     * Returns the negative, exactly.
+     *
+     * @return −this
+     */
+    public Operator negate() {
+        return new Operator(rows, columns, negated(re), negated(im));
+    }
+
+    static double[] negated(double[] a) {
+        double[] c = new double[a.length];
+        for (int i = 0; i < a.length; i++) {
+            c[i] = -a[i];
+        }
+        return c;
+    }
+
+    /**
+     * Returns the Kronecker product: entry (i·p + k, j·q + l) is a_ij b_kl for a p × q right factor. The result of two Hermitian operators, two
+     * positive ones or two states is again one, where both are so by static type.
+     *
+     * @param other the right factor; its indices run fastest
+     * @return this ⊗ other, each entry rounded as one complex product
+     * @throws InvalidInputException if the product is too large for memory, said before any is taken, or an entry overflows
+     */
+    public final Operator tensor(Operator other) {
+        return TensorProducts.tensor("Operator.tensor", this, other);
+    }
+
+    /**
+     * Returns the direct sum: both operators as blocks on the diagonal, exactly.
+     *
+     * @param other the lower right block
+     * @return this ⊕ other
+     * @throws InvalidInputException if the sum is too large for memory, said before any is taken
+     */
+    public final Operator directSum(Operator other) {
+        return TensorProducts.directSum("Operator.directSum", this, other);
+    }
+
+    /**
+     * Returns the transpose, exactly.
+     *
+     * @return the transpose, columns × rows
+     */
+    public Operator transpose() {
+        return adjoint().conjugate();
+    }
+
+    /**
+     * Returns the entrywise complex conjugate, exactly.
+     *
+     * @return the conjugate
+     */
+    public Operator conjugate() {
+        return new Operator(rows, columns, re.clone(), negated(im));
+    }
+
+    /**
+     * Returns the Hilbert–Schmidt norm √Tr A*A of the entries.
+     *
+     * @return an enclosure, of relative width about N · 2^-52 for N entries
+     */
+    public final Enclosure hilbertSchmidtNorm() {
+        return Norms.hilbertSchmidt(this);
+    }
+
+    /**
+     * Returns the trace norm of the entries, the sum of the singular values.
+     *
+     * @return an enclosure, of width about n² · 2^-50 · ‖A‖ from one Hermitian eigendecomposition; exact sums for diagonal operators
+     * @throws InvalidInputException if the operator is not Hermitian by type and the Hermitian operator of dimension rows + columns that stands for it is
+     *     too large for memory
+     */
+    public final Enclosure traceNorm() {
+        return Norms.trace(this);
+    }
+
+    /**
+     * Returns the operator norm of the entries, the largest singular value.
+     *
+     * @return an enclosure, of width about n² · 2^-50 · ‖A‖ from one Hermitian eigendecomposition; exact for diagonal operators
+     * @throws InvalidInputException as {@link #traceNorm()}
+     */
+    public final Enclosure operatorNorm() {
+        return Norms.operator(this);
+    }
+
+    /**
      * Returns the trace, the sum of the diagonal in order.
      *
      * @return the trace, within rows · 2^-53 · Σ|diagonal| of the exact sum

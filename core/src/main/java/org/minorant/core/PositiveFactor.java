@@ -62,4 +62,13 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
     public PositiveFactor reduced() {
         return rank() <= dimension() ? this : FactorOfEntries.reduced(this);
     }
+
+    /**
+     * Returns the trace of the operator.
+     *
+     * @return Tr XX* = Σ|x|², of relative width about 2^-52, widened by η and ν
+     */
+    public Enclosure trace() {
+        return FactorTrace.of(this);
+    }
 }

@@ -2,6 +2,7 @@ package org.minorant.core;
 
 import java.util.List;
 import java.util.OptionalInt;
+import java.util.function.DoubleUnaryOperator;
 import org.minorant.core.internal.message.Checks;
 
 /**
@@ -30,10 +31,16 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
 
     /** Takes over validated arrays that are a rounded copy of what the factor describes. */
     PositiveOperator(int n, double[] re, double[] im, double entryDefect, FactorSource factor) {
+        this(n, re, im, entryDefect, factor, true);
+    }
+
+    /** Takes over validated arrays; if they define the operator, the factor is a shortcut to its own. */
+    PositiveOperator(
+            int n, double[] re, double[] im, double entryDefect, FactorSource factor, boolean definedByFactor) {
         super(n, re, im);
         this.entryDefect = entryDefect;
         this.factor = factor;
-        this.definedByFactor = true;
+        this.definedByFactor = definedByFactor;
     }
 
     /** Copies another operator's data. */
@@ -95,34 +102,11 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
      * @return the positive operator it describes
      */
     public static PositiveOperator ofFactor(PositiveFactor factor) {
-        EnclosedMatrix x = factor.columns();
-        EnclosedMatrix a = x.times(x.adjoint());
-        int n = x.rows();
-        double[] re = new double[n * n];
-        double[] im = a.isReal() ? new double[0] : new double[n * n];
-        double rounding = 0;
-        double trace = 0;
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j < n; j++) {
-                // the upper triangle is copied from the lower, so that the entries are Hermitian exactly
-                int p = Math.max(i, j);
-                int q = Math.min(i, j);
-                re[i * n + j] = a.re(p, q);
-                if (im.length != 0 && i != j) {
-                    im[i * n + j] = i > j ? a.im(p, q) : -a.im(p, q);
-                }
-                rounding = Math.max(rounding, a.radius(p, q) + 0x1p-52 * a.modulusUpper(p, q));
-            }
-            trace += a.re(i, i);
-        }
-        // trace norm ≤ √n · Frobenius norm ≤ n√n · largest entry. From −(ηXX* + N₁) ≤ A − XX* ≤ ηXX* + N₂ the trace
-        // norm of the
-        // difference is at most η Tr XX* + Tr N₁ + Tr N₂
-        double defect = (n * Math.sqrt(n) * rounding + factor.relativeError() * trace + 2 * factor.traceError())
-                * (1 + 0x1p-40);
-        Checks.finite("PositiveOperator.ofFactor", re);
-        Checks.finite("PositiveOperator.ofFactor", im);
-        return new PositiveOperator(n, re, im, defect, FactorSource.of(factor));
+        FactorSource source = FactorSource.of(factor);
+        MeantOperator meant = MeantOperator.byFactor(factor);
+        RoundedCopy copy = RoundedCopy.of("PositiveOperator.ofFactor", meant.matrix());
+        double defect = (copy.traceNormError() + meant.traceNormError()) * (1 + 0x1p-50);
+        return new PositiveOperator(factor.dimension(), copy.re(), copy.im(), defect, source);
     }
 
     /**
@@ -194,19 +178,10 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
      * Returns the operator as a sum of squares, with its errors. For operators given by entries structure is found here:
      * diagonal matrices, positive definite ones (Cholesky in double-double), all others by their certified spectrum.
      *
-     * @return the factor; worked out at the first call unless {@link #hasFactorAtHand()}
+     * @return the factor; worked out at the first call, and kept
      */
     public final PositiveFactor factor() {
         return factor.get();
-    }
-
-    /**
-     * Tells whether {@link #factor()} is known already, so that asking for it costs nothing.
-     *
-     * @return whether the factor was given, or has been worked out before
-     */
-    public final boolean hasFactorAtHand() {
-        return factor.isAtHand();
     }
 
     /**
@@ -245,13 +220,157 @@ public sealed class PositiveOperator extends HermitianOperator permits DensityOp
     /**
      * Returns an enclosure of the trace of the operator meant.
      *
-     * @return Tr A
+     * @return Tr A, from the factor where {@link #knownColumns()} tells that it is cheap, otherwise from the diagonal
      */
     public final Enclosure traceEnclosure() {
+        if (knownColumns().isPresent()) {
+            return factor().trace();
+        }
         Enclosure s = Enclosure.ZERO;
         for (int i = 0; i < rows(); i++) {
             s = s.plus(Enclosure.exact(re(i, i)));
         }
         return s.widen(entryDefect).max(Enclosure.ZERO);
+    }
+
+    /**
+     * Returns the Kronecker product of two positive operators, which is positive: that of the operators meant. Its factor is that of the factors; where the
+     * products of their entries are exact, as for real kets of doubles, no error is added, otherwise 2^-52 relatively and about
+     * 2^-145 of the trace.
+     *
+     * @param other the right factor; its indices run fastest
+     * @return this ⊗ other
+     * @throws InvalidInputException as {@link Operator#tensor}
+     */
+    public final PositiveOperator tensor(PositiveOperator other) {
+        return PositiveCombinations.tensor(this, other);
+    }
+
+    /**
+     * Returns the direct sum of two positive operators, which is positive; its factor is both factors as blocks, without further error.
+     *
+     * @param other the lower right block
+     * @return this ⊕ other
+     * @throws InvalidInputException as {@link Operator#directSum}
+     */
+    public final PositiveOperator directSum(PositiveOperator other) {
+        return PositiveCombinations.directSum(this, other);
+    }
+
+    /**
+     * Returns the complex conjugate, which for a Hermitian operator is the transpose; that of the operator meant.
+     *
+     * @return the conjugate, with the conjugate factor
+     */
+    @Override
+    public PositiveOperator conjugate() {
+        return PositiveCombinations.conjugate(this);
+    }
+
+    @Override
+    public PositiveOperator transpose() {
+        return conjugate();
+    }
+
+    /**
+     * Returns V A V* for a matrix V of exact numbers, unitary or not: of the operator meant. Its factor is VX; where every row of V has one entry at
+     * most and products are exact no error is added, otherwise 2^-52 relatively and about 2^-145 of the trace.
+     *
+     * @param v a matrix with as many columns as this has dimensions
+     * @return V A V*, of dimension v.rows()
+     * @throws InvalidInputException if the shape does not fit or an entry overflows
+     */
+    @Override
+    public final PositiveOperator conjugatedBy(Operator v) {
+        return KrausSum.apply("PositiveOperator.conjugatedBy", List.of(v), this);
+    }
+
+    /**
+     * Returns the nearest positive operator in Hilbert–Schmidt norm: the positive part of the Hermitian part.
+     *
+     * @param a a square operator
+     * @return the positive operator, given by its factor, and what was repaired
+     * @throws InvalidInputException if the operator is not square
+     */
+    public static Repaired<? extends PositiveOperator> nearest(Operator a) {
+        return Repairs.positive(a);
+    }
+
+    /**
+     * Returns the positive square root, with the accuracy of {@link SpectralDecomposition}: next to the kernel an error ε of an eigenvalue is one of √ε
+     * in its root.
+     *
+     * @return √A, given by its factor
+     */
+    public final PositiveOperator squareRoot() {
+        return power(0.5, Tolerance.NONE);
+    }
+
+    /**
+     * Returns a real power on the support, zero on the kernel; the power 0 is the projector onto the support.
+     *
+     * @param exponent any finite number
+     * @param tolerance decides which eigenvalues count as zero; negative ones of the entries always do
+     * @return Σ λ_j^exponent v_j v_j* over the eigenvalues that do not, given by its factor
+     * @throws InvalidInputException if the exponent is not finite or a power overflows
+     */
+    public final PositiveOperator power(double exponent, Tolerance tolerance) {
+        Checks.inRange("PositiveOperator.power", "the exponent", exponent, -Double.MAX_VALUE, Double.MAX_VALUE);
+        return onSupport("PositiveOperator.power", x -> Math.pow(x, exponent), tolerance);
+    }
+
+    @Override
+    public final PositiveOperator inverse(Tolerance tolerance) {
+        return onSupport("PositiveOperator.inverse", x -> 1 / x, tolerance);
+    }
+
+    /** A function that is positive on the positive axis, at the eigenvalues above the threshold. */
+    private PositiveOperator onSupport(String asked, DoubleUnaryOperator f, Tolerance tolerance) {
+        SpectralDecomposition s = spectralDecomposition();
+        double t = tolerance.threshold(s.dimension(), s.norm());
+        return s.positive(asked, x -> x > t ? f.applyAsDouble(x) : 0, t);
+    }
+
+    /**
+     * Returns the natural logarithm on the support, zero on the kernel.
+     *
+     * @param tolerance decides which eigenvalues count as zero; negative ones of the entries always do
+     * @return Σ ln λ_j v_j v_j* over the eigenvalues that do not
+     */
+    public final HermitianOperator logarithm(Tolerance tolerance) {
+        return spectralDecomposition().applyOnSupport(x -> x > 0 ? Math.log(x) : 0, tolerance);
+    }
+
+    /**
+     * Returns the noncommutative quotient B^(−½) A B^(−½) on the support of B, zero on its kernel.
+     *
+     * <p>Accuracy: about n · 2^-49 · κ · ‖A‖/‖B‖, not certified, with κ the ratio of the largest to the smallest eigenvalue of B that does not count as zero.
+     *
+     * @param divisor B, on the same space
+     * @param tolerance decides which eigenvalues of B count as zero
+     * @return the quotient, given by its factor
+     * @throws InvalidInputException if the dimensions differ or an entry overflows
+     */
+    public final PositiveOperator quotient(PositiveOperator divisor, Tolerance tolerance) {
+        Checks.equalShapes("PositiveOperator.quotient", this, divisor);
+        return conjugatedBy(divisor.power(-0.5, tolerance));
+    }
+
+    /**
+     * Returns the parallel sum A : B = (A⁻¹ + B⁻¹)⁻¹, for singular operators A − A(A+B)⁺A (Anderson and Duffin, J. Math. Anal. Appl. 26, 576, 1969; from
+     * memory).
+     *
+     * <p>It is computed without cancellation as S^½ K(1 − K) S^½ on the support of S = A + B, with K = S^(−½) A S^(−½) and 1 − K = S^(−½) B S^(−½), both from
+     * factors. Accuracy: about n · 2^-48 · ‖S‖ · √κ, not certified, with κ the ratio of the largest to the smallest eigenvalue of S that does not count as
+     * zero.
+     *
+     * @param other B, on the same space
+     * @param tolerance decides which eigenvalues of A + B count as zero
+     * @return A : B, given by its factor
+     * @throws InvalidInputException if the dimensions differ or an entry overflows
+     */
+    public final PositiveOperator parallelSum(PositiveOperator other, Tolerance tolerance) {
+        Checks.equalShapes("PositiveOperator.parallelSum", this, other);
+        return ParallelSum.of(this, other, tolerance);
     }
 }

@@ -1,8 +1,5 @@
 package org.minorant.core;
 
-import org.minorant.core.internal.door.EigenResidual;
-import org.minorant.core.internal.door.HermitianEigen;
-
 /** Decides whether a Hermitian matrix is positive up to rounding, and bounds what is not. */
 final class Positivity {
 
@@ -20,13 +17,10 @@ final class Positivity {
         if (CholeskyTest.isPositiveDefinite(a)) {
             return 0;
         }
-        double[] re = a.realParts();
-        double[] im = a.imaginaryParts();
-        HermitianEigen e = HermitianEigen.of(n, re, im);
-        double norm = Math.max(Math.abs(e.values()[0]), Math.abs(e.values()[n - 1]));
-        refuseBelow(asked, e.values()[0], n * ROUNDING * norm, "the smallest eigenvalue is ");
-        // A = VΛV* + E: Tr A₋ ≤ Tr(VΛ₋V*) + ‖E‖₁ ≤ (1+δ) Σ λ₋ + √n ‖E‖_F, and E is bounded a posteriori
-        return EigenResidual.of(n, re, im, e).negativeTraceUpper();
+        CertifiedEigen e = CertifiedEigen.of(a);
+        refuseBelow(asked, e.values()[0], n * ROUNDING * e.norm(), "the smallest eigenvalue is ");
+        // A = VΛV* + E: Tr A₋ ≤ Tr(VΛ₋V*) + ‖E‖₁
+        return e.negativeTraceUpper();
     }
 
     private static double diagonalNegativeTrace(String asked, Operator a) {

@@ -3,7 +3,6 @@ package org.minorant.core;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.stream.IntStream;
-import org.minorant.core.internal.number.DoubleDouble;
 
 /**
  * Cholesky factorisation A ≈ LL* in double-double with a certified relative error in the Loewner order.
@@ -50,15 +49,15 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
             }
         }
         EnclosedMatrix scaled = h.build();
-        DoubleDouble[][][] m = factor(scaled);
-        if (m.length == 0) {
+        DdCholesky m = new DdCholesky(scaled);
+        if (!m.run()) {
             return FAILED;
         }
-        EnclosedMatrix lower = assemble(m, new int[n], IntStream.range(0, n).toArray());
+        EnclosedMatrix lower = m.factor(new int[n], IntStream.range(0, n).toArray());
         double epsilon = scaled.minus(lower.times(lower.adjoint())).frobeniusUpper();
         double kappa = inverseNorm(lower);
         double eta = epsilon * kappa * kappa * (1 + 0x1p-40);
-        return new ScaledCholesky(assemble(m, shift, order), eta < 1 ? eta : Double.POSITIVE_INFINITY);
+        return new ScaledCholesky(m.factor(shift, order), eta < 1 ? eta : Double.POSITIVE_INFINITY);
     }
 
     /** The indices by decreasing power: light columns then lie in light rows, and are not nearly parallel to heavy ones. */
@@ -82,55 +81,6 @@ record ScaledCholesky(EnclosedMatrix factor, double relativeError) {
 
     private static boolean survives(double v, int e) {
         return Math.scalb(Math.scalb(v, e), -e) == v;
-    }
-
-    /** Row-oriented Cholesky; an empty result if a pivot is not positive. Index: row, column, part (0 re, 1 im). */
-    private static DoubleDouble[][][] factor(EnclosedMatrix h) {
-        int n = h.rows();
-        DoubleDouble[][][] l = new DoubleDouble[n][][];
-        for (int i = 0; i < n; i++) {
-            l[i] = new DoubleDouble[i + 1][];
-            for (int j = 0; j <= i; j++) {
-                DoubleDouble x = new DoubleDouble(h.re(i, j), h.reTail(i, j));
-                DoubleDouble y = new DoubleDouble(h.im(i, j), h.imTail(i, j));
-                for (int k = 0; k < j; k++) {
-                    DoubleDouble[] p = l[i][k];
-                    DoubleDouble[] q = l[j][k];
-                    x = x.minus(p[0].times(q[0]).plus(p[1].times(q[1])));
-                    y = y.minus(p[1].times(q[0]).minus(p[0].times(q[1])));
-                }
-                if (i == j) {
-                    if (!(x.hi() > 0)) {
-                        return new DoubleDouble[0][][];
-                    }
-                    l[i][i] = new DoubleDouble[] {x.sqrt(), DoubleDouble.ZERO};
-                } else {
-                    l[i][j] = new DoubleDouble[] {x.dividedBy(l[j][j][0]), y.dividedBy(l[j][j][0])};
-                }
-            }
-        }
-        return l;
-    }
-
-    /** Row i, times 2^shift[i], becomes row order[i]. */
-    private static EnclosedMatrix assemble(DoubleDouble[][][] m, int[] shift, int[] order) {
-        int n = m.length;
-        EnclosedMatrix.Builder b = EnclosedMatrix.builder(n, n);
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j <= i; j++) {
-                DoubleDouble x = m[i][j][0];
-                DoubleDouble y = m[i][j][1];
-                b.set(
-                        order[i],
-                        j,
-                        Math.scalb(x.hi(), shift[i]),
-                        Math.scalb(x.lo(), shift[i]),
-                        Math.scalb(y.hi(), shift[i]),
-                        Math.scalb(y.lo(), shift[i]),
-                        0);
-            }
-        }
-        return b.build();
     }
 
     /** A bound on the norm of the inverse of a lower triangular matrix; infinite if it cannot be had. */

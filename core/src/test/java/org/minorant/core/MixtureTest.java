@@ -43,9 +43,9 @@ class MixtureTest {
     void factorIsWorkedOutOnDemand() {
         DensityOperator d = DensityOperator.ofReal(new double[][] {{0.5, 0.25}, {0.25, 0.5}});
         PositiveOperator twice = d.plus(d);
-        assertTrue(!d.hasFactorAtHand() && !twice.hasFactorAtHand() && !d.isDefinedByFactor());
-        twice.factor();
-        assertTrue(d.hasFactorAtHand() && twice.hasFactorAtHand() && twice.isDefinedByFactor());
+        assertTrue(twice.knownColumns().isEmpty() && !d.isDefinedByFactor() && twice.isDefinedByFactor());
+        assertEquals(4, twice.factor().rank());
+        assertTrue(twice.knownColumns().isEmpty());
     }
 
     @Test

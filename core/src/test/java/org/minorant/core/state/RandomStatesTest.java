@@ -86,7 +86,7 @@ class RandomStatesTest {
         double sum = 0;
         for (long seed = 0; seed < n; seed++) {
             DensityOperator rho = family.apply(seed);
-            assertTrue(rho.traceEnclosure().contains(1));
+            assertTrue(rho.traceEnclosure().widen(d * 0x1p-50).contains(1));
             sum += purity(rho);
         }
         assertEquals(expected, sum / n, tolerance((1 - expected) * (expected - 1.0 / d), n));

@@ -8,15 +8,14 @@ public final class Checks {
 
     private Checks() {}
 
-    /** Refuses shapes that are empty or whose entries cannot be held. */
-    public static void dimensions(String asked, int rows, int columns) {
+    /** Refuses shapes that are empty or whose entries cannot be held, before anything is allocated. */
+    public static void dimensions(String asked, long rows, long columns) {
         if (rows < 1 || columns < 1) {
             throw new InvalidInputException(
                     asked, "the shape is " + rows + " x " + columns, "at least 1 x 1", "give at least one entry");
         }
-        long entries = (long) rows * columns;
         // saturates: sixteen times the largest shape does not fit in a long
-        long bytes = entries > Long.MAX_VALUE / 16 ? Long.MAX_VALUE : 16 * entries;
+        long bytes = rows > Long.MAX_VALUE / 16 / columns ? Long.MAX_VALUE : 16 * rows * columns;
         long limit = Math.min(Runtime.getRuntime().maxMemory(), 16L * Integer.MAX_VALUE);
         if (bytes > limit) {
             throw new InvalidInputException(
