@@ -10,6 +10,9 @@ import org.minorant.core.WideDouble;
  *
  * all terms positive, so that a tiny f keeps its digits. g is increasing and convex with g(0) ≥ 0, and f is its smallest fixed point in [0, a].
  *
+ * <p><b>Near f = a</b>, where A stops being too large for B, that root meets the trivial one δ = a and is lost in it. There the equation in λ itself is used: φ(λ) = Σ w_i/(λ + t b_i)
+ * decreases, and its root is simple.
+ *
  * <p><b>Enclosure.</b> h = g − id is positive before f and, being convex, negative between f and the next root. A point where h &gt; 0 is certain is a lower end if h &lt; 0 is certain at a later
  * point (it cannot be beyond the second root then), and that later point is the upper end. Signs are decided in outward-rounded arithmetic on intervals for w_i and b_i, with wide exponents
  * throughout.
@@ -17,6 +20,12 @@ import org.minorant.core.WideDouble;
 final class SecularRoot {
 
     private static final int MOST_STEPS = 200;
+
+    /** A relative width of 2^-48 is as good as rounding allows. */
+    private static final int ENOUGH = 49;
+
+    /** Brings a − λ to 2^-60 of a. */
+    private static final int BISECTIONS = 60;
 
     private final Enclosure[] weight;
     private final Enclosure[] value;
@@ -51,11 +60,45 @@ final class SecularRoot {
             if (excess(low).lowerWide().signum() > 0
                     && high.compareTo(low) > 0
                     && excess(high).upperWide().signum() < 0) {
-                return Enclosure.of(low, high);
+                Enclosure f = Enclosure.of(low, high);
+                return bits < ENOUGH && guess.compareTo(most.timesPowerOfTwo(-1)) > 0 ? f.intersect(byEigenvalue()) : f;
             }
         }
         // f = a, or too close to it to tell: the iterate is a lower end in any case
-        return Enclosure.of(guess, most);
+        return Enclosure.of(guess, most).intersect(byEigenvalue());
+    }
+
+    /** a − λ, with λ between the largest point where φ > 1 is certain and the smallest where φ < 1 is. */
+    private Enclosure byEigenvalue() {
+        WideDouble low = WideDouble.ZERO;
+        WideDouble high = total.upperWide();
+        WideDouble least = low;
+        WideDouble most = high;
+        for (int step = 0; step < BISECTIONS; step++) {
+            WideDouble x = low.plusDown(most).timesPowerOfTwo(-1);
+            if (phi(x).lowerWide().compareTo(WideDouble.ONE) > 0) {
+                low = x;
+            } else {
+                most = x;
+            }
+            WideDouble y = least.plusUp(high).timesPowerOfTwo(-1);
+            if (phi(y).upperWide().compareTo(WideDouble.ONE) < 0) {
+                high = y;
+            } else {
+                least = y;
+            }
+        }
+        return total.minus(Enclosure.of(low, high)).min(total).max(Enclosure.ZERO);
+    }
+
+    /** Σ w_i/(λ + t b_i) for λ > 0. */
+    private Enclosure phi(WideDouble lambda) {
+        Enclosure at = Enclosure.of(lambda, lambda);
+        Enclosure s = Enclosure.ZERO;
+        for (int i = 0; i < value.length; i++) {
+            s = s.plus(weight[i].dividedBy(value[i].plus(at)));
+        }
+        return s;
     }
 
     /** g(δ) − δ. */
