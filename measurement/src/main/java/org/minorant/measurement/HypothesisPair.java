@@ -1,0 +1,344 @@
+package org.minorant.measurement;
+
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Optional;
+import java.util.OptionalDouble;
+import java.util.TreeMap;
+import java.util.stream.DoubleStream;
+import org.minorant.core.DensityOperator;
+import org.minorant.core.Enclosure;
+import org.minorant.core.InvalidInputException;
+import org.minorant.core.WideDouble;
+import org.minorant.core.pair.PositivePair;
+
+/**
+ * Two hypotheses: the system is in the first state ρ, or in the second state σ.
+ *
+ * <p>Everything here but the explicit tests follows from the curve f(t) = Tr[ρ ∧ tσ] of a {@link PositivePair} alone, whatever its structure; so
+ * a pair may also be given by its curve. A test is an operator 0 ≤ T ≤ 1 that accepts the first state; its type-I error is Tr ρ(1−T), its type-II error
+ * Tr σT.
+ *
+ * <p><b>Accuracy.</b> Every value is enclosed. Where the curve has relative accuracy, so have the errors, however small.
+ *
+ * <p><b>Traces.</b> The states are used as given; a trace that is one only up to rounding enters every value as it is.
+ *
+ * <p>Immutable and thread-safe.
+ *
+ * <p>Sources: C. W. Helstrom, Quantum Detection and Estimation Theory (1976), ch. IV; A. S. Holevo, J. Multivariate Anal. 3, 337 (1973) (both from memory).
+ */
+public final class HypothesisPair {
+
+    /** A gap of a few units in the last place is not worth another value of the curve. */
+    private static final double RELATIVE_GAP = 0x1p-48;
+
+    private static final double TRACE_ROUNDING = 0x1p-50;
+
+    private static final int MOST_LEVELS = 2000;
+
+    private static final double RESOLUTION = 0x1p-40;
+
+    private final PositivePair curve;
+    private final Optional<States> states;
+
+    private HypothesisPair(PositivePair curve, Optional<States> states) {
+        this.curve = curve;
+        this.states = states;
+    }
+
+    private record States(DensityOperator first, DensityOperator second) {}
+
+    /**
+     * Returns the pair of two states.
+     *
+     * @param first ρ
+     * @param second σ
+     * @return the pair
+     * @throws InvalidInputException if the dimensions differ
+     */
+    public static HypothesisPair of(DensityOperator first, DensityOperator second) {
+        Checks.dimension("HypothesisPair.of", "the second state", second, first.dimension());
+        return new HypothesisPair(PositivePair.of(first, second), Optional.of(new States(first, second)));
+    }
+
+    /**
+     * Returns the pair of two states that are known by their curve only; it answers everything but explicit tests.
+     *
+     * @param curve the curve of (ρ, σ)
+     * @return the pair
+     * @throws InvalidInputException if a trace is not one within d · 2^-50
+     */
+    public static HypothesisPair ofCurve(PositivePair curve) {
+        double tolerance = curve.dimension() * TRACE_ROUNDING;
+        unitTrace("first", curve.firstTrace(), tolerance);
+        unitTrace("second", curve.secondTrace(), tolerance);
+        return new HypothesisPair(curve, Optional.empty());
+    }
+
+    private static void unitTrace(String name, Enclosure trace, double tolerance) {
+        if (!(trace.lower() <= 1 + tolerance && trace.upper() >= 1 - tolerance)) {
+            throw new InvalidInputException(
+                    "HypothesisPair.ofCurve",
+                    "the trace of the " + name + " operator is " + trace,
+                    "1 within " + tolerance,
+                    "use PositivePair itself for operators that are not states");
+        }
+    }
+
+    /**
+     * Returns the curve that everything follows from.
+     *
+     * @return the pair (ρ, σ) with f(t) = Tr[ρ ∧ tσ]
+     */
+    public PositivePair curve() {
+        return curve;
+    }
+
+    /**
+     * Tells whether the two states are at hand, so that explicit tests can be had.
+     *
+     * @return whether {@link #first()}, {@link #second()} and the tests can be asked for
+     */
+    public boolean hasStates() {
+        return states.isPresent();
+    }
+
+    /**
+     * Returns the first state.
+     *
+     * @return ρ
+     * @throws InvalidInputException if the pair was given by its curve only
+     */
+    public DensityOperator first() {
+        return states("HypothesisPair.first").first();
+    }
+
+    /**
+     * Returns the second state.
+     *
+     * @return σ
+     * @throws InvalidInputException if the pair was given by its curve only
+     */
+    public DensityOperator second() {
+        return states("HypothesisPair.second").second();
+    }
+
+    private States states(String asked) {
+        return states.orElseThrow(() -> new InvalidInputException(
+                asked,
+                "the pair is known by its curve only",
+                "two states",
+                "make the pair with HypothesisPair.of(first, second), or ask for errors instead of tests"));
+    }
+
+    /**
+     * Returns the minimum error probability of telling the states apart, Tr[pρ ∧ (1−p)σ].
+     *
+     * <p>1 − p is meant exactly: where a double cannot hold it the value is widened by what that changes at most, a relative 2^-53 or less. 0 for
+     * p = 0 and p = 1.
+     *
+     * @param prior p, the prior of the first state, between 0 and 1
+     * @return the minimum error
+     * @throws InvalidInputException if the prior is not between 0 and 1
+     */
+    public Enclosure minimumError(double prior) {
+        Checks.inRange("HypothesisPair.minimumError", "the prior", prior, 0, 1);
+        double rest = 1 - prior;
+        // exact: for 0 ≤ p ≤ 1 both differences are (Sterbenz, or the error of a rounded sum)
+        double lost = (1 - rest) - prior;
+        Enclosure value = curve.traceMinimum(prior, rest);
+        // Tr[pρ ∧ (1+x)qσ] lies between (1 ∓ |x|) times Tr[pρ ∧ qσ]: it does not decrease, and is at most homogeneous
+        return lost == 0 ? value : value.times(Enclosure.ONE.widen(Math.abs(lost) / rest * (1 + 0x1p-50)));
+    }
+
+    /**
+     * Returns f(t) = Tr[ρ ∧ tσ].
+     *
+     * @param t the weight on the second state, at least 0 and finite
+     * @return f(t)
+     * @throws InvalidInputException if t is negative, NaN or infinite
+     */
+    public Enclosure traceMinimum(double t) {
+        return curve.traceMinimum(t);
+    }
+
+    /**
+     * Returns the least type-II error of all tests, randomised ones included, with type-I error at most ε:
+     *
+     * <pre>β_ε = min { Tr σT : 0 ≤ T ≤ 1, Tr ρ(1−T) ≤ ε } = sup { Tr[tρ ∧ σ] − tε : t ≥ 0 }</pre>
+     *
+     * (strong duality; K. M. R. Audenaert, M. Mosonyi, F. Verstraete, J. Math. Phys. 53, 122205, 2012, from memory). Both ends come from certified values of
+     * Tr[tρ ∧ σ] by concavity: any t gives a lower end, extended chords an upper one.
+     *
+     * <p><b>Special cases.</b> 0 if ε is at least Tr ρ. At ε = 0 it is Tr σΠ with Π the projector onto the support of ρ: where the pair has states and
+     * ρ has a factor that certifies its support (kets, full rank), both ends are tight; otherwise the upper end is Tr σ.
+     *
+     * @param level ε, at least 0
+     * @return β_ε
+     * @throws InvalidInputException if the level is negative, NaN or infinite
+     */
+    public Enclosure typeTwoError(double level) {
+        return typeTwo("HypothesisPair.typeTwoError", new SupportLines(curve), level, RELATIVE_GAP, 0)
+                .value();
+    }
+
+    private SupportLines.Supremum typeTwo(
+            String asked, SupportLines lines, double level, double relativeGap, double absoluteGap) {
+        Checks.inRange(asked, "the type-I level", level, 0, Double.MAX_VALUE);
+        SupportLines.Supremum s = lines.at(level, relativeGap, absoluteGap);
+        if (level > 0 || states.isEmpty()) {
+            return s;
+        }
+        Enclosure support = SupportOverlap.of(states.get().first(), states.get().second());
+        return new SupportLines.Supremum(s.value().intersect(support), s.best(), s.from(), s.to());
+    }
+
+    /**
+     * Returns the test that attains the minimum error: T projects onto the positive part of pρ − (1−p)σ. Stored in doubles, it attains it
+     * within rounding, about d · 1e-16.
+     *
+     * @param prior p, the prior of the first state, between 0 and 1
+     * @return the Helstrom test; it accepts always for p = 1 and never for p = 0
+     * @throws InvalidInputException if the prior is not between 0 and 1, or the pair was given by its curve only
+     */
+    public BinaryTest helstromTest(double prior) {
+        String asked = "HypothesisPair.helstromTest";
+        Checks.inRange(asked, "the prior", prior, 0, 1);
+        States s = states(asked);
+        return new ThresholdTests(s.first(), s.second()).helstrom(prior);
+    }
+
+    /**
+     * Returns a test with type-I error at most ε whose type-II error is the least, within the rounding of its entries: a mixture of two projectors onto
+     * positive parts of tρ − σ on either side of the threshold (the quantum Neyman–Pearson test, randomised at the threshold).
+     *
+     * <p>{@code typeOneError().upper()} is at most ε, with certainty; the level is attained within rounding. Levels near the rounding of the
+     * entries, about d · 1e-16, leave room for no such test but acceptance; at ε = 0 the projector onto the support of ρ is returned if its stored entries certify
+     * a type-I error of exactly 0, otherwise the test that always accepts.
+     *
+     * @param level ε, at least 0
+     * @return the test
+     * @throws InvalidInputException if the level is negative, NaN or infinite, or the pair was given by its curve only
+     */
+    public BinaryTest neymanPearsonTest(double level) {
+        String asked = "HypothesisPair.neymanPearsonTest";
+        States s = states(asked);
+        SupportLines.Supremum best = typeTwo(asked, new SupportLines(curve), level, RELATIVE_GAP, 0);
+        return new ThresholdTests(s.first(), s.second()).neymanPearson(level, best);
+    }
+
+    /**
+     * Returns the whole error trade-off curve between two polygons that are nowhere further apart than a tolerance, or as near as the values of f
+     * allow; at most 2000 corners are spent. Where β_0 cannot be certified (see {@link #typeTwoError}) the polygons stay apart within 1e-10 of the
+     * axis.
+     *
+     * @param tolerance the largest distance along the type-II axis to aim at, above 0; 1e-3 is enough for a chart
+     * @return the curve; {@link TradeOffCurve#gap()} says what was reached
+     * @throws InvalidInputException if the tolerance is not above 0 and at most 1
+     */
+    public TradeOffCurve tradeOffCurve(double tolerance) {
+        String asked = "HypothesisPair.tradeOffCurve";
+        Checks.inRange(asked, "the tolerance", tolerance, Double.MIN_NORMAL, 1);
+        Sketch sketch = new Sketch(asked, 0, tolerance / 8);
+        sketch.add(0);
+        sketch.add(1);
+        while (sketch.size() < MOST_LEVELS) {
+            TradeOffCurve c = sketch.curve();
+            OptionalDouble next = c.widths().stream()
+                    .filter(w -> w.gap() > tolerance)
+                    .sorted(Comparator.comparingDouble(TradeOffCurve.Width::gap).reversed())
+                    .flatMapToDouble(w -> sketch.newLevels(w.typeOneError()))
+                    .findFirst();
+            if (next.isEmpty()) {
+                break;
+            }
+            sketch.add(next.getAsDouble());
+        }
+        return sketch.curve();
+    }
+
+    /**
+     * Returns the error trade-off curve with both polygons as near as the values of f allow at chosen levels, however small the errors there; between
+     * levels it is a chord above and support lines below.
+     *
+     * @param levels type-I errors, each between 0 and 1; 0 and 1 are added
+     * @return the curve
+     * @throws InvalidInputException if a level is not between 0 and 1
+     */
+    public TradeOffCurve tradeOffCurveAt(double... levels) {
+        String asked = "HypothesisPair.tradeOffCurveAt";
+        Sketch sketch = new Sketch(asked, RELATIVE_GAP, 0);
+        for (double l : levels) {
+            sketch.add(Checks.inRange(asked, "the type-I level", l, 0, 1));
+        }
+        sketch.add(0);
+        sketch.add(1);
+        return sketch.curve();
+    }
+
+    /** A trade-off curve in the making: the samples of f are shared between levels. */
+    private final class Sketch {
+
+        private final String asked;
+        private final double relativeGap;
+        private final double absoluteGap;
+        private final SupportLines lines = new SupportLines(curve);
+        private final List<CurveSamples.Sample> below = new ArrayList<>();
+        private final TreeMap<Double, WideDouble> above = new TreeMap<>();
+
+        Sketch(String asked, double relativeGap, double absoluteGap) {
+            this.asked = asked;
+            this.relativeGap = relativeGap;
+            this.absoluteGap = absoluteGap;
+        }
+
+        int size() {
+            return above.size();
+        }
+
+        /**
+         * Levels to add where the polygons are apart: there, or, if a level is too near, between that and its neighbours. Where β(0) is not known
+         * the gap beside it never closes.
+         */
+        DoubleStream newLevels(double level) {
+            DoubleStream.Builder out = DoubleStream.builder().add(level);
+            Double near = above.floorKey(Math.min(1, level + RESOLUTION));
+            if (near != null) {
+                Double left = above.lowerKey(near);
+                Double right = above.higherKey(near);
+                if (right != null) {
+                    out.add(near + (right - near) / 16);
+                }
+                if (left != null) {
+                    out.add(near - (near - left) / 16);
+                }
+            }
+            return out.build().filter(this::isNew);
+        }
+
+        private boolean isNew(double level) {
+            Double below = above.floorKey(level);
+            Double beyond = above.ceilingKey(level);
+            return (below == null || level - below > RESOLUTION) && (beyond == null || beyond - level > RESOLUTION);
+        }
+
+        void add(double level) {
+            SupportLines.Supremum s = typeTwo(asked, lines, level + 0.0, relativeGap, absoluteGap);
+            below.add(s.best());
+            above.put(level + 0.0, s.value().upperWide());
+        }
+
+        TradeOffCurve curve() {
+            List<TradeOffPoint> points = new ArrayList<>();
+            above.forEach((a, b) -> points.add(new TradeOffPoint(a, b)));
+            return TradeOffCurve.of(below, points);
+        }
+    }
+
+    /** The kind of curve and the dimension. */
+    @Override
+    public String toString() {
+        return "HypothesisPair, dimension " + curve.dimension() + ", " + curve.kind();
+    }
+}
