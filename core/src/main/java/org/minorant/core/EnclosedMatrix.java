@@ -9,7 +9,7 @@ import org.minorant.core.internal.number.DoubleDouble;
  * 32 digits (sums of two doubles).
  *
  * <p>The building block of certified results: write a formula with a few products and sums, and the radii carry every
- * rounding error. Radii of a product are γ|A||B| + |A|R_B + R_A(|B| + R_B) with γ ≈ 6n²·2^-106 (see DdProducts), computed
+ * rounding error. Radii of a product are γ|A||B| + |A|R_B + R_A(|B| + R_B) with γ ≈ 50n·2^-106 (see DdProducts), computed
  * in double and rounded up. They do not explode as long as a formula stays short; iterations belong outside, their result is
  * then verified in here.
  *
@@ -237,12 +237,12 @@ public final class EnclosedMatrix {
         return (modulus(rh[i][j], im(i, j)) + radius[i][j]) * UP;
     }
 
-    /** √(x² + y²), rounded up also where the squares underflow. */
+    /** √(x² + y²), rounded up also where the squares under- or overflow. */
     private static double modulus(double x, double y) {
         double a = Math.abs(x);
         double b = Math.abs(y);
         double r = Math.sqrt(a * a + b * b);
-        if (!(r > 1e-140)) {
+        if (!(r > 1e-140 && r < 1e150)) {
             r = a + b;
         }
         return r * UP;
@@ -304,18 +304,17 @@ public final class EnclosedMatrix {
         if (!isReal()) {
             DdProducts.addProduct(ih, il, other.rh, other.rl, 1, c.ih, c.il);
         }
-        DdProducts.normalise(c.rh, c.rl);
-        DdProducts.normalise(c.ih, c.il);
         productRadius(other, c.radius);
         return c.build();
     }
 
-    /** γ|A||B| + |A|R_B + R_A(|B| + R_B), rounded up, as (γ|A| + R_A)|B| + (|A| + R_A)R_B. */
+    /** γ|A||B| + |A|R_B + R_A(|B| + R_B), rounded up, as γ(|A||B|) + R_A|B| + (|A| + R_A)R_B; γ comes last, γ|A| alone may underflow. */
     private void productRadius(EnclosedMatrix b, double[][] r) {
         double gamma = DdProducts.gamma(columns);
         double up = 1 + (columns + 16) * 0x1p-51;
         double[][] mb = b.moduli();
-        boolean exact = isZero(b.radius);
+        boolean exact = isZero(radius);
+        boolean exactB = isZero(b.radius);
         boolean[] nonzero = b.nonzeroColumns();
         for (int i = 0; i < rows; i++) {
             double[] row = r[i];
@@ -323,10 +322,16 @@ public final class EnclosedMatrix {
             for (int k = 0; k < columns; k++) {
                 double m = modulus(rh[i][k], im(i, k));
                 zero &= m == 0 && radius[i][k] == 0;
-                addScaled(row, (gamma * m + radius[i][k]) * UP, mb[k]);
-                if (!exact) {
-                    addScaled(row, (m + radius[i][k]) * UP, b.radius[k]);
-                }
+                addScaled(row, m, mb[k]);
+            }
+            for (int j = 0; j < row.length; j++) {
+                row[j] *= gamma;
+            }
+            for (int k = 0; k < columns && !exact; k++) {
+                addScaled(row, radius[i][k], mb[k]);
+            }
+            for (int k = 0; k < columns && !exactB; k++) {
+                addScaled(row, (modulus(rh[i][k], im(i, k)) + radius[i][k]) * UP, b.radius[k]);
             }
             for (int j = 0; j < row.length; j++) {
                 // products with exact zeros are exact
@@ -425,10 +430,15 @@ public final class EnclosedMatrix {
     /**
      * Returns an enclosure of the product with an exact real number.
      *
-     * @param factor the number, finite
+     * @param factor the number
      * @return factor · this
+     * @throws InvalidInputException if the factor is NaN or infinite
      */
     public EnclosedMatrix times(double factor) {
+        if (!(Math.abs(factor) < Double.POSITIVE_INFINITY)) {
+            throw new InvalidInputException(
+                    "EnclosedMatrix.times", "the factor is " + factor, "a finite number", "check the computation before it");
+        }
         Builder c = new Builder(rows, columns, !isReal());
         double f = Math.abs(factor);
         // a power of two loses nothing
@@ -444,8 +454,9 @@ public final class EnclosedMatrix {
                     c.il[i][j] = y.lo();
                 }
                 double r = f * radius[i][j] + loss * f * modulus(rh[i][j], im(i, j));
-                // an exact zero stays one; otherwise the trailing part may be lost in gradual underflow
-                c.radius[i][j] = r * UP + (factor == 0 || r == 0 && rh[i][j] == 0 && im(i, j) == 0 ? 0 : 0x1p-1068);
+                // an exact zero stays one; anything else may lose what it had to gradual underflow
+                boolean zero = radius[i][j] == 0 && rh[i][j] == 0 && im(i, j) == 0;
+                c.radius[i][j] = r * UP + (factor == 0 || zero ? 0 : 0x1p-1068);
             }
         }
         return c.build();
@@ -508,7 +519,7 @@ public final class EnclosedMatrix {
     /**
      * Returns an upper end of the Frobenius norm √Σ|entry|², which bounds the operator norm from above.
      *
-     * @return at least the Frobenius norm
+     * @return at least the Frobenius norm; +∞ if an entry overflowed
      */
     public double frobeniusUpper() {
         double scale = 0;
@@ -520,6 +531,10 @@ public final class EnclosedMatrix {
         if (scale == 0) {
             return 0;
         }
+        // NaN comes from overflow: nothing is known then
+        if (!(scale < Double.POSITIVE_INFINITY)) {
+            return Double.POSITIVE_INFINITY;
+        }
         double s = 0;
         for (int i = 0; i < rows; i++) {
             for (int j = 0; j < columns; j++) {
@@ -527,7 +542,8 @@ public final class EnclosedMatrix {
                 s += m * m;
             }
         }
-        return Math.sqrt(s) * scale * (1 + (2.0 + (double) rows * columns) * 0x1p-51);
+        // the last term covers what rounding to a subnormal number may lose
+        return Math.sqrt(s) * scale * (1 + (2.0 + (double) rows * columns) * 0x1p-51) + 2 * Double.MIN_VALUE;
     }
 
     /**

@@ -241,7 +241,10 @@ public final class Enclosure {
     public double midpoint() {
         double l = lower.toDoubleDown();
         double u = upper.toDoubleUp();
-        return Double.isInfinite(l) ? (l == -u ? 0 : l) : Double.isInfinite(u) ? u : l + 0.5 * (u - l);
+        // halves first: the difference of the ends may overflow
+        double m = Double.isInfinite(l) ? (l == -u ? 0 : l) : Double.isInfinite(u) ? u : 0.5 * l + 0.5 * u;
+        // halves of subnormal ends are rounded
+        return Math.min(Math.max(m, l), u);
     }
 
     /**

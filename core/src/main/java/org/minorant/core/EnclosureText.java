@@ -12,8 +12,8 @@ final class EnclosureText {
     private EnclosureText() {}
 
     /**
-     * The longest decimal whose distance from every number in [lower, upper] is at most half a unit of its last digit plus
-     * nothing: both ends round to it.
+     * The longest decimal, of at most 17 digits, that both ends round to, and so every number between them: it lies within half a unit of its
+     * last digit of each.
      */
     static String certainDigits(WideDouble lower, WideDouble upper) {
         if (lower.equals(upper)) {
@@ -54,8 +54,9 @@ final class EnclosureText {
             return "0";
         }
         int exponent = value.precision() - value.scale() - 1;
-        if (exponent >= -4 && exponent < 15) {
-            return value.scale() < 0 ? value.setScale(0).toPlainString() : value.toPlainString();
+        // 1.2e3, not 1200, if only two digits were kept: a zero printed is a digit claimed
+        if (exponent >= -4 && exponent < 15 && value.scale() >= 0) {
+            return value.toPlainString();
         }
         BigDecimal mantissa = value.scaleByPowerOfTen(-exponent);
         return mantissa.toPlainString() + "e" + exponent;

@@ -258,12 +258,15 @@ public final class WideDouble implements Comparable<WideDouble> {
     }
 
     /**
-     * Returns a value not above the sum.
+     * Returns a value not above the sum; −∞ for the sum of opposite infinities, of which nothing is known.
      *
      * @param other the other term
      * @return a lower end of this + other
      */
     public WideDouble plusDown(WideDouble other) {
+        if (isInfinite() && other.isInfinite() && signum() != other.signum()) {
+            return NEGATIVE_INFINITY;
+        }
         if (isInfinite() || other.significand == 0) {
             return this;
         }
@@ -280,7 +283,7 @@ public final class WideDouble implements Comparable<WideDouble> {
     }
 
     /**
-     * Returns a value not below the sum.
+     * Returns a value not below the sum; +∞ for the sum of opposite infinities.
      *
      * @param other the other term
      * @return an upper end of this + other
@@ -313,7 +316,7 @@ public final class WideDouble implements Comparable<WideDouble> {
     }
 
     /**
-     * Returns a value not above the quotient.
+     * Returns a value not above the quotient. A finite number over an infinity is zero; of a quotient of infinities only the sign is known.
      *
      * @param other the divisor, not zero
      * @return a lower end of this / other
@@ -328,7 +331,7 @@ public final class WideDouble implements Comparable<WideDouble> {
             return ZERO;
         }
         if (other.isInfinite()) {
-            return signum() == other.signum() ? ZERO : of(-1, -MAX_EXPONENT);
+            return isInfinite() && signum() != other.signum() ? NEGATIVE_INFINITY : ZERO;
         }
         return of(Directed.divDown(significand, other.significand), exponent - other.exponent);
     }

@@ -90,9 +90,9 @@ public record DoubleDouble(double hi, double lo) {
         return s.plus(of(r2.hi / o.hi));
     }
 
-    /** Square root of a non-negative number: one Newton step from the double root. */
+    /** Square root of a non-negative number, by two corrections of the double root; negative numbers count as zero, NaN stays NaN. */
     public DoubleDouble sqrt() {
-        if (!(hi > 0)) {
+        if (hi <= 0) {
             return ZERO;
         }
         double r = Math.sqrt(hi);
