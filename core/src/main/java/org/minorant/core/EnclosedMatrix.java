@@ -9,7 +9,7 @@ import org.minorant.core.internal.number.DoubleDouble;
  * 32 digits (sums of two doubles).
  *
  * <p>The building block of certified results: write a formula with a few products and sums, and the radii carry every
- * rounding error. Radii of a product are γ|A||B| + |A|R_B + R_A(|B| + R_B) with γ ≈ 50n·2^-106 (see DdProducts), computed
+ * rounding error. Radii of a product are γ|A||B| + |A|R_B + R_A(|B| + R_B) with γ ≈ (3.5n + 220)·2^-106 (see DdProducts), computed
  * in double and rounded up. They do not explode as long as a formula stays short; iterations belong outside, their result is
  * then verified in here.
  *
@@ -437,7 +437,10 @@ public final class EnclosedMatrix {
     public EnclosedMatrix times(double factor) {
         if (!(Math.abs(factor) < Double.POSITIVE_INFINITY)) {
             throw new InvalidInputException(
-                    "EnclosedMatrix.times", "the factor is " + factor, "a finite number", "check the computation before it");
+                    "EnclosedMatrix.times",
+                    "the factor is " + factor,
+                    "a finite number",
+                    "check the computation before it");
         }
         Builder c = new Builder(rows, columns, !isReal());
         double f = Math.abs(factor);

@@ -10,7 +10,7 @@ import org.minorant.core.internal.number.DoubleDouble;
  * both about 1e-30 of ‖A‖ for well-scaled input up to a few hundred dimensions.
  *
  * <p><b>Argument.</b> Vectors come from a double eigendecomposition, are made orthonormal in double-double by Newton–Schulz
- * steps and corrected to first order where eigenvalues are apart, by Jacobi rotations where they are not. How they were
+ * steps and corrected to first order where eigenvalues are apart, by decompositions of their clusters where they are not. How they were
  * found does not matter: residual and defect are computed afterwards with {@link EnclosedMatrix}. By the theorems of Weyl and
  * Ostrowski the i-th smallest eigenvalue of A is within residual + defect · max|Λ| of the i-th smallest entry of Λ (Horn and
  * Johnson, Matrix Analysis, 2nd ed., 4.3.1 and 4.5.9).

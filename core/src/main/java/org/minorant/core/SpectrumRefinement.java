@@ -15,13 +15,13 @@ import org.minorant.core.internal.number.DoubleDouble;
  */
 record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
 
-    /** Off-diagonal entries this far below the norm are left. */
+    /** Off-diagonal entries this far below the norm, times the dimension, are left: they are the rounding of the products. */
     private static final double SMALL = 0x1p-104;
 
     /** Two values count as apart when the entry that couples them is this much smaller than their distance. */
     private static final double APART = 0x1p-20;
 
-    private static final int ROUNDS = 3;
+    private static final int ROUNDS = 6;
 
     static SpectrumRefinement of(EnclosedMatrix a) {
         int n = a.rows();
@@ -31,17 +31,15 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
         boolean real = top.isReal();
         EnclosedMatrix v = EnclosedMatrix.of(new Operator(n, n, e.vectorsRe(), real ? new double[0] : e.vectorsIm()));
         EnclosedMatrix mid = a.midpoint();
-        double norm = Math.max(Math.abs(e.values()[0]), Math.abs(e.values()[n - 1]));
+        double small = Math.max(Math.abs(e.values()[0]), Math.abs(e.values()[n - 1])) * n * SMALL;
         v = orthonormal(orthonormal(v));
         EnclosedMatrix b = v.adjoint().times(mid.times(v)).midpoint();
-        for (int round = 0; round < ROUNDS && !isDiagonal(b, norm); round++) {
-            v = orthonormal(orthonormal(v.times(EnclosedMatrix.identity(n).plus(correction(b, norm)))
-                    .midpoint()));
-            b = v.adjoint().times(mid.times(v)).midpoint();
-        }
-        if (!isDiagonal(b, norm)) {
-            v = JacobiSweeps.diagonalise(b, v, norm * SMALL);
-            v = orthonormal(v);
+        for (int round = 0; round < ROUNDS && !isDiagonal(b, small); round++) {
+            ClusterRotation clusters = ClusterRotation.of(b, small, APART);
+            EnclosedMatrix next = clusters.isTrivial()
+                    ? EnclosedMatrix.identity(n).plus(correction(b, small))
+                    : EnclosedMatrix.of(clusters.unitary());
+            v = orthonormal(orthonormal(v.times(next).midpoint()));
             b = v.adjoint().times(mid.times(v)).midpoint();
         }
         return sorted(v, b);
@@ -54,10 +52,10 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
         return v.plus(v.times(defect).times(0.5)).midpoint();
     }
 
-    private static boolean isDiagonal(EnclosedMatrix b, double norm) {
+    private static boolean isDiagonal(EnclosedMatrix b, double small) {
         for (int i = 0; i < b.rows(); i++) {
             for (int j = 0; j < i; j++) {
-                if (Math.abs(b.re(i, j)) + Math.abs(b.im(i, j)) > norm * SMALL) {
+                if (Math.abs(b.re(i, j)) + Math.abs(b.im(i, j)) > small) {
                     return false;
                 }
             }
@@ -66,14 +64,14 @@ record SpectrumRefinement(EnclosedMatrix vectors, DoubleDouble[] values) {
     }
 
     /** The first-order rotation K with K_pq = B_pq / (B_qq − B_pp) where the two values are apart; antihermitian. */
-    private static EnclosedMatrix correction(EnclosedMatrix b, double norm) {
+    private static EnclosedMatrix correction(EnclosedMatrix b, double small) {
         int n = b.rows();
         EnclosedMatrix.Builder k = EnclosedMatrix.builder(n, n);
         for (int p = 0; p < n; p++) {
             for (int q = 0; q < n; q++) {
                 double gap = b.re(q, q) - b.re(p, p);
                 double size = Math.abs(b.re(p, q)) + Math.abs(b.im(p, q));
-                if (p != q && size > norm * SMALL && size < APART * Math.abs(gap)) {
+                if (p != q && size > small && size < APART * Math.abs(gap)) {
                     DoubleDouble g = diagonal(b, q).minus(diagonal(b, p));
                     DoubleDouble x = new DoubleDouble(b.re(p, q), b.reTail(p, q)).dividedBy(g);
                     DoubleDouble y = new DoubleDouble(b.im(p, q), b.imTail(p, q)).dividedBy(g);

@@ -190,7 +190,7 @@ class EnclosedMatrixTest {
             EnclosedMatrix a = EnclosedMatrix.of(Operator.ofRowMajor(n, n, x, new double[0]));
             // ‖γ|A||A|‖ ≤ γ‖A‖²_F = γn
             double radius = a.times(a).minus(a.times(a).midpoint()).frobeniusUpper();
-            assertTrue(radius < (50 * n + 100) * n * 0x1p-105, n + ": " + radius);
+            assertTrue(radius < (3.5 * n + 230) * n * 0x1p-105, n + ": " + radius);
         }
     }
 

@@ -30,8 +30,8 @@ class EnclosedSpectrumTest {
                 HermitianOperator a = operator(TestMatrices.hermitian(values, complex, random));
                 EnclosedSpectrum s = EnclosedSpectrum.of(a);
                 String where = kind + ", n = " + n + (complex ? ", complex" : ", real");
-                // radii of the products behind it: γ ≈ 50n·2^-106 times ‖V‖_F² = n, and little more
-                double allowed = 4 * (50 * n + 60) * n * 0x1p-106;
+                // radii of the products behind it: γ ≈ (3.5n + 220)·2^-106 times ‖V‖_F² = n, and little more
+                double allowed = 4 * (3.5 * n + 220) * n * 0x1p-106;
                 assertTrue(s.residual() <= allowed, where + ": residual " + s.residual());
                 assertTrue(s.defect() <= allowed, where + ": defect " + s.defect());
                 java.util.Arrays.sort(values);

@@ -1,30 +1,34 @@
 package org.minorant.core.internal.dd;
 
+import java.util.Arrays;
+
 /**
  * Matrix products in double-double on arrays of rows, with the low word left unnormalised inside the loop (the form the compiler
- * vectorises) and brought back to order after every {@value #CHUNK} terms.
+ * vectorises). Every {@value #CHUNK} terms are summed apart and then merged, which keeps the error bound small.
  *
- * <p><b>Error.</b> Let u = 2^-53 and let S = Σ|a||b| over the n complex products behind an entry; each of its two parts is a sum of m = 2n
- * real products p_j of double-doubles, Σ|p_j| ≤ S by Cauchy and Schwarz. Second-order terms are covered by a factor 1 + 2^-20.
+ * <p><b>Error.</b> Let u = 2^-53 and let S = Σ|a||b| over the n complex products behind an entry; each of its two parts is a sum of n or 2n
+ * real products p_j of double-doubles, Σ|p_j| ≤ S by Cauchy and Schwarz, in K ≤ 2(n/8 + 1) chunks of c terms and sizes S_c = Σ|p_j|. Second-order
+ * terms are covered by a factor 1 + 2^-20.
  *
  * <ul>
  *   <li>A product (h + l)(h' + l') keeps hh' exactly (product and fused error) and hl' + lh'. It drops ll' (u²), and rounds hl', lh' (u² each),
  *       their sum (2u²) and the sum with the fused error (3u²): 8u²|p_j|, together 8u²S.
- *   <li>The high words are added without error (two-sum), leaving |ε_j| ≤ uS. The low word then takes ε_j + e_j with |e_j| ≤ 3u|p_j|: that sum
- *       rounds by u(uS + 3u|p_j|), and adding it rounds by u|l|. A chunk of c terms starts with |l| ≤ uS, so |l| ≤ (j + 4)uS after j terms,
- *       and the chunk rounds by at most u²S(c²/2 + 5.5c) + 3u²Σ|p_j|.
- *   <li>Normalising is exact if |h| ≥ |l|; else h has cancelled and its two subtractions round by at most 3.1u|l| ≤ 3.1(c + 4)u²S.
+ *   <li>In a chunk the high words are added without error (two-sum), leaving |ε_j| ≤ uS_c. The low word then takes ε_j + e_j with |e_j| ≤
+ *       3u|p_j|: that sum rounds by u(uS_c + 3u|p_j|), and adding it to l, |l| ≤ (j + 3)uS_c, by u|l|: together at most u²S_c(c²/2 + 4.5c + 3).
+ *   <li>Merging (p, q), |q| ≤ (c + 3)uS_c, into (h, l), |l| ≤ uS: the high words leave |ε| ≤ uS; ε + q rounds by u²(S + (c+3)S_c), adding l by
+ *       u²(2S + (c+3)S_c); normalising is exact unless the high word has cancelled below the low one, and then rounds by at most 3.1 times the
+ *       latter: together u²(9.2S + 5.1(c+3)S_c).
  * </ul>
  *
- * <p>A chunk therefore costs u²S(c²/2 + 8.6c + 12.4). For n ≤ 16 a part has two chunks of n terms: u²S(n² + 17.2n + 36). Otherwise the full chunks
- * cost 17.4u²S a term and two are begun in vain: u²S(34.8n + 36). The modulus is at most √2 times larger, whence {@link #gamma}.
+ * <p>Summed over the chunks with c ≤ 8: u²S(8 + 71 + 56.1 + 9.2K) ≤ u²S(154 + 2.3n); for n ≤ 8, with c = n and K = 2, u²S(n²/2 + 9.6n + 44.7). The
+ * modulus is at most √2 times larger, whence {@link #gamma}.
  */
 public final class DdProducts {
 
     private static final double U2 = 0x1p-106;
 
-    /** Terms between two normalisations. */
-    private static final int CHUNK = 16;
+    /** Terms summed apart. */
+    private static final int CHUNK = 8;
 
     /** Shorter rows have a loop of their own, which is compiled for what it meets. */
     private static final int SHORT = 16;
@@ -33,7 +37,7 @@ public final class DdProducts {
 
     /** The factor γ of the error bound γ·Σ|a||b| for an inner dimension n, real or complex. */
     public static double gamma(int n) {
-        double units = n <= CHUNK ? 1.5 * n * n + 25.0 * n + 52.0 : 50.0 * n + 52.0;
+        double units = n <= CHUNK ? 0.75 * n * n + 14.0 * n + 64.0 : 3.5 * n + 220.0;
         return units * U2 * (1 + 0x1p-20);
     }
 
@@ -48,17 +52,21 @@ public final class DdProducts {
      */
     public static void addProduct(
             double[][] ah, double[][] al, double[][] bh, double[][] bl, double sign, double[][] ch, double[][] cl) {
+        double[] ph = new double[ch.length == 0 ? 0 : ch[0].length];
+        double[] pl = new double[ph.length];
         for (int i = 0; i < ah.length; i++) {
             double[] xh = ah[i];
             double[] xl = al[i];
             for (int from = 0; from < xh.length; from += CHUNK) {
                 int to = Math.min(xh.length, from + CHUNK);
+                Arrays.fill(ph, 0);
+                Arrays.fill(pl, 0);
                 for (int k = from; k < to; k++) {
                     if (xh[k] != 0 || xl[k] != 0) {
-                        addScaled(sign * xh[k], sign * xl[k], bh[k], bl[k], ch[i], cl[i]);
+                        addScaled(sign * xh[k], sign * xl[k], bh[k], bl[k], ph, pl);
                     }
                 }
-                normalise(ch[i], cl[i]);
+                merge(ph, pl, ch[i], cl[i]);
             }
         }
     }
@@ -94,12 +102,14 @@ public final class DdProducts {
         }
     }
 
-    /** Brings every pair to |lo| ≤ ½ ulp(hi). */
-    private static void normalise(double[] h, double[] l) {
+    /** (h, l) += (p, q), and every pair is brought to |l| ≤ ½ ulp(h). */
+    private static void merge(double[] p, double[] q, double[] h, double[] l) {
         for (int j = 0; j < h.length; j++) {
-            double s = h[j] + l[j];
-            l[j] = l[j] - (s - h[j]);
-            h[j] = s;
+            double s = h[j] + p[j];
+            double t = s - h[j];
+            double v = l[j] + (((h[j] - (s - t)) + (p[j] - t)) + q[j]);
+            h[j] = s + v;
+            l[j] = v - (h[j] - s);
         }
     }
 }
