@@ -200,4 +200,22 @@ class FactorPairTest {
         assertTrue(f.widen(1e-14).contains(columns.midpoint()), f + " against " + columns);
         assertEquals(5, g.rows());
     }
+
+    @Test
+    void dependentColumnsKeepTheirWeakCombinations() {
+        // A = span of (1, 0, 0) and, by cancellation of two columns, of a vector of size 1e-30 along (0, 1, 1e-12);
+        // B along the third axis: f is close to |⟨e₃, weak⟩|², in the difference of two strong columns only
+        double tiny = Math.scalb(1.0, -100);
+        double[][] columns = {{1, 1}, {tiny, -tiny}, {tiny * 0x1p-40, -tiny * 0x1p-40}};
+        Operator x = Operator.ofReal(columns);
+        Operator y = Operator.ofReal(new double[][] {{0}, {0}, {1}});
+        FactorPair p = pair(x, y);
+        Enclosure f = p.traceMinimum(1);
+        // X = (√2 e₁, √2 w) up to a rotation of columns: f = Tr[2ww* ∧ e₃e₃*], the pair of kets √2 w and e₃
+        Operator weak = Operator.ofReal(new double[][] {{0}, {Math.sqrt(2) * tiny}, {Math.sqrt(2) * tiny * 0x1p-40}});
+        Enclosure g = pair(weak, y).traceMinimum(1);
+        assertTrue(f.relativeWidth() < 1e-12, "width " + f.relativeWidth());
+        // √2 rounded once changes the weight by at most 2^-52
+        f.intersect(g.times(Enclosure.ONE.widen(0x1p-51)));
+    }
 }
