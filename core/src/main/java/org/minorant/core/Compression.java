@@ -34,17 +34,18 @@ final class Compression {
                 }
             }
         }
+        Operator entries = new Operator(m, m, re, im);
         // compressing does not increase the trace norm; the positive part of a block is the block of the positive part
         // only if
         // nothing was cut off or the block does not interact with the rest
         if (!a.isDefinedByFactor() && (a.entryDefect() == 0 || isBlock(a, keep))) {
-            return new PositiveOperator(m, re, im, a.entryDefect());
+            return new PositiveOperator(entries, a.entryDefect());
         }
         OptionalInt columns = a.knownColumns().isEmpty()
                 ? OptionalInt.empty()
                 : OptionalInt.of(rows(a.factor(), keep).rank());
         return new PositiveOperator(
-                m, re, im, a.entryDefect(), FactorSource.later(() -> rows(a.factor(), keep), columns));
+                entries, a.entryDefect(), FactorSource.later(() -> rows(a.factor(), keep), columns));
     }
 
     private static boolean isBlock(PositiveOperator a, int[] keep) {

@@ -12,12 +12,12 @@ import org.minorant.core.internal.kernel.LinearSolve;
  *
  * <p><b>All others.</b> For every τ &gt; 0, (X+E)(X+E)* ≤ (1+τ)XX* + (1+1/τ)EE*, and with X and X+E exchanged and −E for E the same holds the other way
  * round. So the true operator is in the sandwich of X with relative error τ and trace error (1+1/τ)‖E‖²_F: the error of the columns
- * enters squared, 2^-100 in the columns is 2^-148 in the trace. A relative error alone will not do there, since rounding turns the range.
+ * enters squared, 2^-100 in the columns is 2^-140 in the trace. A relative error alone will not do there, since rounding turns the range.
  */
 final class FactorRounding {
 
-    /** τ: below the accuracy of a double, so that nobody sees it. */
-    private static final double RELATIVE = 0x1p-52;
+    /** τ: so far below the accuracy of a double that nobody sees a sum of hundreds. */
+    private static final double RELATIVE = 0x1p-60;
 
     /** A relative error above this is not worth having instead. */
     private static final double WORTH = 1e-13;

@@ -19,6 +19,11 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
         super(n, n, re, im);
     }
 
+    /** Takes over an operator that is Hermitian exactly: by construction, or because that was checked. */
+    HermitianOperator(Operator hermitian) {
+        super(hermitian);
+    }
+
     /**
      * Returns the Hermitian operator with these entries.
      *
@@ -54,7 +59,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
             return h;
         }
         requireHermitian("HermitianOperator.of", a);
-        return new HermitianOperator(a.rows(), a.realParts(), a.imaginaryParts());
+        return new HermitianOperator(a);
     }
 
     /** Refuses what is not exactly Hermitian, naming the worst pair of entries. */
@@ -130,7 +135,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
      */
     public final HermitianOperator plus(HermitianOperator other) {
         Operator s = combine("HermitianOperator.plus", other, 1);
-        return new HermitianOperator(rows(), s.realParts(), s.imaginaryParts());
+        return new HermitianOperator(s);
     }
 
     /**
@@ -142,7 +147,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
      */
     public final HermitianOperator minus(HermitianOperator other) {
         Operator s = combine("HermitianOperator.minus", other, -1);
-        return new HermitianOperator(rows(), s.realParts(), s.imaginaryParts());
+        return new HermitianOperator(s);
     }
 
     /**
@@ -156,12 +161,12 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
     @Override
     public HermitianOperator times(double factor) {
         Operator s = super.times(factor);
-        return new HermitianOperator(rows(), s.realParts(), s.imaginaryParts());
+        return new HermitianOperator(s);
     }
 
     @Override
     public final HermitianOperator negate() {
-        return new HermitianOperator(rows(), negated(realParts()), negated(imaginaryParts()));
+        return new HermitianOperator(super.negate());
     }
 
     @Override
@@ -171,7 +176,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
 
     @Override
     public HermitianOperator conjugate() {
-        return new HermitianOperator(rows(), realParts(), negated(imaginaryParts()));
+        return new HermitianOperator(super.conjugate());
     }
 
     @Override
@@ -187,7 +192,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
      * @throws InvalidInputException as {@link Operator#tensor}
      */
     public final HermitianOperator tensor(HermitianOperator other) {
-        return ofHermitian(TensorProducts.tensor("HermitianOperator.tensor", this, other));
+        return new HermitianOperator(TensorProducts.tensor("HermitianOperator.tensor", this, other));
     }
 
     /**
@@ -198,12 +203,7 @@ public sealed class HermitianOperator extends Operator permits PositiveOperator 
      * @throws InvalidInputException as {@link Operator#directSum}
      */
     public final HermitianOperator directSum(HermitianOperator other) {
-        return ofHermitian(TensorProducts.directSum("HermitianOperator.directSum", this, other));
-    }
-
-    /** Takes over an operator that is Hermitian exactly by construction. */
-    static HermitianOperator ofHermitian(Operator a) {
-        return new HermitianOperator(a.rows(), a.realParts(), a.imaginaryParts());
+        return new HermitianOperator(TensorProducts.directSum("HermitianOperator.directSum", this, other));
     }
 
     /**

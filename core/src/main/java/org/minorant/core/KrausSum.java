@@ -79,8 +79,7 @@ final class KrausSum {
         EnclosedMatrix sum = sum(kraus, meant.matrix());
         RoundedCopy copy = RoundedCopy.of(asked, sum);
         double defect = (copy.traceNormError() + growth(kraus) * meant.traceNormError()) * (1 + 0x1p-50);
-        return new PositiveOperator(
-                out, copy.re(), copy.im(), defect, FactorSource.later(() -> factor(kraus, a.factor())));
+        return new PositiveOperator(copy.operator(), defect, FactorSource.later(() -> factor(kraus, a.factor())));
     }
 
     /** Σ K A K* for an enclosed matrix. */

@@ -38,6 +38,14 @@ public sealed class Operator permits HermitianOperator {
         this.im = im.length == 0 || isZero(im) ? new double[0] : withoutNegativeZeros(im);
     }
 
+    /** Shares the arrays of another operator, which nobody changes. */
+    Operator(Operator other) {
+        this.rows = other.rows;
+        this.columns = other.columns;
+        this.re = other.re;
+        this.im = other.im;
+    }
+
     /** Zeros have one sign, so that equal operators have equal bits, also after the adjoint or a file. */
     private static double[] withoutNegativeZeros(double[] a) {
         for (int i = 0; i < a.length; i++) {
@@ -352,7 +360,8 @@ public sealed class Operator permits HermitianOperator {
     /**
      * Returns the trace norm of the entries, the sum of the singular values.
      *
-     * @return an enclosure, of width about n² · 2^-50 · ‖A‖ from one Hermitian eigendecomposition; exact sums for diagonal operators
+     * @return an enclosure, of width about n² · 2^-50 times the Hilbert–Schmidt norm, from one Hermitian eigendecomposition; exact sums for diagonal Hermitian
+     *     operators
      * @throws InvalidInputException if the operator is not Hermitian by type and the Hermitian operator of dimension rows + columns that stands for it is
      *     too large for memory
      */
@@ -363,7 +372,7 @@ public sealed class Operator permits HermitianOperator {
     /**
      * Returns the operator norm of the entries, the largest singular value.
      *
-     * @return an enclosure, of width about n² · 2^-50 · ‖A‖ from one Hermitian eigendecomposition; exact for diagonal operators
+     * @return an enclosure, of width about n² · 2^-50 times the Hilbert–Schmidt norm, from one Hermitian eigendecomposition; exact for diagonal Hermitian operators
      * @throws InvalidInputException as {@link #traceNorm()}
      */
     public final Enclosure operatorNorm() {

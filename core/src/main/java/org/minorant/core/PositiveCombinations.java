@@ -22,9 +22,7 @@ final class PositiveCombinations {
         double traceB = b.traceEnclosure().upper() + b.entryDefect();
         double defect = (rounding + a.entryDefect() * traceB + traceA * b.entryDefect()) * (1 + 0x1p-40);
         return new PositiveOperator(
-                n,
-                entries.realParts(),
-                entries.imaginaryParts(),
+                entries,
                 defect,
                 FactorSource.later(() -> FactorShapes.tensor(a.factor(), b.factor()), columns(a, b, (p, q) -> p * q)));
     }
@@ -34,20 +32,16 @@ final class PositiveCombinations {
         double defect = (a.entryDefect() + b.entryDefect()) * (1 + 0x1p-52);
         // the positive part of a block matrix is that of its blocks: entries that defined both define the sum
         return new PositiveOperator(
-                entries.rows(),
-                entries.realParts(),
-                entries.imaginaryParts(),
+                entries,
                 defect,
                 FactorSource.later(
                         () -> FactorShapes.directSum(a.factor(), b.factor()), columns(a, b, (p, q) -> p + q)),
                 a.isDefinedByFactor() || b.isDefinedByFactor());
     }
 
-    static PositiveOperator conjugate(PositiveOperator a) {
+    static PositiveOperator conjugate(PositiveOperator a, Operator entries) {
         return new PositiveOperator(
-                a.rows(),
-                a.realParts(),
-                Operator.negated(a.imaginaryParts()),
+                entries,
                 a.entryDefect(),
                 FactorSource.later(() -> FactorShapes.conjugate(a.factor()), a.knownColumns()),
                 a.isDefinedByFactor());

@@ -23,7 +23,7 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
      * @param columns X, with radius zero
      * @param relativeError η, at least 0 and below 1
      * @param traceError ν, at least 0
-     * @throws InvalidInputException if an error is negative, NaN or, for the relative one, not below 1
+     * @throws InvalidInputException if an error is negative, NaN or, for the relative one, not below 1, or a column has a radius
      */
     public PositiveFactor {
         if (!(relativeError >= 0 && relativeError < 1 && traceError >= 0)) {
@@ -33,6 +33,28 @@ public record PositiveFactor(EnclosedMatrix columns, double relativeError, doubl
                     "0 <= relative < 1 and 0 <= trace",
                     "check the derivation of the factor");
         }
+        for (int i = 0; i < columns.rows(); i++) {
+            for (int j = 0; j < columns.columns(); j++) {
+                if (columns.radius(i, j) != 0) {
+                    throw new InvalidInputException(
+                            "PositiveFactor",
+                            "entry (" + i + ", " + j + ") has the radius " + columns.radius(i, j),
+                            "columns of exact numbers",
+                            "use PositiveFactor.ofEnclosed, which turns radii into errors of the factor");
+                }
+            }
+        }
+    }
+
+    /**
+     * Returns a factor whose true columns are known up to radii: a relative error only where the columns span the space and are well conditioned after
+     * scaling of rows, otherwise a relative error of 2^-60 and a trace error of about 2^60 times the squared radii.
+     *
+     * @param columns an enclosure of X
+     * @return the factor with the midpoints as columns
+     */
+    public static PositiveFactor ofEnclosed(EnclosedMatrix columns) {
+        return FactorRounding.ofRadii(columns);
     }
 
     /**

@@ -6,11 +6,10 @@ package org.minorant.core;
  * <p><b>Error.</b> An entry differs from the true one by its radius and the trailing parts left out, at most 2^-52 of its modulus; the upper triangle
  * is copied from the lower one. In trace norm the sum is at most √n times the Frobenius norm of these bounds.
  *
- * @param re real parts, row-major
- * @param im imaginary parts, row-major; empty for a real matrix
+ * @param operator the copy
  * @param traceNormError an upper end of the trace norm of (copy − true matrix)
  */
-record RoundedCopy(double[] re, double[] im, double traceNormError) {
+record RoundedCopy(HermitianOperator operator, double traceNormError) {
 
     static RoundedCopy of(String asked, EnclosedMatrix a) {
         int n = a.rows();
@@ -38,6 +37,6 @@ record RoundedCopy(double[] re, double[] im, double traceNormError) {
                     "scale the operator down by a power of two");
         }
         double trace = Math.sqrt(n) * FrobeniusBound.of(error) * (1 + 0x1p-40);
-        return new RoundedCopy(re, im, trace);
+        return new RoundedCopy(new HermitianOperator(n, re, im), trace);
     }
 }

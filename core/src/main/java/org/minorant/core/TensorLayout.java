@@ -138,7 +138,7 @@ public final class TensorLayout {
      * @throws InvalidInputException as {@link #partialTrace(Operator, int...)}
      */
     public HermitianOperator partialTrace(HermitianOperator a, int... traced) {
-        return HermitianOperator.ofHermitian(partialTrace((Operator) a, traced));
+        return new HermitianOperator(partialTrace((Operator) a, traced));
     }
 
     /**
@@ -159,9 +159,7 @@ public final class TensorLayout {
                 : OptionalInt.of((int) Math.min(Integer.MAX_VALUE, (long) copies * known.getAsInt()));
         // the partial trace does not increase the trace norm
         return new PositiveOperator(
-                t.kept(),
-                t.re(a),
-                t.im(a),
+                new Operator(t.kept(), t.kept(), t.re(a), t.im(a)),
                 (t.roundingTraceNorm(a) + a.entryDefect()) * (1 + 0x1p-50),
                 FactorSource.later(
                         () -> FactorShapes.moved(a.factor(), t.kept(), copies, t.keptIndex(), t.tracedIndex()),
@@ -216,7 +214,7 @@ public final class TensorLayout {
      * @throws InvalidInputException as {@link #partialTranspose(Operator, int...)}
      */
     public HermitianOperator partialTranspose(HermitianOperator a, int... transposed) {
-        return HermitianOperator.ofHermitian(partialTranspose((Operator) a, transposed));
+        return new HermitianOperator(partialTranspose((Operator) a, transposed));
     }
 
     /**
@@ -254,7 +252,7 @@ public final class TensorLayout {
      * @throws InvalidInputException as {@link #permute(Operator, int...)}
      */
     public HermitianOperator permute(HermitianOperator a, int... order) {
-        return HermitianOperator.ofHermitian(permute((Operator) a, order));
+        return new HermitianOperator(permute((Operator) a, order));
     }
 
     /**
@@ -269,9 +267,7 @@ public final class TensorLayout {
         Operator entries = permute((Operator) a, order);
         int[] to = SubsystemIndex.permuted(dimensions, total, order);
         return new PositiveOperator(
-                total,
-                entries.realParts(),
-                entries.imaginaryParts(),
+                entries,
                 a.entryDefect(),
                 FactorSource.later(
                         () -> FactorShapes.moved(a.factor(), total, 1, to, new int[total]), a.knownColumns()),

@@ -41,9 +41,7 @@ final class WeightedSum {
             defect += w[t] * terms.get(t).entryDefect() + Double.MIN_VALUE;
         }
         return new PositiveOperator(
-                n,
-                Checks.finite(asked, re),
-                Checks.finite(asked, im),
+                new Operator(n, n, Checks.finite(asked, re), Checks.finite(asked, im)),
                 defect * (1 + (w.length + (double) n * n) * 0x1p-51),
                 FactorSource.later(() -> factor(terms, w), columns(terms, w)));
     }

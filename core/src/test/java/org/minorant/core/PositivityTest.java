@@ -129,6 +129,11 @@ class PositivityTest {
                         + " factor",
                 () -> new PositiveFactor(EnclosedMatrix.identity(1), 1, 0));
         Meaning.assertRefusal(
+                "PositiveFactor: entry (0, 0) has the radius 0.5, expected columns of exact numbers; use PositiveFactor.ofEnclosed, which"
+                        + " turns radii into errors of the factor",
+                () -> new PositiveFactor(
+                        EnclosedMatrix.builder(1, 1).set(0, 0, 1, 0, 0, 0, 0.5).build(), 0, 0));
+        Meaning.assertRefusal(
                 "PositiveFactor: the errors are 0.0 and NaN, expected 0 <= relative < 1 and 0 <= trace; check the derivation of the"
                         + " factor",
                 () -> new PositiveFactor(EnclosedMatrix.identity(1), 0, Double.NaN));
