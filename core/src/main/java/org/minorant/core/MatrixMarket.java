@@ -29,8 +29,9 @@ import org.minorant.core.internal.file.MatrixMarketWriter;
  * <p><b>Refused</b>, with the line: everything else, and in particular entries in the upper triangle of symmetric storage; an entry listed
  * twice; NaN, infinity, and numbers too large for a double; text after the last entry. A number is rounded to the nearest double.
  *
- * <p><b>Memory.</b> What the file declares is compared with its length before anything is allocated. A coordinate file may declare up to 2^24
- * entries (dimension 4096), more only if an eighth of them are listed. A matrix of which four copies do not fit in the heap is refused.
+ * <p><b>Memory.</b> Only regular files are read, for others have no length. What the file declares is compared with its length before
+ * anything is allocated. A coordinate file may declare up to 2^24 entries (dimension 4096), more only if an eighth of them are listed. A
+ * matrix of which four copies do not fit in the heap is refused.
  *
  * <p><b>Written</b> files read back to the same bits: each number has the fewest of 15, 16 or 17 digits that do. A state that was given by
  * a ket or a factor is written by its entries, which are a rounded copy of it; a ket can be written as a matrix of one column instead.

@@ -18,8 +18,8 @@ import org.minorant.core.internal.file.NpyFormat;
  * <p><b>Refused</b>, with the byte counted from 0: everything else, and in particular other types, empty arrays, NaN and infinities, and a
  * file that is longer or shorter than its header declares.
  *
- * <p><b>Memory.</b> The declared shape is compared with the length of the file before anything is allocated. A matrix of which four copies
- * do not fit in the heap is refused.
+ * <p><b>Memory.</b> Only regular files are read, for others have no length. The declared shape is compared with the length of the file
+ * before anything is allocated. A matrix of which four copies do not fit in the heap is refused.
  *
  * <p><b>Written</b> files are version 1.0 (the others are for headers above 64 KiB and for field names), row-major, little-endian, and read
  * back to the same bits. A state that was given by a ket or a factor is written by its entries, which are a rounded copy of it; a ket can

@@ -179,6 +179,15 @@ class NumpyFileTest {
     }
 
     @Test
+    void textAfterALineFeedInTheHeaderIsRefused() throws IOException {
+        byte[] bytes = file(header("<f8", false, "(1, 1)"), 1);
+        bytes[100] = '\n';
+        InvalidInputException e = assertThrows(InvalidInputException.class, () -> read(bytes));
+        assertEquals("spaces up to a line feed that ends the header", e.limit());
+        assertTrue(e.asked().endsWith("byte 100"), e.asked());
+    }
+
+    @Test
     void wrongMagicVersionAndLengthsAreRefused() throws IOException {
         byte[] good = file(header("<f8", false, "(1, 1)"), 1);
         refused(with(good, 0, 'N'), ", byte 0: the byte is 0x4e, expected 0x93 NUMPY; check that this is a .npy file");
@@ -236,6 +245,7 @@ class NumpyFileTest {
     @ParameterizedTest
     @ValueSource(
             strings = {
+                "(3000, 3000)",
                 "(20000, 20000)",
                 "(2147483647, 2147483647)",
                 "(2147483647,)",

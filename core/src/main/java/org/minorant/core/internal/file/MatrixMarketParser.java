@@ -3,6 +3,7 @@ package org.minorant.core.internal.file;
 import java.io.IOException;
 import java.io.InputStream;
 import java.util.BitSet;
+import java.util.regex.Pattern;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.MatrixMarketLayout;
 import org.minorant.core.internal.file.MatrixMarketHeader.Field;
@@ -23,6 +24,8 @@ public final class MatrixMarketParser {
     private static final long SPARSE_ENTRIES = 1L << 24;
 
     private static final long LEAST_FILL = 8;
+
+    private static final Pattern BLANKS = Pattern.compile("[ \t]+");
 
     /** Digits of the largest count that can matter. */
     private static final int COUNT_DIGITS = 10;
@@ -165,7 +168,7 @@ public final class MatrixMarketParser {
                 start++;
             }
             if (start < line.length()) {
-                return line.substring(start).split("[ \t]+");
+                return BLANKS.split(line.substring(start));
             }
         }
         throw here("the file ends here", expected, "the file is truncated or the counts are wrong");
