@@ -1,6 +1,7 @@
 package org.minorant.core;
 
 import org.minorant.core.internal.number.DoubleDouble;
+import org.minorant.core.internal.number.ProductError;
 
 /**
  * Right-looking Cholesky factorisation in double-double on split rows, low words left unnormalised inside the loops. Trusted by nobody: {@link ScaledCholesky}
@@ -89,7 +90,7 @@ final class DdCholesky {
         }
         for (int j = from; j < sh.length; j++) {
             double p = -xh * bh[j];
-            double e = Math.fma(-xh, bh[j], -p) - (xh * bl[j] + xl * bh[j]);
+            double e = ProductError.of(-xh, bh[j], p) - (xh * bl[j] + xl * bh[j]);
             double s = sh[j] + p;
             double t = s - sh[j];
             sl[j] += ((sh[j] - (s - t)) + (p - t)) + e;

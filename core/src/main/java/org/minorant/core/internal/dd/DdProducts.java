@@ -1,6 +1,7 @@
 package org.minorant.core.internal.dd;
 
 import java.util.Arrays;
+import org.minorant.core.internal.number.ProductError;
 
 /**
  * Matrix products in double-double on arrays of rows, with the low word left unnormalised inside the loop (the form the compiler
@@ -83,7 +84,7 @@ public final class DdProducts {
     private static void addScaledShort(double xh, double xl, double[] bh, double[] bl, double[] sh, double[] sl) {
         for (int j = 0; j < sh.length; j++) {
             double p = xh * bh[j];
-            double e = Math.fma(xh, bh[j], -p) + (xh * bl[j] + xl * bh[j]);
+            double e = ProductError.of(xh, bh[j], p) + (xh * bl[j] + xl * bh[j]);
             double s = sh[j] + p;
             double t = s - sh[j];
             sl[j] += ((sh[j] - (s - t)) + (p - t)) + e;
@@ -94,7 +95,7 @@ public final class DdProducts {
     private static void addScaledLong(double xh, double xl, double[] bh, double[] bl, double[] sh, double[] sl) {
         for (int j = 0; j < sh.length; j++) {
             double p = xh * bh[j];
-            double e = Math.fma(xh, bh[j], -p) + (xh * bl[j] + xl * bh[j]);
+            double e = ProductError.of(xh, bh[j], p) + (xh * bl[j] + xl * bh[j]);
             double s = sh[j] + p;
             double t = s - sh[j];
             sl[j] += ((sh[j] - (s - t)) + (p - t)) + e;

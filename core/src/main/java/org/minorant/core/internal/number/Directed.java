@@ -4,8 +4,8 @@ package org.minorant.core.internal.number;
  * Directed rounding for double: each operation returns the largest double not above (down), or the smallest not below
  * (up), the exact result, or one further out where exactness cannot be decided cheaply (near underflow).
  *
- * <p>The error of a rounded sum is computed exactly (Knuth's two-sum) and that of a product, quotient or root by a fused
- * multiply-add, so exact results stay exact.
+ * <p>The error of a rounded sum is computed exactly (Knuth's two-sum) and that of a product, quotient or root by {@link
+ * ProductError}, so exact results stay exact.
  */
 public final class Directed {
 
@@ -40,7 +40,7 @@ public final class Directed {
         if (Math.abs(p) < SAFE) {
             return Math.nextDown(p);
         }
-        return Math.fma(a, b, -p) < 0 ? Math.nextDown(p) : p;
+        return ProductError.of(a, b, p) < 0 ? Math.nextDown(p) : p;
     }
 
     /** Upper end of a · b. */
@@ -63,7 +63,7 @@ public final class Directed {
         if (Math.abs(q) < SAFE || Math.abs(a) < SAFE) {
             return Math.nextDown(q);
         }
-        double r = Math.fma(-q, b, a);
+        double r = ProductError.remainder(a, q, b);
         return (b > 0 ? r : -r) < 0 ? Math.nextDown(q) : q;
     }
 
@@ -81,7 +81,7 @@ public final class Directed {
         if (a < SAFE) {
             return Math.nextDown(r);
         }
-        return Math.fma(-r, r, a) < 0 ? Math.nextDown(r) : r;
+        return ProductError.remainder(a, r, r) < 0 ? Math.nextDown(r) : r;
     }
 
     /** Upper end of the square root. */
@@ -93,7 +93,7 @@ public final class Directed {
         if (a < SAFE) {
             return Math.nextUp(r);
         }
-        return Math.fma(-r, r, a) > 0 ? Math.nextUp(r) : r;
+        return ProductError.remainder(a, r, r) > 0 ? Math.nextUp(r) : r;
     }
 
     private static double sumError(double a, double b, double s) {

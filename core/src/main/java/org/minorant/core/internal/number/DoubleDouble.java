@@ -38,7 +38,7 @@ public record DoubleDouble(double hi, double lo) {
     /** The exact product of two doubles. */
     public static DoubleDouble product(double a, double b) {
         double p = a * b;
-        return new DoubleDouble(p, Math.fma(a, b, -p));
+        return new DoubleDouble(p, ProductError.of(a, b, p));
     }
 
     /** Nearest double-double to a decimal number (relative error at most 2^-105). */
@@ -72,13 +72,13 @@ public record DoubleDouble(double hi, double lo) {
 
     public DoubleDouble times(DoubleDouble o) {
         double p = hi * o.hi;
-        double e = Math.fma(hi, o.hi, -p);
+        double e = ProductError.of(hi, o.hi, p);
         return quick(p, e + (hi * o.lo + lo * o.hi));
     }
 
     public DoubleDouble times(double o) {
         double p = hi * o;
-        return quick(p, Math.fma(hi, o, -p) + lo * o);
+        return quick(p, ProductError.of(hi, o, p) + lo * o);
     }
 
     public DoubleDouble dividedBy(DoubleDouble o) {
