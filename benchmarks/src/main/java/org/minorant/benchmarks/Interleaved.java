@@ -45,9 +45,7 @@ final class Interleaved {
             for (int k = 0; k + 1 < n; k += 2) {
                 for (int t = 0; t < 4 && i + t < n; t++) {
                     int p = 2 * ((i + t) * n + k);
-                    add4(
-                            tile[t], a[p], a[p + 1], a[p + 2], a[p + 3], rows[k], turned[k], rows[k + 1],
-                            turned[k + 1]);
+                    add4(tile[t], a[p], a[p + 1], a[p + 2], a[p + 3], rows[k], turned[k], rows[k + 1], turned[k + 1]);
                 }
             }
             for (int t = 0; t < 4 && i + t < n; t++) {
