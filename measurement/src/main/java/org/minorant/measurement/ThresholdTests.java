@@ -1,9 +1,11 @@
 package org.minorant.measurement;
 
+import java.util.Arrays;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.HermitianOperator;
+import org.minorant.core.SpectralDecomposition;
 import org.minorant.core.WideDouble;
 
 /**
@@ -16,6 +18,9 @@ import org.minorant.core.WideDouble;
 final class ThresholdTests {
 
     private static final int MOST_STEPS = 40;
+
+    /** Up to this dimension eigenvectors are worked out to 30 digits, so that the entries are rounded but once; above, in double. */
+    private static final int FINE = 48;
 
     /** A type-II error this near the least is what entries stored in doubles can attain. */
     private static final double ATTAINED = 0x1p-51;
@@ -46,13 +51,23 @@ final class ThresholdTests {
         EnclosedMatrix difference = EnclosedMatrix.of(first)
                 .times(a)
                 .minus(EnclosedMatrix.of(second).times(b));
-        EnclosedSpectrum s = EnclosedSpectrum.of(difference.midpoint());
-        int n = s.dimension();
+        int n = first.dimension();
+        double[] values = new double[n];
+        EnclosedMatrix vectors;
+        if (n <= FINE) {
+            EnclosedSpectrum s = EnclosedSpectrum.of(difference.midpoint());
+            Arrays.setAll(values, s::value);
+            vectors = s.vectors();
+        } else {
+            SpectralDecomposition s = Projectors.hermitian(difference).spectralDecomposition();
+            values = s.eigenvalues();
+            vectors = EnclosedMatrix.of(s.vectors());
+        }
         int k = 0;
-        while (k < n && s.value(k) <= 0) {
+        while (k < n && values[k] <= 0) {
             k++;
         }
-        return k == n ? constant(0) : k == 0 ? constant(1) : Projectors.onto(s.vectors(), k, n);
+        return k == n ? constant(0) : k == 0 ? constant(1) : Projectors.onto(vectors, k, n);
     }
 
     /** The projector at the threshold t, scaled so that neither weight is far above one. */

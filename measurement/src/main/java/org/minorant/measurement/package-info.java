@@ -10,5 +10,8 @@
  * </ul>
  *
  * <p>Every number is a certified {@link org.minorant.core.Enclosure}; errors are carried as their own sums and are never one minus a success.
+ *
+ * <p><b>What is not covered.</b> The numbers hold for the states and operators as given. They say nothing about how well a device prepares or measures them, nor
+ * about an adversary: a safety or security argument that rests on them needs the review of somebody qualified in that field.
  */
 package org.minorant.measurement;

@@ -27,7 +27,7 @@ class HypothesisPairTest {
     void minimumErrorOfOneAndTwoCopies() {
         assertNear(0.3197224362268005353440389, HypothesisPair.of(X1, X2).minimumError(0.5), 1e-15);
         HypothesisPair two = HypothesisPair.of(Samples.power(X1, 2), Samples.power(X2, 2));
-        assertNear(0.2574710914690333082964585, two.minimumError(0.5), 1e-13);
+        assertNear(0.2574710914690333082964585, two.minimumError(0.5), 1e-15);
     }
 
     /** Computed, double precision and brute force: lengths, angle as a multiple of π, copies, value. */
@@ -37,16 +37,18 @@ class HypothesisPairTest {
         "0.8, 0.8, 0.5, 2, .17503846381456",
         "0.8, 0.8, 0.5, 3, .11175761347764",
         "0.8, 0.8, 0.5, 6, .04717073694610",
+        "0.8, 0.8, 0.5, 8, .02676518217410",
         "0.9, 0.5, 0.3333333333333333, 1, .30474375810233",
         "0.9, 0.5, 0.3333333333333333, 2, .22068476044478",
         "0.9, 0.5, 0.3333333333333333, 3, .17937071489262",
-        "0.9, 0.5, 0.3333333333333333, 6, .10730473766671"
+        "0.9, 0.5, 0.3333333333333333, 6, .10730473766671",
+        "0.9, 0.5, 0.3333333333333333, 8, .07815095440532"
     })
     void minimumErrorOfCopies(double r, double s, double angle, int copies, double expected) {
         HypothesisPair pair = HypothesisPair.of(
                 Samples.power(Samples.bloch(r, 0), copies), Samples.power(Samples.bloch(s, angle * Math.PI), copies));
-        // the entries of the powers are rounded, and so is the sheet
-        assertNear(expected, pair.minimumError(0.5), 1e-11);
+        // half a unit of the last digit given; beyond dimension 64 a dense pair is known to 1e-12
+        assertNear(expected, pair.minimumError(0.5), copies > 6 ? 2e-12 : 3e-13);
         assertEquals(expected, pair.minimumError(0.5).midpoint(), 1e-13);
     }
 

@@ -181,30 +181,98 @@ class PrettyGoodMeasurementTest {
         assertNear(1 - closed, pgm.successProbability(), 1e-13);
     }
 
-    /** Two nearly orthogonal kets: error ½(1 − √(1 − c²)) for equal priors, with c² = x²/(1 + x²) exactly, down to 1e-42. */
+    /**
+     * Two kets of any priors, exactly: with G the Gram matrix of √p ψ and √q φ, (√G)_12 = G_12/√(G_11 + G_22 + 2√det G) and the error is 2(√G)_12², in 60
+     * digits for exactly the amplitudes stored; down to 1e-48.
+     */
     @Test
-    void errorKeepsItsDigitsWhenTiny() {
-        for (int k = 1; k <= 70; k++) {
+    void errorOfTwoKetsKeepsItsDigits() {
+        for (int k = 0; k <= 80; k++) {
             double x = Math.scalb(1.0, -k);
-            Ensemble e = Ensemble.of(
-                    List.of(DensityOperator.ofKet(1, 0), x < 1e-8 ? DensityOperator.ofKet(x, 1) : unit(x)),
-                    new double[] {0.5, 0.5});
-            Enclosure error = PrettyGoodMeasurement.of(e).errorProbability();
-            if (x < 1e-8) {
-                // priors ½ and norms 1 and 1 + x²: exactly ½Tr|…| of a two-dimensional pair
-                BigDecimal b = BigDecimal.ONE.add(new BigDecimal(x).pow(2));
-                BigDecimal root = b.add(BigDecimal.ONE)
-                        .pow(2)
-                        .subtract(new BigDecimal(x).pow(2).multiply(BigDecimal.valueOf(4)))
-                        .sqrt(new MathContext(120));
-                // the least error of (1·ψ, b·φ)/2 is a quarter of 1 + b − root; the pretty-good error is within a
-                // relative x² of it
-                double least = b.add(BigDecimal.ONE).subtract(root).doubleValue() / 4;
-                assertEquals(least, error.midpoint(), least * 2e-7);
-            }
-            double width = 1e-26 / x;
-            assertTrue(error.relativeWidth() < Math.max(1e-14, width), "x " + x + ": " + error.relativeWidth());
+            double p = k % 3 == 0 ? 0.5 : 0x1p-20;
+            DensityOperator phi = k < 30 ? unit(x) : DensityOperator.ofKet(x, 1);
+            Enclosure error = PrettyGoodMeasurement.of(
+                            Ensemble.of(List.of(DensityOperator.ofKet(1, 0), phi), new double[] {p, 1 - p}))
+                    .errorProbability();
+            BigDecimal a = Samples.exact(phi.factor().columns().re(0, 0));
+            BigDecimal b = Samples.exact(phi.factor().columns().re(1, 0));
+            BigDecimal g11 = Samples.exact(p);
+            BigDecimal g22 = Samples.exact(1 - p).multiply(a.multiply(a).add(b.multiply(b)));
+            BigDecimal cross =
+                    Samples.exact(p).multiply(Samples.exact(1 - p)).multiply(a).multiply(a);
+            BigDecimal root = g11.multiply(g22).subtract(cross).sqrt(Samples.DIGITS);
+            BigDecimal exact =
+                    cross.multiply(BigDecimal.valueOf(2)).divide(g11.add(g22).add(root.add(root)), Samples.DIGITS);
+            String what = "x " + x + ", prior " + p + ": " + exact.round(new MathContext(20)) + " in "
+                    + error.toIntervalString(17);
+            assertTrue(error.contains(exact), what);
+            // H is known to 1e-27 absolutely, its blocks are of the size of √error
+            double width = 4e-15 + 1e-26 / Math.sqrt(exact.doubleValue());
+            assertTrue(error.relativeWidth() <= width, what);
         }
+    }
+
+    /** Mixed states with real entries: p_iρ_i S^(-½) p_jρ_j S^(-½) in a hundred digits, for exactly the entries stored. */
+    @Test
+    void mixedStatesAgainstDecimalArithmetic() {
+        Random random = new Random(55);
+        for (int k = 0; k < 12; k++) {
+            int d = 2 + random.nextInt(2);
+            int m = 2 + random.nextInt(2);
+            List<DensityOperator> states = new ArrayList<>();
+            for (int i = 0; i < m; i++) {
+                states.add(realState(d, k % 3 == 0 ? 1e-6 : 1, random));
+            }
+            double[] priors = m == 2 ? new double[] {0.25, 0.75} : new double[] {0.5, 0.375, 0.125};
+            PrettyGoodMeasurement pgm = PrettyGoodMeasurement.of(Ensemble.of(states, priors));
+            BigDecimal[][] s = ExactMatrices.zero(d);
+            for (int i = 0; i < m; i++) {
+                s = ExactMatrices.plus(s, ExactMatrices.of(states.get(i), priors[i]), BigDecimal.ONE);
+            }
+            BigDecimal[][] r = ExactMatrices.inverseRoot(s);
+            BigDecimal error = BigDecimal.ZERO;
+            for (int i = 0; i < m; i++) {
+                BigDecimal[][] left = ExactMatrices.times(ExactMatrices.of(states.get(i), priors[i]), r);
+                for (int j = 0; j < m; j++) {
+                    BigDecimal[][] right = ExactMatrices.times(ExactMatrices.of(states.get(j), priors[j]), r);
+                    BigDecimal exact = ExactMatrices.trace(ExactMatrices.times(left, right));
+                    Enclosure p = pgm.jointDistribution().probability(i, j);
+                    assertTrue(
+                            p.contains(exact),
+                            () -> exact.round(new MathContext(20)) + " in " + p.toIntervalString(17));
+                    assertTrue(p.width() < 1e-13, () -> p.toIntervalString(17));
+                    error = i == j ? error : error.add(exact);
+                }
+            }
+            assertTrue(pgm.errorProbability().contains(error));
+        }
+    }
+
+    /** AᵀA of a matrix with entries in sixty-fourths, plus a little of the identity, divided by its trace. */
+    private static DensityOperator realState(int d, double scale, Random random) {
+        double[][] a = new double[d][d];
+        for (double[] row : a) {
+            for (int j = 0; j < d; j++) {
+                row[j] = (random.nextInt(129) - 64) / 64.0 * (j == 0 ? 1 : scale);
+            }
+        }
+        double[][] re = new double[d][d];
+        double trace = 0;
+        for (int i = 0; i < d; i++) {
+            for (int j = 0; j < d; j++) {
+                for (int k = 0; k < d; k++) {
+                    re[i][j] += a[i][k] * a[j][k];
+                }
+                re[i][j] += i == j ? 0x1p-10 * scale : 0;
+            }
+            trace += re[i][i];
+        }
+        for (double[] row : re) {
+            for (int j = 0; j < d; j++) {
+                row[j] /= trace;
+            }
+        }
+        return DensityOperator.ofReal(re);
     }
 
     private static DensityOperator unit(double x) {

@@ -8,7 +8,6 @@ import java.util.Random;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
 import org.minorant.core.HermitianOperator;
-import org.minorant.core.Operator;
 
 /** States, measurements and exact sums that several tests share. */
 final class Samples {
@@ -134,33 +133,12 @@ final class Samples {
         return Ensemble.of(list, p);
     }
 
-    /** The entries of the n-fold tensor power, by repeated Kronecker products rounded to double. */
     static DensityOperator power(DensityOperator rho, int n) {
-        Operator a = rho;
+        DensityOperator a = rho;
         for (int k = 1; k < n; k++) {
-            a = kronecker(a, rho);
+            a = a.tensor(rho);
         }
-        return DensityOperator.of(HermitianOperator.of(a));
-    }
-
-    private static Operator kronecker(Operator a, Operator b) {
-        int n = a.rows() * b.rows();
-        double[][] re = new double[n][n];
-        double[][] im = new double[n][n];
-        for (int i = 0; i < n; i++) {
-            for (int j = 0; j <= i; j++) {
-                int r = b.rows();
-                double x = a.re(i / r, j / r);
-                double y = a.im(i / r, j / r);
-                double v = b.re(i % r, j % r);
-                double w = b.im(i % r, j % r);
-                re[i][j] = x * v - y * w;
-                re[j][i] = re[i][j];
-                im[i][j] = i == j ? 0 : x * w + y * v;
-                im[j][i] = -im[i][j];
-            }
-        }
-        return Operator.of(re, im);
+        return a;
     }
 
     /** The n-fold tensor power of a ket, (amplitude, part), normalised. */

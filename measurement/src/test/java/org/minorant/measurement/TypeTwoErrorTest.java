@@ -132,6 +132,43 @@ class TypeTwoErrorTest {
         assertTrue(beta.contains(0.5) && beta.upper() >= 1 - 1e-15, beta::toString);
     }
 
+    /** ρ mixes two kets that are not orthogonal; Tr σΠ = v*G⁻¹v with G their Gram matrix and v their overlaps with the ket of σ, exactly. */
+    @Test
+    void levelZeroOfAMixtureOfKets() {
+        double[] a = {0.6, 0.8, 0, 0};
+        double[] b = {0.6, 0, 0.8, 0};
+        for (double tilt : new double[] {1, 0x1p-10, 0x1p-40}) {
+            double[] s = {0.5 * tilt, -0.25 * tilt, 0.125 * tilt, 1};
+            double norm = Math.sqrt(1 + tilt * tilt * (0.25 + 0.0625 + 0.015625));
+            java.util.Arrays.setAll(s, i -> s[i] / norm);
+            Enclosure beta = HypothesisPair.of(
+                            DensityOperator.mixture(
+                                    java.util.List.of(DensityOperator.ofKet(a), DensityOperator.ofKet(b)), 0.5, 0.5),
+                            DensityOperator.ofKet(s))
+                    .typeTwoError(0);
+            BigDecimal aa = dot(a, a);
+            BigDecimal ab = dot(a, b);
+            BigDecimal bb = dot(b, b);
+            BigDecimal as = dot(a, s);
+            BigDecimal bs = dot(b, s);
+            BigDecimal exact = bb.multiply(as)
+                    .multiply(as)
+                    .subtract(ab.multiply(as).multiply(bs).multiply(BigDecimal.valueOf(2)))
+                    .add(aa.multiply(bs).multiply(bs))
+                    .divide(aa.multiply(bb).subtract(ab.multiply(ab)), Samples.DIGITS);
+            assertTrue(beta.contains(exact), () -> exact.doubleValue() + " in " + beta.toIntervalString(17));
+            assertTrue(beta.relativeWidth() < 1e-13, () -> beta.toIntervalString(17));
+        }
+    }
+
+    private static BigDecimal dot(double[] x, double[] y) {
+        BigDecimal s = BigDecimal.ZERO;
+        for (int i = 0; i < x.length; i++) {
+            s = s.add(Samples.exact(x[i]).multiply(Samples.exact(y[i])));
+        }
+        return s;
+    }
+
     @Test
     void largeLevelsLeaveNothing() {
         DensityOperator rho = DensityOperator.ofEigenvalues(0.5, 0.25, 0.25);
