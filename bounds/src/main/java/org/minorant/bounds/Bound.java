@@ -6,11 +6,14 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.Information;
 
 /**
- * One certified bound on a number: its value, the side on which it stands, the theorem behind it and the hypotheses of that theorem that were
+ * One certified bound on a number: its value, the side on which it stands, the theorem behind it and the hypotheses of that theorem that
+ * were
  * checked before it was applied.
  *
- * <p><b>Value.</b> The bound is itself a number of which an enclosure is known. If it is a lower bound, the number it bounds is at least {@code
- * value().lower()}; if an upper bound, at most {@code value().upper()}; if exact, between the two. Bounds on amounts of information hold their
+ * <p><b>Value.</b> The bound is itself a number of which an enclosure is known. If it is a lower bound, the number it bounds is at least
+ * {@code
+ * value().lower()}; if an upper bound, at most {@code value().upper()}; if exact, between the two. Bounds on amounts of information hold
+ * their
  * value in nats and give it as {@link #information()} too.
  *
  * <p>Immutable and thread-safe.

@@ -88,7 +88,7 @@ public final class Ledger implements Iterable<Bound> {
      * @return an unmodifiable list, see the class comment for its order
      */
     public List<Bound> bounds() {
-        return bounds;
+        return List.copyOf(bounds);
     }
 
     /**

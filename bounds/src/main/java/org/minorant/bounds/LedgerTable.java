@@ -6,7 +6,7 @@ import java.util.List;
 /** Prints a ledger as a table of plain text: columns as wide as their longest entry, two spaces apart. */
 final class LedgerTable {
 
-    private static final List<String> HEADER = List.of("side", "value", "theorem", "source", "checked");
+    private static final List<String> HEADER = List.of("side", "value", "theorem", "checked", "source");
 
     private LedgerTable() {}
 
@@ -20,8 +20,8 @@ final class LedgerTable {
                             ? b.information().get().toString()
                             : b.value().toString(),
                     b.theorem().name(),
-                    b.theorem().source(),
-                    b.hypotheses().isEmpty() ? "-" : String.join("; ", b.hypotheses())));
+                    b.hypotheses().isEmpty() ? "-" : String.join("; ", b.hypotheses()),
+                    b.theorem().source()));
         }
         int[] width = new int[HEADER.size()];
         for (List<String> row : rows) {

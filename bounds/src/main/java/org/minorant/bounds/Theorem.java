@@ -11,6 +11,8 @@ public record Theorem(String name, String source) {
     /**
      * Validates the texts.
      *
+     * @param name the usual name of the theorem
+     * @param source where it is published
      * @throws org.minorant.core.InvalidInputException if one is blank
      */
     public Theorem {

@@ -1,0 +1,304 @@
+package org.minorant.bounds;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import java.util.Optional;
+import java.util.stream.IntStream;
+import org.minorant.core.DensityOperator;
+import org.minorant.core.Enclosure;
+import org.minorant.core.Information;
+import org.minorant.core.InvalidInputException;
+import org.minorant.core.WideDouble;
+
+/**
+ * What codes for one use of a classical-quantum channel can and cannot do, certified from both sides.
+ *
+ * <p>A code of M messages is a letter x(m) for each message and a measurement {T_m}; its average error is 1 − (1/M) Σ_m Tr[W_x(m) T_m]. All
+ * bounds here are on the <em>average</em> error probability. A converse for the average error holds for the largest error, too; an
+ * achievable average error ε gives a code with half the messages and a largest error of at most 2ε.
+ *
+ * <p><b>Real and whole M.</b> Formulas are evaluated for real M ≥ 1, as in the literature, so that thresholds vary smoothly. A code has a whole number of
+ * messages: a threshold ln M from {@link #achievable} promises a code of ⌊M⌋ messages, and a threshold below two messages is returned as ln M = 0, one
+ * message, which never fails. {@link #ledger} counts whole messages.
+ *
+ * <p><b>What is proved.</b> Enclosures hold the value of the named formula at the chosen input distribution and output state; they hold for states and
+ * distributions as given and for those divided by their sums. The bounds say nothing about channels that are only approximately known: where safety or
+ * security depends on them, the description of the channel needs a qualified review of its own.
+ *
+ * <p><b>Defaults.</b> Input: the one that attains the capacity (the uniform one if that does). Output state: that of the capacity.
+ *
+ * <p>Immutable and thread-safe.
+ */
+public final class CodingBounds {
+
+    private final ClassicalQuantumChannel channel;
+    private final Optional<double[]> chosenInput;
+    private final Optional<DensityOperator> chosenOutput;
+    private final Lazy<Curve> mean;
+    private final Lazy<LetterCurves> letters;
+
+    private CodingBounds(
+            ClassicalQuantumChannel channel, Optional<double[]> chosenInput, Optional<DensityOperator> chosenOutput) {
+        this.channel = channel;
+        this.chosenInput = chosenInput;
+        this.chosenOutput = chosenOutput;
+        this.mean = new Lazy<>(this::makeMean);
+        this.letters = new Lazy<>(this::makeLetters);
+    }
+
+    /**
+     * Returns the bounds for one use of a channel, with the default input and output state.
+     *
+     * @param channel the channel
+     * @return the bounds
+     */
+    public static CodingBounds of(ClassicalQuantumChannel channel) {
+        return new CodingBounds(channel, Optional.empty(), Optional.empty());
+    }
+
+    /**
+     * Returns the same bounds with another input distribution for the codewords of the achievability bounds.
+     *
+     * @param input a distribution over the letters, summing to one within letters · 2^-50
+     * @return the bounds with that input
+     * @throws InvalidInputException if the input is not a distribution over the letters
+     */
+    public CodingBounds withInput(double... input) {
+        double[] p = ChannelChecks.input("CodingBounds.withInput", input, channel.letters());
+        return new CodingBounds(channel, Optional.of(p), chosenOutput);
+    }
+
+    /**
+     * Returns the same bounds with another output state for the converse.
+     *
+     * @param sigma a state of the output system
+     * @return the bounds with that state
+     * @throws InvalidInputException if its dimension is not that of the outputs
+     */
+    public CodingBounds withOutputState(DensityOperator sigma) {
+        if (sigma.dimension() != channel.dimension()) {
+            throw new InvalidInputException(
+                    "CodingBounds.withOutputState",
+                    "the state has dimension " + sigma.dimension(),
+                    channel.dimension() + ", as the outputs",
+                    "give a state of the output system");
+        }
+        return new CodingBounds(channel, chosenInput, Optional.of(sigma));
+    }
+
+    private Curve makeMean() {
+        double[] p = input();
+        int[] used = IntStream.range(0, p.length).filter(x -> p[x] > 0).toArray();
+        double[] weights = Arrays.stream(used).mapToDouble(x -> p[x]).toArray();
+        return channel.structure().againstMixture(used, p).mean(weights);
+    }
+
+    private LetterCurves makeLetters() {
+        int[] all = IntStream.range(0, channel.letters()).toArray();
+        return chosenOutput.isPresent()
+                ? channel.structure().against(all, chosenOutput.get())
+                : channel.structure().againstMixture(all, channel.capacity().input());
+    }
+
+    /**
+     * Returns the channel.
+     *
+     * @return the channel
+     */
+    public ClassicalQuantumChannel channel() {
+        return channel;
+    }
+
+    /**
+     * Returns the input distribution of the achievability bounds.
+     *
+     * @return one probability for each letter, a copy
+     */
+    public double[] input() {
+        return chosenInput.isPresent()
+                ? chosenInput.get().clone()
+                : channel.capacity().input();
+    }
+
+    /**
+     * Returns the output state of the converse.
+     *
+     * @return the state
+     */
+    public DensityOperator outputState() {
+        return chosenOutput.isPresent()
+                ? chosenOutput.get()
+                : channel.capacity().outputState();
+    }
+
+    /**
+     * Returns an average error that some code of M messages surely does not exceed: f(M − 1) at the chosen input P, where
+     *
+     * <pre>f(t) = Tr[ρ_XB ∧ t ρ_X ⊗ ρ_B] = Σ_x P(x) Tr[W_x ∧ t ρ_B],   ρ_B = Σ_x P(x) W_x.</pre>
+     *
+     * <p>Source: H.-C. Cheng, PRX Quantum 4, 040330 (2023). On classical channels it is the dependence-testing bound with M − 1 in place of (M − 1)/2.
+     *
+     * @param messages M, at least 1
+     * @return f(M − 1); 0 for one message
+     * @throws InvalidInputException if M is below 1
+     */
+    public Enclosure achievableError(long messages) {
+        return RandomCoding.error(mean.get(), MessageCount.others("CodingBounds.achievableError", messages));
+    }
+
+    /**
+     * Returns f(M − 1) as {@link #achievableError(long)}, for a real M of any size given by its logarithm.
+     *
+     * @param messages ln M, at least 0; its own enclosure is carried through
+     * @return f(M − 1)
+     * @throws InvalidInputException if ln M is negative or beyond 7e8
+     */
+    public Enclosure achievableError(Information messages) {
+        return RandomCoding.error(mean.get(), MessageCount.others("CodingBounds.achievableError", messages));
+    }
+
+    /**
+     * Returns the largest ln M with f(M − 1) ≤ ε at the chosen input: some code of ⌊M⌋ messages has an average error of at most ε.
+     *
+     * <p>The lower end is certified by a value of f not above ε, the upper end by one above.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold; 0 if it lies below two messages, and from 0 if that is not certain
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information achievable(double epsilon) {
+        ChannelChecks.error("CodingBounds.achievable", epsilon);
+        return MessageCount.threshold(others(epsilon), RandomCoding.THEOREM);
+    }
+
+    private Enclosure others(double epsilon) {
+        WideDouble saturation = LetterCurves.saturation(input()).max(WideDouble.of(2));
+        return RandomCoding.others(mean.get(), epsilon, saturation);
+    }
+
+    /**
+     * Returns the older bound on the average error of some code of M messages, for comparison: the least value over all tests and c &gt; 0 of (1+c)
+     * Tr[ρ_XB (1−T)] + (2+c+1/c)(M−1) Tr[ρ_X ⊗ ρ_B T]. Never better than {@link #achievableError(long)}; enclosed to about 1e-11 relative.
+     *
+     * <p>Source: M. Hayashi, H. Nagaoka, IEEE Trans. Inf. Theory 49, 1753 (2003), lemma 2 (from memory).
+     *
+     * @param messages M, at least 1
+     * @return the bound, at most 1; 0 for one message
+     * @throws InvalidInputException if M is below 1
+     */
+    public Enclosure hayashiNagaokaError(long messages) {
+        return HayashiNagaoka.error(mean.get(), MessageCount.others("CodingBounds.hayashiNagaokaError", messages));
+    }
+
+    /**
+     * Returns the older bound as {@link #hayashiNagaokaError(long)}, for a real M of any size given by its logarithm.
+     *
+     * @param messages ln M, at least 0
+     * @return the bound, at most 1
+     * @throws InvalidInputException if ln M is negative or beyond 7e8
+     */
+    public Enclosure hayashiNagaokaError(Information messages) {
+        return HayashiNagaoka.error(mean.get(), MessageCount.others("CodingBounds.hayashiNagaokaError", messages));
+    }
+
+    /**
+     * Returns the largest ln M at which {@link #hayashiNagaokaError(long)} is at most ε, with the reading of {@link #achievable}.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold; 0 if it lies below two messages, and from 0 if that is not certain
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information hayashiNagaoka(double epsilon) {
+        ChannelChecks.error("CodingBounds.hayashiNagaoka", epsilon);
+        return MessageCount.threshold(
+                HayashiNagaoka.others(mean.get(), epsilon, others(epsilon)), HayashiNagaoka.THEOREM);
+    }
+
+    /**
+     * Returns an average error below which no code of M messages can be: with the chosen output state σ,
+     *
+     * <pre>ε ≥ sup over s ≥ 0 of  min_x Tr[W_x ∧ sσ] − s/M.</pre>
+     *
+     * @param messages M, at least 1
+     * @return the bound; 0 for one message
+     * @throws InvalidInputException if M is below 1
+     */
+    public Enclosure converseError(long messages) {
+        Enclosure m = MessageCount.messages("CodingBounds.converseError", messages);
+        return TraceMinimumConverse.error(letters.get().leastAgainst(), m);
+    }
+
+    /**
+     * Returns the error that no code undercuts as {@link #converseError(long)}, for a real M of any size given by its logarithm.
+     *
+     * @param messages ln M, at least 0
+     * @return the bound
+     * @throws InvalidInputException if ln M is negative or beyond 7e8
+     */
+    public Enclosure converseError(Information messages) {
+        Enclosure m = MessageCount.messages("CodingBounds.converseError", messages);
+        return TraceMinimumConverse.error(letters.get().leastAgainst(), m);
+    }
+
+    /**
+     * Returns ln M that no code of average error ε exceeds: with the chosen output state σ,
+     *
+     * <pre>ln M ≤ −ln sup over t ≥ 0 of  min_x Tr[tW_x ∧ σ] − tε.</pre>
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the bound, enclosed; its upper end is surely not exceeded. Infinite if some output is orthogonal to σ
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information converse(double epsilon) {
+        ChannelChecks.error("CodingBounds.converse", epsilon);
+        return TraceMinimumConverse.messages(letters.get().least(), epsilon);
+    }
+
+    /**
+     * Returns the weak converse ln M ≤ (C + h(ε))/(1 − ε) from Fano's and Holevo's inequalities.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the bound
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information weakConverse(double epsilon) {
+        ChannelChecks.error("CodingBounds.weakConverse", epsilon);
+        return FanoHolevo.messages(channel.capacity().value(), epsilon);
+    }
+
+    /**
+     * Returns every bound on ln of the largest whole number of messages that one use carries with average error at most ε.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the bounds in order, with their sources
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Ledger ledger(double epsilon) {
+        ChannelChecks.error("CodingBounds.ledger", epsilon);
+        Enclosure root = others(epsilon);
+        Enclosure older = HayashiNagaoka.others(mean.get(), epsilon, root);
+        List<String> whole = List.of("whole messages");
+        List<Bound> bounds = new ArrayList<>();
+        bounds.add(Bound.of(Side.LOWER, MessageCount.whole(older), HayashiNagaoka.THEOREM, whole));
+        bounds.add(Bound.of(Side.LOWER, MessageCount.whole(root), RandomCoding.THEOREM, whole));
+        bounds.add(Bound.of(Side.UPPER, converse(epsilon), TraceMinimumConverse.THEOREM, List.of()));
+        bounds.add(Bound.of(Side.UPPER, weakConverse(epsilon), FanoHolevo.THEOREM, List.of()));
+        return Ledger.of("logarithm of the largest number of messages at average error " + epsilon, bounds);
+    }
+
+    /**
+     * Returns every bound on the least average error of a code of M messages in one use.
+     *
+     * @param messages M, at least 1
+     * @return the bounds in order, with their sources
+     * @throws InvalidInputException if M is below 1
+     */
+    public Ledger errorLedger(long messages) {
+        List<Bound> bounds = new ArrayList<>();
+        bounds.add(Bound.of(Side.LOWER, converseError(messages), TraceMinimumConverse.THEOREM, List.of()));
+        bounds.add(Bound.of(Side.UPPER, achievableError(messages), RandomCoding.THEOREM, List.of()));
+        bounds.add(Bound.of(Side.UPPER, hayashiNagaokaError(messages), HayashiNagaoka.THEOREM, List.of()));
+        return Ledger.of("least average error of a code of " + messages + " messages", bounds);
+    }
+}

@@ -1,0 +1,45 @@
+package org.minorant.bounds;
+
+import java.util.List;
+import java.util.Optional;
+import org.minorant.bounds.divergence.Ball;
+import org.minorant.bounds.divergence.SpectralState;
+import org.minorant.bounds.divergence.StatePair;
+
+/**
+ * P_e ≥ ½ Σ_ij |⟨u_i|v_j⟩|² min(p a_i, (1−p) b_j) with a_i, u_i and b_j, v_j eigenvalues and eigenvectors of ρ and σ.
+ *
+ * <p><b>Accuracy.</b> The sum is that of the certified spectral decompositions at the lower ends of their eigenvalues. These operators lie
+ * below pρ and
+ * (1−p)σ, so that the theorem for them and monotonicity of Tr[A ∧ B] give the bound for the states themselves.
+ */
+final class HalfNussbaumSzkola implements TestingBound {
+
+    private static final Theorem THEOREM = new Theorem(
+            "half the Nussbaum-Szkola error",
+            "M. Nussbaum, A. Szkoła, Ann. Statist. 37, 1040 (2009), proposition 2 and its proof (from memory)");
+
+    @Override
+    public Optional<Bound> on(TestingProblem problem) {
+        if (!problem.hasTwoStates()) {
+            return Optional.empty();
+        }
+        StatePair pair = problem.spectra();
+        SpectralState a = pair.first();
+        SpectralState b = pair.second();
+        Ball p = Ball.of(problem.prior());
+        Ball q = Ball.difference(1, problem.prior());
+        Ball sum = Ball.ZERO;
+        for (int i = 0; i < a.rank(); i++) {
+            for (int j = 0; j < b.rank(); j++) {
+                Ball least = a.values().get(i).times(p).min(b.values().get(j).times(q));
+                sum = sum.plus(pair.square(i, j).times(least));
+            }
+        }
+        return Optional.of(Bound.of(
+                Side.LOWER,
+                sum.times(0.5).toEnclosure().clip(0, Double.POSITIVE_INFINITY),
+                THEOREM,
+                List.of(TestingProblem.BOTH_POSSIBLE)));
+    }
+}

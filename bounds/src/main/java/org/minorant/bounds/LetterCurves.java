@@ -1,0 +1,82 @@
+package org.minorant.bounds;
+
+import java.util.List;
+import org.minorant.core.Enclosure;
+import org.minorant.core.WideDouble;
+import org.minorant.core.pair.PositivePair;
+
+/**
+ * The curves t ↦ Tr[W_x ∧ tσ] of some letters of a channel against one state of its output.
+ *
+ * <p><b>Normalisation.</b> Traces and sums of probabilities are one up to rounding only. Scaling A by λ and B by μ scales Tr[A ∧ B] by a number
+ * between λ and μ, so the values for the operators given, times an enclosure of such factors, enclose the values for the operators divided
+ * by their traces; the factor's enclosure includes 1, so that they enclose the values for those given, too.
+ */
+final class LetterCurves {
+
+    private final List<PositivePair> pairs;
+    private final Enclosure traces;
+    private final Enclosure factor;
+
+    /**
+     * Collects the curves.
+     *
+     * @param pairs one pair for each letter
+     * @param traces what holds the traces of the letters' outputs
+     * @param trace what holds the trace of the state, over its true value relative to the pairs' second operator
+     */
+    LetterCurves(List<PositivePair> pairs, Enclosure traces, Enclosure trace) {
+        this.pairs = List.copyOf(pairs);
+        this.traces = traces;
+        this.factor = Enclosure.ONE
+                .dividedBy(traces)
+                .hull(Enclosure.ONE.dividedBy(trace))
+                .hull(Enclosure.ONE);
+    }
+
+    /**
+     * Mixes the curves against the mixture of the letters themselves, ρ = Σ_x P(x) W_x.
+     *
+     * <p>As W_x ≤ ρ/P(x), the curve is Σ_x P(x) Tr W_x from t = 1/min P on. There the pairs need not be asked.
+     *
+     * @param weights one positive weight for each letter, summing to one up to rounding
+     * @return t ↦ Σ_x P(x) Tr[W_x ∧ tρ]
+     */
+    Curve mean(double[] weights) {
+        PositivePair sum = PositivePair.directSum(pairs, weights);
+        Enclosure total = Traces.sum(weights);
+        Enclosure scale = Enclosure.ONE.dividedBy(total).times(factor).hull(factor);
+        Enclosure most = total.times(traces).hull(Enclosure.ONE);
+        WideDouble saturation = saturation(weights);
+        return t -> t.compareTo(saturation) >= 0
+                ? most
+                : sum.traceMinimum(WideDouble.ONE, t).times(scale);
+    }
+
+    /** A point beyond 1/min P, also for weights that miss their sum by a rounding. */
+    static WideDouble saturation(double[] weights) {
+        WideDouble least = WideDouble.POSITIVE_INFINITY;
+        for (double w : weights) {
+            least = w > 0 ? least.min(WideDouble.of(w)) : least;
+        }
+        return WideDouble.ONE.dividedByUp(least).timesUp(WideDouble.of(1 + 0x1p-30));
+    }
+
+    /** t ↦ min over x of Tr[tW_x ∧ σ]. */
+    Curve least() {
+        return t -> least(t, WideDouble.ONE);
+    }
+
+    /** s ↦ min over x of Tr[W_x ∧ sσ]. */
+    Curve leastAgainst() {
+        return s -> least(WideDouble.ONE, s);
+    }
+
+    private Enclosure least(WideDouble a, WideDouble b) {
+        Enclosure least = Enclosure.infinite();
+        for (PositivePair pair : pairs) {
+            least = least.min(pair.traceMinimum(a, b));
+        }
+        return least.times(factor);
+    }
+}

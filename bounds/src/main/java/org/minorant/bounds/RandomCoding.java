@@ -1,0 +1,61 @@
+package org.minorant.bounds;
+
+import org.minorant.core.Enclosure;
+import org.minorant.core.WideDouble;
+
+/**
+ * The one-shot achievability bound by f: M codewords drawn independently from P, decoded with the pretty-good measurement, have an expected
+ * average error of at most
+ *
+ * <pre>f(M − 1) = Tr[ρ_XB ∧ (M − 1) ρ_X ⊗ ρ_B] = Σ_x P(x) Tr[W_x ∧ (M − 1) ρ_B],   ρ_B = Σ_x P(x) W_x,</pre>
+ *
+ * so some code of M messages has an average error no larger. Nothing is assumed of channel or input.
+ */
+final class RandomCoding {
+
+    static final Theorem THEOREM = new Theorem(
+            "one-shot random coding, f(M-1)",
+            "H.-C. Cheng, PRX Quantum 4, 040330 (2023), one-shot achievability (theorem number from memory)");
+
+    private RandomCoding() {}
+
+    /** The bound on the error with M − 1 other messages. */
+    static Enclosure error(Curve f, Enclosure others) {
+        return f.over(others).clip(0, 1);
+    }
+
+    /**
+     * The largest M − 1, real, with f(M − 1) ≤ ε; below 1 only its upper end is meant.
+     *
+     * @param f the curve of the channel and its input
+     * @param epsilon the error allowed
+     * @param saturation a point where f is 1: W_x ≤ ρ_B/P(x), so the inverse of the least positive probability
+     */
+    static Enclosure others(Curve f, double epsilon, WideDouble saturation) {
+        WideDouble level = WideDouble.of(epsilon);
+        WideDouble low = WideDouble.ONE;
+        Enclosure atOne = f.at(low);
+        if (atOne.lowerWide().compareTo(level) > 0) {
+            return Enclosure.of(WideDouble.ZERO, WideDouble.of(Math.nextDown(1.0)));
+        }
+        boolean certain = atOne.upperWide().compareTo(level) <= 0;
+        WideDouble high = low;
+        for (long power = 1; ; power *= 2) {
+            high = high.timesPowerOfTwo(power);
+            if (high.compareTo(saturation) >= 0) {
+                high = saturation;
+                break;
+            }
+            Enclosure value = f.at(high);
+            if (value.lowerWide().compareTo(level) > 0) {
+                break;
+            }
+            if (value.upperWide().compareTo(level) <= 0) {
+                low = high;
+                certain = true;
+            }
+        }
+        Enclosure root = CurveRoot.of(f, epsilon, low, high);
+        return certain ? root : Enclosure.of(WideDouble.ZERO, root.upperWide());
+    }
+}
