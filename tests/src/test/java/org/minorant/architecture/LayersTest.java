@@ -14,9 +14,13 @@ import com.tngtech.archunit.core.domain.JavaMember;
 import com.tngtech.archunit.core.domain.JavaModifier;
 import com.tngtech.archunit.core.domain.JavaType;
 import com.tngtech.archunit.core.importer.ClassFileImporter;
+import com.tngtech.archunit.core.importer.Location;
 import com.tngtech.archunit.lang.ArchCondition;
 import com.tngtech.archunit.lang.ConditionEvents;
 import com.tngtech.archunit.lang.SimpleConditionEvent;
+import java.net.URI;
+import java.nio.file.Files;
+import java.nio.file.Path;
 import java.util.LinkedHashSet;
 import java.util.Set;
 import java.util.stream.Stream;
@@ -32,9 +36,15 @@ class LayersTest {
     @BeforeAll
     static void read() {
         published = new ClassFileImporter()
-                .importPaths(BuiltModules.PUBLISHED.stream()
+                .importLocations(BuiltModules.PUBLISHED.stream()
                         .map(BuiltModules::location)
+                        .map(LayersTest::asLocation)
                         .toList());
+    }
+
+    /** Classes lie in a directory after {@code mvn test}, in a jar after {@code mvn verify}. */
+    private static Location asLocation(Path built) {
+        return Files.isDirectory(built) ? Location.of(built) : Location.of(URI.create("jar:" + built.toUri() + "!/"));
     }
 
     @Test

@@ -1,0 +1,113 @@
+package org.minorant.tests.contract;
+
+import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertTrue;
+
+import java.util.List;
+import org.junit.jupiter.api.Test;
+import org.minorant.bounds.Capacity;
+import org.minorant.bounds.ClassicalQuantumChannel;
+import org.minorant.bounds.CodingBounds;
+import org.minorant.bounds.Ledger;
+import org.minorant.bounds.Side;
+import org.minorant.bounds.TestingBounds;
+import org.minorant.core.Complex;
+import org.minorant.core.DensityOperator;
+import org.minorant.core.Enclosure;
+import org.minorant.core.Information;
+import org.minorant.core.state.LightStates;
+import org.minorant.core.state.TruncatedState;
+import org.minorant.core.state.Truncation;
+import org.minorant.measurement.Ensemble;
+import org.minorant.measurement.HypothesisPair;
+import org.minorant.measurement.PrettyGoodMeasurement;
+import org.minorant.measurement.TradeOffCurve;
+
+/** The tour of README, block by block, and that its comments are true. */
+class TourTest {
+
+    @Test
+    void twoStates() {
+        // snippet two-states
+        DensityOperator rho = DensityOperator.ofBloch(0.0, 0.0, 0.9);
+        DensityOperator sigma = DensityOperator.ofBloch(0.6, 0.0, 0.5);
+        HypothesisPair pair = HypothesisPair.of(rho, sigma);
+
+        Enclosure error = pair.minimumError(0.5); // prior of the first state: about 0.3197
+        Enclosure missed = pair.typeTwoError(0.01); // least type-II error where the type-I error is at most 0.01
+        TradeOffCurve curve = pair.tradeOffCurve(1e-3); // both errors at once, between two convex polygons
+        Ledger ledger = TestingBounds.of(pair, 0.5); // prints as a table: side, value, theorem, source
+        // end snippet
+
+        assertEquals(0.3197, error.midpoint(), 5e-5);
+        assertTrue(curve.typeTwoError(0.01).widen(1e-12).contains(missed.midpoint()));
+        assertTrue(curve.gap() <= 1e-3);
+        assertTrue(ledger.bounds(Side.LOWER).size() >= 2
+                && ledger.bounds(Side.UPPER).size() >= 3);
+        assertTrue(ledger.toString()
+                .lines()
+                .skip(1)
+                .findFirst()
+                .orElseThrow()
+                .matches("side +value +theorem +.*source.*"));
+    }
+
+    @Test
+    void smallAnswers() {
+        // snippet small-answers
+        HypothesisPair nearlyOrthogonal =
+                HypothesisPair.of(DensityOperator.ofKet(1, 0), DensityOperator.ofKet(1e-30, 1));
+        Enclosure tiny = nearlyOrthogonal.minimumError(0.5); // 2.5e-61
+        double width = tiny.relativeWidth(); // (upper - lower) / lower, below 1e-9
+        // end snippet
+
+        // the decimal 1e-30 is a double within 1e-46, so the overlap squared over four is 2.5e-61 to 15 digits
+        assertEquals(2.5e-61, tiny.midpoint(), 1e-75);
+        assertTrue(width < 1e-9, tiny::toString);
+    }
+
+    @Test
+    void familiesOfStates() {
+        // snippet light
+        TruncatedState light = LightStates.displacedThermal(new Complex(1.1, 0), 0.1, Truncation.ofTail(1e-9));
+        DensityOperator seen = light.state(); // on as many photon numbers as that tail asks for
+        double away = light.traceDistanceBound(); // from the ideal state: a model error, in no enclosure
+        // end snippet
+
+        assertEquals(light.dimension(), seen.dimension());
+        assertTrue(light.discardedWeight().upper() <= 1e-9);
+        // cutting off weight w moves a state by at most sqrt(w)
+        assertTrue(away > 0 && away <= 4e-5, () -> String.valueOf(away));
+    }
+
+    @Test
+    void severalStatesAndAChannel() {
+        // snippet several-states
+        List<DensityOperator> trine = List.of(
+                DensityOperator.ofKet(1, 0),
+                DensityOperator.ofKet(-0.5, Math.sqrt(0.75)),
+                DensityOperator.ofKet(-0.5, -Math.sqrt(0.75)));
+        PrettyGoodMeasurement measurement = PrettyGoodMeasurement.of(Ensemble.equiprobable(trine));
+        Enclosure success = measurement.successProbability(); // 2/3
+        Enclosure least =
+                measurement.optimalErrorProbability(); // what no measurement undercuts, and what this one reaches
+        // end snippet
+
+        assertEquals(2.0 / 3, success.midpoint(), 1e-14);
+        assertTrue(least.contains(1.0 / 3) || Math.abs(least.upper() - 1.0 / 3) < 1e-14, least::toString);
+
+        // snippet channel
+        ClassicalQuantumChannel channel = ClassicalQuantumChannel.of(trine);
+        Capacity capacity =
+                channel.capacity(); // its value is certified from both sides, with the input that nearly attains it
+        CodingBounds once = CodingBounds.of(channel);
+        Enclosure reached = once.achievableError(2); // some code of two messages has at most this average error
+        Information limit = once.converse(0.25); // ln M that no code with average error 0.25 exceeds
+        // end snippet
+
+        // three kets in a plane whose average is the maximally mixed state: one bit
+        assertEquals(1, capacity.value().bits().midpoint(), 1e-9);
+        assertTrue(reached.upper() < 1);
+        assertTrue(limit.nats().lower() > 0 && limit.nats().upper() < Double.POSITIVE_INFINITY);
+    }
+}
