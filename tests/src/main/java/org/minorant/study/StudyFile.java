@@ -1,0 +1,67 @@
+package org.minorant.study;
+
+import java.nio.file.Path;
+import java.util.List;
+
+/**
+ * What a study file says. Every name has been checked: states exist, lists are not empty, numbers lie in their ranges.
+ *
+ * @param path the study file, for messages
+ * @param title the title, or the file's name if it gives none
+ * @param states the states, in the order of the file
+ * @param pairs the pairs of states to tell apart
+ * @param ensembles the ensembles to tell apart
+ * @param channels the channels to code for
+ * @param errors error levels in increasing order
+ * @param messages numbers of messages in increasing order
+ * @param output the directory that results go to
+ */
+record StudyFile(
+        Path path,
+        String title,
+        List<StateLine> states,
+        List<PairLine> pairs,
+        List<EnsembleLine> ensembles,
+        List<ChannelLine> channels,
+        List<Double> errors,
+        List<Long> messages,
+        Path output) {
+
+    StudyFile {
+        states = List.copyOf(states);
+        pairs = List.copyOf(pairs);
+        ensembles = List.copyOf(ensembles);
+        channels = List.copyOf(channels);
+        errors = List.copyOf(errors);
+        messages = List.copyOf(messages);
+    }
+
+    /** What is to be done with a file whose matrix is not quite a density operator. */
+    enum Repair {
+        /** Refuse it. */
+        NONE,
+        /** Take the nearest density operator and say how far it was. */
+        NEAREST
+    }
+
+    /** A state and the file that holds its density matrix, resolved against the study file's directory. */
+    record StateLine(int line, String name, Path file, Repair repair) {}
+
+    /** Two states to tell apart; the prior probability is that of the first. */
+    record PairLine(int line, String name, String first, String second, double prior) {}
+
+    /** States with prior probabilities. */
+    record EnsembleLine(int line, String name, List<String> states, List<Double> priors) {
+        EnsembleLine {
+            states = List.copyOf(states);
+            priors = List.copyOf(priors);
+        }
+    }
+
+    /** A channel that sends one state for each letter. */
+    record ChannelLine(int line, String name, List<String> letters) {
+        ChannelLine {
+            letters = List.copyOf(letters);
+        }
+    }
+}
