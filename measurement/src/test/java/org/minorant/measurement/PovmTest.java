@@ -69,8 +69,10 @@ class PovmTest {
                         + " (rounding); check it, or use Povm.nearest, which projects and says by how much",
                 () -> Povm.of(List.of(half, HermitianOperator.diagonal(-0.5, 0.5))));
         assertRefusal(
-                "Povm.of: the elements sum to an operator at distance 0.3535533905935988 from the identity, expected at most"
-                        + " 2.8421709430404007E-14 (rounding); add what is missing as an element, or use Povm.nearest, which says"
+                "Povm.of: the elements sum to an operator at distance " + 0.3535533905935988
+                        + " from the identity, expected at most"
+                        + " " + 2.8421709430404007E-14
+                        + " (rounding); add what is missing as an element, or use Povm.nearest, which says"
                         + " by how much it repairs",
                 () -> Povm.of(List.of(half, HermitianOperator.diagonal(0.25, 0.25))));
         Povm povm = Povm.of(List.of(half, half));
