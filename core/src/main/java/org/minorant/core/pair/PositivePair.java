@@ -2,6 +2,7 @@ package org.minorant.core.pair;
 
 import java.util.List;
 import org.minorant.core.Enclosure;
+import org.minorant.core.Estimate;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
@@ -155,6 +156,52 @@ public abstract sealed class PositivePair permits CommutingPair, DensePair, Dire
         WideDouble upper = value.upperWide().min(most.upperWide());
         WideDouble lower = value.lowerWide().max(WideDouble.ZERO).min(upper);
         return Enclosure.of(lower, upper);
+    }
+
+    /**
+     * Returns Tr[aA ∧ bB] without proof, faster where proof is what costs: for many copies. Elsewhere it is the middle of the enclosure.
+     *
+     * @param a the weight on A, at least 0 and finite
+     * @param b the weight on B, at least 0 and finite
+     * @return an estimate of Tr[aA ∧ bB]
+     * @throws InvalidInputException if a weight is negative or infinite
+     */
+    public Estimate traceMinimumEstimate(WideDouble a, WideDouble b) {
+        return Estimate.of(traceMinimum(a, b));
+    }
+
+    /**
+     * Returns the pair (A^⊗n, B^⊗n), in the cheapest exact form that the structure of this pair allows.
+     *
+     * @param n the number of copies, at least 1
+     * @return the pair of n copies
+     * @throws InvalidInputException if n is below 1, or no exact form of n copies fits
+     */
+    public final PositivePair copies(int n) {
+        if (n < 1) {
+            throw new InvalidInputException(
+                    "PositivePair.copies", "the number of copies is " + n, "at least 1", "give a positive number");
+        }
+        return n == 1 ? this : power(n);
+    }
+
+    /** The pair of n ≥ 2 copies. */
+    PositivePair power(int n) {
+        throw new InvalidInputException(
+                "PositivePair.copies",
+                "a pair of kind " + kind() + " without its operators",
+                "commuting pairs, a vector with its spectral measure, or two operators",
+                "give the operators themselves");
+    }
+
+    /**
+     * Returns this pair with another limit on the work of each value.
+     *
+     * @param effort tolerance and listener
+     * @return the pair; this one where values cost too little to matter
+     */
+    public PositivePair withEffort(Effort effort) {
+        return this;
     }
 
     /** Tr[aA ∧ bB] for positive finite weights; ends below 0 or above the traces are cut by the caller. */
