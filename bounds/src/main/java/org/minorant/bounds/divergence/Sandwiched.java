@@ -15,13 +15,10 @@ import org.minorant.core.WideDouble;
  *
  * its limit α → ∞ (the max-divergence) and its value at α = ½ (minus twice the logarithm of the fidelity).
  *
- * <p><b>Argument</b> (notation of {@link SpectralState}). For −1 ≤ u ≤ 1 the power B^(−u) is operator monotone or antimonotone and the norm
- * increases with
- * A and with B^(−u), so that balls of eigenvalues cover all operators between the ends; with Z = b^(−u/2) O* a^(½), O the overlaps, the
- * norm is
- * that of Z*Z or ZZ*, of which {@link EnclosedSpectrum} encloses the eigenvalues. R: for α &lt; 1, Tr(X + Y)^α ≤ Tr X^α + Tr Y^α (McCarthy
- * 1967) and
- * Tr(B^c A B^c)^α ≤ (Tr A)^α (Tr B)^(1−α); for α ≥ 1 the triangle inequality, ‖B^(−u/2) R B^(−u/2)‖_α ≤ restRank · rest · ‖B^(−u)‖.
+ * <p><b>Argument</b> (notation of {@link SpectralState}). For −1 ≤ u ≤ 1 the power B^(−u) is operator monotone or antimonotone and the norm increases with A and with
+ * B^(−u), so that balls of eigenvalues cover all operators between the ends; with Z = b^(−u/2) O* a^(½), O the overlaps, N(u) = 2 ln ‖Z‖_2α. R: for α &lt; 1,
+ * Tr(X + Y)^α ≤ Tr X^α + Tr Y^α (McCarthy 1967) and Tr(B^c A B^c)^α ≤ (Tr A)^α (Tr B)^(1−α); for α ≥ 1 the triangle inequality, ‖B^(−u/2) R B^(−u/2)‖_α ≤ restRank ·
+ * rest · ‖B^(−u)‖.
  *
  * <p>Source: M. Müller-Lennert, F. Dupuis, O. Szehr, S. Fehr, M. Tomamichel, J. Math. Phys. 54, 122203 (2013); M. M. Wilde, A. Winter, D.
  * Yang, Commun.
@@ -101,27 +98,17 @@ public final class Sandwiched {
      * @return N(u) for the normalised operators; empty if the norm may vanish
      */
     public Optional<Ball> norm(Ball u) {
-        Scaled k = spectrum(u);
-        Ball top = k.values.get(k.values.size() - 1);
-        if (!top.isPositive()) {
+        Scaled z = root(u);
+        Ball norm = schatten(z.matrix, u);
+        if (!norm.isPositive()) {
             return Optional.empty();
         }
-        Ball shift = top.ln();
-        Ball n = shift;
-        Ball inverse = Ball.ONE.minus(u);
-        if (inverse.isPositive()) {
-            Ball alpha = Ball.ONE.dividedBy(inverse);
-            // the largest eigenvalue is e^shift by definition, and no other exceeds it
-            Ball sum = Ball.ONE;
-            for (Ball m : k.values.subList(0, k.values.size() - 1)) {
-                sum = sum.plus(power(m, shift, alpha).min(Ball.ONE));
-            }
-            n = shift.plus(between(sum, restBelow(u, shift, k.scale)).ln().times(inverse));
-        } else {
-            // α beyond all digits: the sum is between 1 and the number of its terms
-            n = between(shift, Math.log(k.values.size()) * Math.max(0, inverse.upper()) * (1 + 1e-9));
+        Ball n = norm.ln().times(2);
+        double rest = restBelow(u, n, z.scale);
+        if (rest > 0) {
+            n = n.plus(between(Ball.ONE, rest).ln().times(Ball.ONE.minus(u)));
         }
-        n = n.plus(k.scale)
+        n = n.plus(z.scale)
                 .minus(pair.first().trace().ln())
                 .plus(u.times(pair.second().trace().ln()));
         return Optional.of(u.hi() > 0 ? raised(n, restAbove(u)) : n);
@@ -132,24 +119,22 @@ public final class Sandwiched {
         if (pair.isOrthogonal()) {
             return Enclosure.exact(Double.NEGATIVE_INFINITY);
         }
-        Scaled k = spectrum(u);
-        Ball inverse = Ball.ONE.minus(u);
-        Ball sum = Ball.of(restBelow(u, Ball.ZERO, k.scale));
-        for (Ball m : k.values) {
-            sum = sum.plus(power(m, Ball.ZERO, Ball.ONE.dividedBy(inverse)));
-        }
-        Ball traces = k.scale
+        Scaled z = root(u);
+        Enclosure inverse = Ball.ONE.minus(u).toEnclosure();
+        Enclosure norm = Enclosure.exact(Math.max(0, schatten(z.matrix, u).upper()));
+        Enclosure power = norm.ln().times(2).dividedBy(inverse).exp();
+        Enclosure sum = power.plus(Enclosure.exact(restBelow(u, Ball.ZERO, z.scale)));
+        Ball traces = z.scale
                 .minus(pair.first().trace().ln())
                 .plus(u.times(pair.second().trace().ln()));
-        Enclosure most =
-                Enclosure.exact(sum.upper()).ln().times(inverse.toEnclosure()).plus(traces.toEnclosure());
+        Enclosure most = sum.ln().times(inverse).plus(traces.toEnclosure());
         return Enclosure.of(WideDouble.NEGATIVE_INFINITY, most.upperWide());
     }
 
-    private record Scaled(List<Ball> values, Ball scale) {}
+    private record Scaled(EnclosedMatrix matrix, Ball scale) {}
 
-    /** The eigenvalues of A^½ B^(−u) A^½ · e^(−scale), ascending; zeros beyond the smaller rank are left out. */
-    private Scaled spectrum(Ball u) {
+    /** Z · e^(−scale/2) with Z*Z = A^½ B^(−u) A^½. */
+    private Scaled root(Ball u) {
         List<Ball> powers = new ArrayList<>();
         double most = Double.NEGATIVE_INFINITY;
         for (Ball b : lnB) {
@@ -162,14 +147,47 @@ public final class Sandwiched {
                 diagonal(powers.stream().map(x -> x.minus(shift).exp()).toList());
         EnclosedMatrix right =
                 diagonal(lnA.stream().map(x -> x.times(0.5).exp()).toList());
-        EnclosedMatrix z = left.times(pair.overlaps().adjoint()).times(right);
-        EnclosedMatrix zz = lnA.size() <= lnB.size() ? z.adjoint().times(z) : z.times(z.adjoint());
-        EnclosedSpectrum s = EnclosedSpectrum.of(zz);
+        return new Scaled(left.times(pair.overlaps().adjoint()).times(right), shift.times(2));
+    }
+
+    /**
+     * The Schatten norm ‖Z‖_2α, α = 1/(1 − u): that of the midpoint, from the eigenvalues of its square, and the radii Δ at most ‖Δ‖_2α ≤ √n ‖Δ‖_F (without √n for α ≥ 1),
+     * so that they enter as they are and not by their root.
+     */
+    private static Ball schatten(EnclosedMatrix z, Ball u) {
+        if (u.hi() == -1 && u.lo() == 0 && u.radius() == 0) {
+            NuclearNorm n = NuclearNorm.of(z);
+            return n.value().times(Math.scalb(1.0, n.exponent()));
+        }
+        EnclosedMatrix mid = z.midpoint();
+        EnclosedMatrix square = z.columns() <= z.rows() ? mid.adjoint().times(mid) : mid.times(mid.adjoint());
+        EnclosedSpectrum s = EnclosedSpectrum.of(square);
         List<Ball> values = new ArrayList<>();
         for (int i = 0; i < s.dimension(); i++) {
             values.add(new Ball(s.value(i), s.valueTail(i), s.eigenvalueRadius()));
         }
-        return new Scaled(values, shift.times(2));
+        double radii = u.hi() > 0 ? z.minus(mid).frobeniusUpper() : NuclearNorm.radiusNorm(z);
+        Ball top = values.get(values.size() - 1);
+        if (!top.isPositive()) {
+            double most = Math.sqrt(values.size()) * mid.frobeniusUpper() + radii;
+            return between(Ball.ZERO, most * (1 + 1e-9));
+        }
+        Ball shift = top.ln();
+        Ball ln = shift;
+        Ball inverse = Ball.ONE.minus(u);
+        if (inverse.isPositive()) {
+            Ball alpha = Ball.ONE.dividedBy(inverse);
+            // the largest eigenvalue is e^shift by definition, and no other exceeds it
+            Ball sum = Ball.ONE;
+            for (Ball m : values.subList(0, values.size() - 1)) {
+                sum = sum.plus(power(m, shift, alpha).min(Ball.ONE));
+            }
+            ln = shift.plus(sum.ln().times(inverse));
+        } else {
+            // α beyond all digits: the sum is between 1 and the number of its terms
+            ln = between(shift, Math.log(values.size()) * Math.max(0, inverse.upper()) * (1 + 1e-9));
+        }
+        return ln.times(0.5).exp().widen(radii);
     }
 
     private static EnclosedMatrix diagonal(List<Ball> d) {
@@ -180,14 +198,19 @@ public final class Sandwiched {
         return b.build();
     }
 
-    /** (m e^(−shift))^α for an eigenvalue that is at least 0 and at most e^shift, up to its radius. */
+    /** (m e^(−shift))^α for an eigenvalue that is at least 0 and at most e^shift, up to its radius: from 0 on where that is as large as itself. */
     private static Ball power(Ball m, Ball shift, Ball alpha) {
-        Ball top = m.isPositive() ? m : Ball.of(Math.max(m.magnitude(), Double.MIN_NORMAL));
-        Ball x = top.ln().minus(shift).times(alpha);
-        if (x.radius() > 0.5) {
-            return between(Ball.ZERO, 1);
+        if (m.hi() > 4 * m.radius() && m.isPositive()) {
+            Ball x = m.ln().minus(shift).times(alpha);
+            if (x.radius() <= 0.5) {
+                return x.exp();
+            }
         }
-        return m.isPositive() ? x.exp() : between(Ball.ZERO, x.exp().upper());
+        Ball most = Ball.of(Math.max(m.magnitude(), Double.MIN_NORMAL))
+                .ln()
+                .minus(shift)
+                .times(alpha);
+        return between(Ball.ZERO, Math.exp(Math.min(0, most.upper())) * (1 + 1e-9));
     }
 
     /** [x, x + extra] as a ball. */

@@ -3,6 +3,7 @@ package org.minorant.bounds.divergence;
 import java.util.Arrays;
 import java.util.List;
 import org.minorant.core.EnclosedMatrix;
+import org.minorant.core.PositiveFactor;
 import org.minorant.core.PositiveOperator;
 
 /**
@@ -12,6 +13,8 @@ import org.minorant.core.PositiveOperator;
  */
 public final class StatePair {
 
+    private final PositiveOperator a;
+    private final PositiveOperator b;
     private final SpectralState first;
     private final SpectralState second;
     private final EnclosedMatrix overlaps;
@@ -19,7 +22,15 @@ public final class StatePair {
     private final boolean same;
 
     private StatePair(
-            SpectralState first, SpectralState second, EnclosedMatrix overlaps, Ball[][] squares, boolean same) {
+            PositiveOperator a,
+            PositiveOperator b,
+            SpectralState first,
+            SpectralState second,
+            EnclosedMatrix overlaps,
+            Ball[][] squares,
+            boolean same) {
+        this.a = a;
+        this.b = b;
         this.first = first;
         this.second = second;
         this.overlaps = overlaps;
@@ -54,7 +65,7 @@ public final class StatePair {
                 }
             }
         }
-        return new StatePair(first, second, o, p, isSame(a, b));
+        return new StatePair(a, b, first, second, o, p, isSame(a, b));
     }
 
     /** |midpoint|² with 2|midpoint|r + r² for the radius r of the entry, in either part. */
@@ -97,6 +108,24 @@ public final class StatePair {
             }
         }
         return true;
+    }
+
+    /**
+     * Returns the factor of the first operator.
+     *
+     * @return the columns of A
+     */
+    public PositiveFactor firstFactor() {
+        return a.factor();
+    }
+
+    /**
+     * Returns the factor of the second operator.
+     *
+     * @return the columns of B
+     */
+    public PositiveFactor secondFactor() {
+        return b.factor();
     }
 
     /**
