@@ -164,14 +164,20 @@ final class FactorPair extends PositivePair {
         WideDouble wb = b.timesPowerOfTwo(-shift);
         Enclosure f;
         if (Math.abs(wa.exponent()) > FAR || Math.abs(wb.exponent()) > FAR) {
-            // the heavier weight is lowered until the lighter columns can be held; f is monotone and below both traces
-            WideDouble most = WideDouble.of(1, FAR);
-            WideDouble least = WideDouble.of(1, -FAR);
-            WideDouble x = wa.compareTo(wb) > 0 ? most : least;
-            WideDouble y = wa.compareTo(wb) > 0 ? least : most;
+            // the heavier weight is lowered until the lighter columns can be held: f is monotone, and levels off at
+            // what the support of the heavier operator holds of the lighter one
+            WideDouble heavy = WideDouble.of(1, FAR);
+            WideDouble light = WideDouble.of(1, -FAR);
+            WideDouble x = wa.compareTo(wb) > 0 ? heavy : light;
+            WideDouble y = wa.compareTo(wb) > 0 ? light : heavy;
             WideDouble factor = wa.min(wb).timesPowerOfTwo(FAR);
             Enclosure near = pair.enclose(x.toDoubleDown(), y.toDoubleDown());
-            f = Enclosure.of(near.lowerWide().timesDown(factor), WideDouble.POSITIVE_INFINITY);
+            WideDouble level = wa.compareTo(wb) > 0
+                    ? SupportTrace.upper(pair.gx(), pair.cross())
+                    : SupportTrace.upper(pair.gy(), pair.cross().adjoint());
+            WideDouble least = near.lowerWide().timesDown(factor);
+            WideDouble most = level.isInfinite() ? level : level.timesUp(wa.min(wb));
+            f = Enclosure.of(least, most.max(least));
         } else {
             f = pair.enclose(wa.toDoubleDown(), wb.toDoubleDown());
         }

@@ -202,6 +202,28 @@ class FactorPairTest {
     }
 
     @Test
+    void theCurveLevelsOffAtWhatTheSupportHolds() {
+        // B = yy*: Tr PA = Σ|⟨y, x_j⟩|²/‖y‖² = (5² + 1²)/9, and f is within f²/t of it; A's columns are (1, 0, 2) and
+        // (3, -1, 0)
+        Operator x = Operator.ofReal(new double[][] {{1, 3}, {0, -1}, {2, 0}});
+        Operator y = Operator.ofReal(new double[][] {{1}, {2}, {2}});
+        Enclosure level = Enclosure.exact(26).dividedBy(Enclosure.exact(9));
+        double far = Double.MAX_VALUE;
+        for (WideDouble t : new WideDouble[] {WideDouble.of(far), WideDouble.of(1, 5000)}) {
+            Enclosure f = pair(x, y).traceMinimum(WideDouble.ONE, t);
+            Enclosure g = pair(y, x).traceMinimum(t, WideDouble.ONE);
+            for (Enclosure e : new Enclosure[] {f, g}) {
+                assertTrue(e.isPossiblyBelow(level) && level.isPossiblyBelow(e), () -> e + " instead of 26/9");
+                assertTrue(e.relativeWidth() < 1e-12, () -> "width " + e.relativeWidth());
+            }
+        }
+        // dependent columns: no better upper end than the trace, and still the value inside
+        Operator twice = Operator.ofReal(new double[][] {{1, 0.5}, {2, 1}, {2, 1}});
+        Enclosure h = pair(x, twice).traceMinimum(far);
+        assertTrue(h.contains(26.0 / 9), () -> h.toString());
+    }
+
+    @Test
     void dependentColumnsKeepTheirWeakCombinations() {
         // A = span of (1, 0, 0) and, by cancellation of two columns, of a vector of size 1e-30 along (0, 1, 1e-12);
         // B along the third axis: f is close to |⟨e₃, weak⟩|², in the difference of two strong columns only
