@@ -108,7 +108,8 @@ public final class DensityOperator extends PositiveOperator {
 
     /**
      * Returns the qubit state ½(1 + xX + yY + zZ), with X, Y, Z the Pauli operators, exactly that of these three doubles; its small
-     * eigenvalue (1 − |r|)/2 keeps its digits also next to purity. A vector longer than one by rounding means the pure state along it.
+     * eigenvalue (1 − |r|)/2 keeps its digits also next to purity. A vector longer than one by rounding means the
+     * positive part of that matrix, (1 + |r|)/2 times the pure state along it.
      *
      * @param x first Bloch component
      * @param y second Bloch component

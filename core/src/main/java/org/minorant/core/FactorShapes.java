@@ -42,7 +42,9 @@ final class FactorShapes {
         PositiveFactor h = exact ? new PositiveFactor(z, 0, 0) : FactorRounding.entrywise(z, 0x1p-99);
         double traceF = trace(f);
         double traceG = trace(g);
-        double nu = f.traceError() * traceG + traceF * g.traceError() + f.traceError() * g.traceError();
+        double nu = FrobeniusBound.times(f.traceError(), traceG)
+                + FrobeniusBound.times(g.traceError(), traceF)
+                + f.traceError() * g.traceError();
         double eta = FactorSums.combined(f.relativeError(), g.relativeError());
         return after(h, eta, nu * (1 + 0x1p-40));
     }

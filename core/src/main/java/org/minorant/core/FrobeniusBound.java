@@ -5,6 +5,11 @@ final class FrobeniusBound {
 
     private FrobeniusBound() {}
 
+    /** An error times a bound that may have overflowed: no error stays none. */
+    static double times(double error, double bound) {
+        return error == 0 || bound == 0 ? 0 : error * bound;
+    }
+
     /** At least √Σv², for non-negative numbers; NaN or infinite if one of them is. */
     static double of(double[] values) {
         double most = 0;

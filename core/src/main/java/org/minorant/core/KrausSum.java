@@ -78,7 +78,8 @@ final class KrausSum {
                 : new MeantOperator(EnclosedMatrix.of(a), a.entryDefect(), false);
         EnclosedMatrix sum = sum(kraus, meant.matrix());
         RoundedCopy copy = RoundedCopy.of(asked, sum);
-        double defect = (copy.traceNormError() + growth(kraus) * meant.traceNormError()) * (1 + 0x1p-50);
+        double defect =
+                (copy.traceNormError() + FrobeniusBound.times(meant.traceNormError(), growth(kraus))) * (1 + 0x1p-50);
         return new PositiveOperator(copy.operator(), defect, FactorSource.later(() -> factor(kraus, a.factor())));
     }
 
@@ -99,7 +100,7 @@ final class KrausSum {
             return stacked(kraus, f);
         }
         EnclosedMatrix x = f.columns();
-        double nu = growth(kraus) * f.traceError() * (1 + 0x1p-50);
+        double nu = FrobeniusBound.times(f.traceError(), growth(kraus)) * (1 + 0x1p-50);
         return FactorOfEntries.square(sum(kraus, x.times(x.adjoint())), f.relativeError(), nu)
                 .orElseGet(() -> stacked(kraus, f));
     }
@@ -141,7 +142,7 @@ final class KrausSum {
             parts.add(FactorShapes.after(h, f.relativeError(), 0));
         }
         PositiveFactor all = FactorSums.stacked(parts);
-        double nu = all.traceError() + growth(kraus) * f.traceError() * (1 + 0x1p-50);
+        double nu = all.traceError() + FrobeniusBound.times(f.traceError(), growth(kraus)) * (1 + 0x1p-50);
         return new PositiveFactor(all.columns(), all.relativeError(), nu);
     }
 

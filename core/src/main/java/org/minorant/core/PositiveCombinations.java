@@ -20,7 +20,10 @@ final class PositiveCombinations {
         double traceA = a.traceEnclosure().upper();
         // ‖B'‖₁ ≤ Tr B + δ'
         double traceB = b.traceEnclosure().upper() + b.entryDefect();
-        double defect = (rounding + a.entryDefect() * traceB + traceA * b.entryDefect()) * (1 + 0x1p-40);
+        double defect = (rounding
+                        + FrobeniusBound.times(a.entryDefect(), traceB)
+                        + FrobeniusBound.times(b.entryDefect(), traceA))
+                * (1 + 0x1p-40);
         return new PositiveOperator(
                 entries,
                 defect,

@@ -10,6 +10,7 @@ import net.jqwik.api.Arbitrary;
 import net.jqwik.api.ForAll;
 import net.jqwik.api.Property;
 import net.jqwik.api.Provide;
+import org.junit.jupiter.api.Test;
 import org.minorant.core.OperatorGenerator.Case;
 
 /** The errors that factors promise, against 110-digit arithmetic. */
@@ -23,6 +24,21 @@ class FactorSandwichTest {
     @Provide
     Arbitrary<Case> smallCases() {
         return OperatorGenerator.cases(3);
+    }
+
+    @Test
+    void factorsOfProductsWhoseTraceOverflowsAreStillFactors() {
+        double big = 0x1.8p1023;
+        PositiveFactor f = PositiveOperator.ofEigenvalues(big, big, 1e-300)
+                .tensor(PositiveOperator.ofEigenvalues(1, 0x1p-900))
+                .factor();
+        assertEquals(Math.sqrt(big), f.columns().re(0, 0), Math.ulp(0x1p512));
+        assertTrue(f.relativeError() < 1e-15 && f.traceError() < 1e-300, () -> f.traceError() + "");
+        PositiveFactor g = PositiveOperator.ofFactor(Operator.ofReal(new double[][] {{0x1p-1000}, {0}}))
+                .conjugatedBy(Operator.ofReal(new double[][] {{0x1p1000, 0}, {0, 0x1p1000}}))
+                .factor();
+        assertEquals(1, g.columns().re(0, 0));
+        assertEquals(0, g.relativeError() + g.traceError());
     }
 
     @Property(tries = 60, seed = "1")

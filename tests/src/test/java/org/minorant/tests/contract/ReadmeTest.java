@@ -23,6 +23,7 @@ class ReadmeTest {
             for (String block : blocks) {
                 assertTrue(snippets.contains(block), () -> name + " shows what no test runs: " + block);
             }
+            assertTrue(!blocks.isEmpty() || !name.equals("README.md"), "README.md shows no Java at all");
         }
     }
 
