@@ -85,6 +85,11 @@ final class CommutingPair extends PositivePair {
     }
 
     @Override
+    PositivePair power(int n) {
+        return CommutingCopies.of(a, b, n);
+    }
+
+    @Override
     public Enclosure firstTrace() {
         return traceA;
     }

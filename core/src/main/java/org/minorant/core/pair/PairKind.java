@@ -11,5 +11,7 @@ public enum PairKind {
     /** Dense matrices: one Hermitian eigendecomposition and its residual; as {@link #FACTORED} where that is too wide. */
     DENSE,
     /** Blocks that do not interact: the sum of the blocks' curves. */
-    DIRECT_SUM
+    DIRECT_SUM,
+    /** Copies of two commuting operators: a sum over types, that is over the counts of each eigenvalue. */
+    TYPES
 }

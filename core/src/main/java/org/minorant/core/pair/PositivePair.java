@@ -24,7 +24,8 @@ import org.minorant.core.WideDouble;
  * <p>Source: A. S. Holevo, J. Multivariate Anal. 3, 337 (1973); C. W. Helstrom, Quantum Detection and Estimation Theory (1976), ch. IV (both from
  * memory).
  */
-public abstract sealed class PositivePair permits CommutingPair, DensePair, DirectSumPair, FactorPair, RankOnePair {
+public abstract sealed class PositivePair
+        permits CommutingCopies, CommutingPair, DensePair, DirectSumPair, FactorPair, RankOneCopies, RankOnePair {
 
     /** For the kinds in this package. */
     PositivePair() {}

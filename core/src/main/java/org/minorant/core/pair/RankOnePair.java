@@ -1,6 +1,8 @@
 package org.minorant.core.pair;
 
-import org.minorant.core.EnclosedMatrix;
+import java.util.ArrayList;
+import java.util.List;
+import java.util.function.IntFunction;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
@@ -8,6 +10,7 @@ import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.door.EigenResidual;
 import org.minorant.core.internal.door.HermitianEigen;
+import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
  * A rank-one operator A = ψψ* against any B, through the spectral measure (w_i, b_i) of B in ψ: w_i = |⟨v_i,ψ⟩|². B is decomposed once; every further value of the curve costs
@@ -23,8 +26,8 @@ final class RankOnePair extends PositivePair {
 
     private static final double U = 0x1p-53;
 
-    private final Enclosure[] weights;
-    private final Enclosure[] values;
+    private final SpectralPoints points;
+    private final int dimension;
     private final Enclosure traceOne;
     private final Enclosure traceOther;
     private final double relativeError;
@@ -36,11 +39,20 @@ final class RankOnePair extends PositivePair {
     private final boolean swapped;
 
     private final Refinement refinement;
+    /** Makes the pair of many copies. */
+    private final IntFunction<PositivePair> many;
 
     private RankOnePair(
-            Measure measure, Enclosure traceOne, Enclosure traceOther, boolean swapped, Refinement refinement) {
-        this.weights = measure.weights;
-        this.values = measure.values;
+            Measure measure,
+            int dimension,
+            Enclosure traceOne,
+            Enclosure traceOther,
+            boolean swapped,
+            Refinement refinement,
+            IntFunction<PositivePair> many) {
+        this.many = many;
+        this.points = SpectralPoints.of(measure.spectral);
+        this.dimension = dimension;
         this.relativeError = measure.relativeError;
         this.errorOne = measure.errorOne;
         this.errorOther = measure.errorOther;
@@ -51,8 +63,7 @@ final class RankOnePair extends PositivePair {
     }
 
     /** A spectral measure with the errors it was found to: of ψψ* (relative, trace) and of B (trace). */
-    private record Measure(
-            Enclosure[] weights, Enclosure[] values, double relativeError, double errorOne, double errorOther) {}
+    private record Measure(SpectralMeasure spectral, double relativeError, double errorOne, double errorOther) {}
 
     /** The pair (ψψ*, B), or (B, ψψ*) if swapped. */
     static RankOnePair of(PositiveOperator rankOne, PositiveOperator b, boolean swapped) {
@@ -60,10 +71,12 @@ final class RankOnePair extends PositivePair {
         Refinement refinement = swapped ? new Refinement(b, rankOne) : new Refinement(rankOne, b);
         return new RankOnePair(
                 diagonal ? exact(rankOne, b) : decomposed(rankOne, b),
+                b.dimension(),
                 rankOne.traceEnclosure(),
                 b.traceEnclosure(),
                 swapped,
-                diagonal ? Refinement.NONE : refinement);
+                diagonal ? Refinement.NONE : refinement,
+                n -> RankOneCopies.of(rankOne, b, swapped, n).orElseThrow(() -> illConditioned(n)));
     }
 
     /** The pair of a vector and an operator of which only the spectral measure is given, exactly. */
@@ -76,11 +89,11 @@ final class RankOnePair extends PositivePair {
                     "as many of each, at least 1",
                     "give one weight per eigenvalue");
         }
-        Enclosure[] w = new Enclosure[weights.length];
-        Enclosure[] b = new Enclosure[weights.length];
+        List<WideDoubleDouble> w = new ArrayList<>();
+        List<WideDoubleDouble> b = new ArrayList<>();
         Enclosure one = Enclosure.ZERO;
-        Enclosure other = Enclosure.ZERO;
-        for (int i = 0; i < w.length; i++) {
+        Enclosure sum = Enclosure.ZERO;
+        for (int i = 0; i < weights.length; i++) {
             if (!(weights[i] >= 0 && values[i] >= 0 && weights[i] + values[i] < Double.POSITIVE_INFINITY)) {
                 throw new InvalidInputException(
                         asked,
@@ -88,25 +101,34 @@ final class RankOnePair extends PositivePair {
                         "at least 0 and finite",
                         "check the measure");
             }
-            w[i] = Enclosure.exact(weights[i]);
-            b[i] = Enclosure.exact(values[i]);
-            one = one.plus(w[i]);
-            other = other.plus(b[i]);
+            w.add(Letters.wide(weights[i]));
+            b.add(Letters.wide(values[i]));
+            one = one.plus(Enclosure.exact(weights[i]));
+            sum = sum.plus(Enclosure.exact(values[i]));
         }
-        return new RankOnePair(new Measure(w, b, 0, 0, 0), one, other, false, Refinement.NONE);
+        Enclosure other = sum;
+        SpectralMeasure spectral = SpectralMeasure.of(w, b, 0, 0);
+        return new RankOnePair(
+                new Measure(spectral, 0, 0, 0),
+                w.size(),
+                one,
+                other,
+                false,
+                Refinement.NONE,
+                n -> RankOneCopies.of(spectral, w.size(), other, RankOneCopies.Errors.NONE, false, n));
+    }
+
+    private static InvalidInputException illConditioned(int n) {
+        return new InvalidInputException(
+                "PositivePair.copies",
+                n + " copies of an operator with nonzero eigenvalues over more than ten decades",
+                "at most ten decades where it is not diagonal",
+                "give the pair in the operator's eigenbasis, or its spectral measure");
     }
 
     private static Measure exact(PositiveOperator rankOne, PositiveOperator b) {
         PositiveFactor psi = rankOne.factor();
-        int n = b.dimension();
-        Enclosure[] weights = new Enclosure[n];
-        Enclosure[] values = new Enclosure[n];
-        for (int i = 0; i < n; i++) {
-            EnclosedMatrix x = psi.columns();
-            weights[i] = x.enclosureRe(i, 0).square().plus(x.enclosureIm(i, 0).square());
-            values[i] = Enclosure.exact(Math.max(0, b.re(i, i)));
-        }
-        return new Measure(weights, values, psi.relativeError(), psi.traceError(), 0);
+        return new Measure(SpectralMeasure.ofDiagonal(psi, b), psi.relativeError(), psi.traceError(), 0);
     }
 
     private static Measure decomposed(PositiveOperator rankOne, PositiveOperator b) {
@@ -118,8 +140,8 @@ final class RankOnePair extends PositivePair {
         EigenResidual residual = EigenResidual.of(n, re, im, e);
         double[] vr = e.vectorsRe();
         double[] vi = e.vectorsIm();
-        Enclosure[] weights = new Enclosure[n];
-        Enclosure[] values = new Enclosure[n];
+        List<WideDoubleDouble> weights = new ArrayList<>();
+        List<WideDoubleDouble> values = new ArrayList<>();
         double norm = 0;
         for (int j = 0; j < n; j++) {
             double x = 0;
@@ -130,24 +152,25 @@ final class RankOnePair extends PositivePair {
                 x += vr[i * n + j] * p + vi[i * n + j] * q;
                 y += vr[i * n + j] * q - vi[i * n + j] * p;
             }
-            weights[j] = Enclosure.exact(x).square().plus(Enclosure.exact(y).square());
+            weights.add(Letters.sum(Letters.wide(x * x), Letters.wide(y * y)));
             // the operator meant is the positive part; cutting here is inside the entry defect
-            values[j] = Enclosure.exact(Math.max(0, e.values()[j]));
+            values.add(Letters.wide(Math.max(0, e.values()[j])));
             norm += x * x + y * y;
         }
         // rounding of the amplitudes, and of ψ to double: γ in norm
         double gamma = residual.defect() + (4.0 * n + 16) * Math.sqrt(n) * U;
         double errorOne = 2.2 * gamma * norm + psi.traceError();
         double errorOther = 2 * (residual.traceError() + b.entryDefect());
-        return new Measure(weights, values, psi.relativeError(), errorOne, errorOther);
+        SpectralMeasure measure = SpectralMeasure.of(weights, values, 0, 0);
+        return new Measure(measure, psi.relativeError(), errorOne, errorOther);
     }
 
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
         WideDouble one = swapped ? wb : wa;
         WideDouble other = swapped ? wa : wb;
-        Enclosure ratio = Enclosure.of(other, other).dividedBy(Enclosure.of(one, one));
-        Enclosure f = SecularRoot.enclose(weights, values, ratio)
+        WideDouble ratio = other.dividedByUp(one);
+        Enclosure f = SecularRoot.enclose(points, ratio, ratio.equals(other.dividedByDown(one)) ? 0 : 2 * U)
                 .times(Enclosure.of(1 - relativeError, 1 + relativeError))
                 .plus(Enclosure.of(-errorOne, errorOne))
                 .times(Enclosure.of(one, one));
@@ -158,6 +181,11 @@ final class RankOnePair extends PositivePair {
                         f.upperWide().plusUp(nu.upperWide())),
                 wa,
                 wb);
+    }
+
+    @Override
+    PositivePair power(int n) {
+        return many.apply(n);
     }
 
     @Override
@@ -172,7 +200,7 @@ final class RankOnePair extends PositivePair {
 
     @Override
     public int dimension() {
-        return weights.length;
+        return dimension;
     }
 
     @Override
