@@ -4,6 +4,7 @@ import java.util.Optional;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.Enclosure;
+import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
 
 /**
@@ -77,6 +78,31 @@ record ColumnPair(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, Enclose
 
     /** Encloses Tr[wa XX* ∧ wb YY*] for weights on the scale of double. */
     Enclosure enclose(double wa, double wb) {
+        return enclose(wa, wb, () -> {});
+    }
+
+    /** The same; the checkpoint is passed many times a second and may throw. */
+    Enclosure enclose(double wa, double wb, Runnable checkpoint) {
+        return weighted(wa, wb, checkpoint).map(Weighted::enclose).orElse(Enclosure.ZERO);
+    }
+
+    /** Tr[wa XX* ∧ wb YY*] as the rotations find it, without proof. */
+    WideDouble estimate(double wa, double wb, Runnable checkpoint) {
+        return weighted(wa, wb, checkpoint)
+                .map(w -> WideDouble.of(w.sweeps().total(), 2L * w.exponent()))
+                .orElse(WideDouble.ZERO);
+    }
+
+    /** Weighted inner products, those across in units of 2^exponent, and the finished rotations. */
+    private record Weighted(
+            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, HyperbolicSweeps sweeps, Runnable checkpoint) {
+
+        Enclosure enclose() {
+            return RotationCertificate.enclose(gx, gy, cross, exponent, sweeps, checkpoint);
+        }
+    }
+
+    private Optional<Weighted> weighted(double wa, double wb, Runnable checkpoint) {
         DoubleDouble sa = DoubleDouble.of(wa).sqrt();
         DoubleDouble sb = DoubleDouble.of(wb).sqrt();
         EnclosedMatrix wgx = scale(scale(gx, sa), sa);
@@ -89,14 +115,14 @@ record ColumnPair(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, Enclose
             }
         }
         if (largest == 0) {
-            return Enclosure.ZERO;
+            return Optional.empty();
         }
         int e = Math.getExponent(largest);
         EnclosedMatrix unitCross = powerOfTwo(m, -e);
         EnclosedMatrix wx = scale(x, sa).midpoint();
         EnclosedMatrix wy = scale(y, sb).midpoint();
-        HyperbolicSweeps sweeps = HyperbolicSweeps.run(wx, wy, wgx, wgy, unitCross, e);
-        return RotationCertificate.enclose(wgx, wgy, unitCross, e, sweeps);
+        HyperbolicSweeps sweeps = HyperbolicSweeps.run(wx, wy, wgx, wgy, unitCross, e, checkpoint);
+        return Optional.of(new Weighted(wgx, wgy, unitCross, e, sweeps, checkpoint));
     }
 
     private static EnclosedMatrix scale(EnclosedMatrix m, DoubleDouble s) {

@@ -85,6 +85,7 @@ final class HyperbolicSweeps {
      * @param gy Y*Y
      * @param cross X*Y / 2^exponent
      * @param exponent the unit of the inner products across
+     * @param checkpoint passed many times a second, may throw
      * @return the finished state
      */
     static HyperbolicSweeps run(
@@ -93,7 +94,8 @@ final class HyperbolicSweeps {
             EnclosedMatrix gx,
             EnclosedMatrix gy,
             EnclosedMatrix cross,
-            int exponent) {
+            int exponent,
+            Runnable checkpoint) {
         HyperbolicSweeps s = new HyperbolicSweeps(x, y, exponent);
         s.fill(gx, 0, 0);
         s.fill(gy, s.k, s.k);
@@ -106,7 +108,7 @@ final class HyperbolicSweeps {
             s.measure();
             double before = s.total;
             s.overlap = 0;
-            boolean turned = s.sweep();
+            boolean turned = s.sweep(checkpoint);
             double added = s.total - before;
             if (!turned || sweep > 0 && added <= 1e-17 * s.total && s.overlap < NEARLY_ORTHOGONAL) {
                 break;
@@ -153,9 +155,10 @@ final class HyperbolicSweeps {
         return gi[i].length == 0 ? 0 : gi[i][j];
     }
 
-    private boolean sweep() {
+    private boolean sweep(Runnable checkpoint) {
         boolean turned = false;
         for (int p = 0; p < r - 1; p++) {
+            checkpoint.run();
             for (int c = p + 1; c < r; c++) {
                 if (norm[p] > 0 && norm[c] > 0 && (gr[p][c] != 0 || imag(p, c) != 0)) {
                     turned |= p < k && c >= k ? hyperbolic(p, c) : unitary(p, c);

@@ -13,5 +13,7 @@ public enum PairKind {
     /** Blocks that do not interact: the sum of the blocks' curves. */
     DIRECT_SUM,
     /** Copies of two commuting operators: a sum over types, that is over the counts of each eigenvalue. */
-    TYPES
+    TYPES,
+    /** Copies of two qubit operators: blocks of total spin, each as {@link #FACTORED}. */
+    SPIN_BLOCKS
 }

@@ -25,7 +25,14 @@ import org.minorant.core.WideDouble;
  * memory).
  */
 public abstract sealed class PositivePair
-        permits CommutingCopies, CommutingPair, DensePair, DirectSumPair, FactorPair, RankOneCopies, RankOnePair {
+        permits CommutingCopies,
+                CommutingPair,
+                DensePair,
+                DirectSumPair,
+                FactorPair,
+                RankOneCopies,
+                RankOnePair,
+                SpinBlocksPair {
 
     /** For the kinds in this package. */
     PositivePair() {}

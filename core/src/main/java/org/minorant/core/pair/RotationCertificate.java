@@ -59,22 +59,31 @@ final class RotationCertificate {
      * @param cross X*Y / 2^exponent
      * @param exponent the unit of cross
      * @param sweeps the finished rotations
+     * @param checkpoint passed many times a second, may throw
      * @return an enclosure of f
      */
     static Enclosure enclose(
-            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, HyperbolicSweeps sweeps) {
+            EnclosedMatrix gx,
+            EnclosedMatrix gy,
+            EnclosedMatrix cross,
+            int exponent,
+            HyperbolicSweeps sweeps,
+            Runnable checkpoint) {
         ContractionBlocks blocks = ContractionBlocks.of(sweeps, exponent);
+        checkpoint.run();
         return new RotationCertificate(gx, gy, cross, exponent, blocks.contraction())
-                .enclose(blocks.first(), blocks.second());
+                .enclose(blocks.first(), blocks.second(), checkpoint);
     }
 
-    private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second) {
+    private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second, Runnable checkpoint) {
         EnclosedMatrix nn = n.times(n.adjoint());
         EnclosedMatrix left = EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn));
         EnclosedMatrix right =
                 EnclosedMatrix.identity(gy.rows()).minus(scaleByQ(n.adjoint().times(n)));
         EnclosedMatrix p = refine(first, left);
+        checkpoint.run();
         EnclosedMatrix p2 = refine(second, right);
+        checkpoint.run();
         EnclosedMatrix e = defect(p, left);
         double epsilon = Math.max(e.frobeniusUpper(), defect(p2, right).frobeniusUpper());
         if (!(epsilon < 0.5)) {
@@ -86,6 +95,7 @@ final class RotationCertificate {
         EnclosedMatrix phi = mixed.minus(nn.times(gx)).minus(quadratic);
         EnclosedMatrix f = p.adjoint().times(phi).times(p);
         EnclosedMatrix ef = e.times(f);
+        checkpoint.run();
         double rest = Math.pow(e.frobeniusUpper(), 3) * f.frobeniusUpper() / (1 - epsilon) * (1 + 0x1p-40);
         Enclosure value =
                 f.traceRe().minus(ef.traceRe()).plus(e.times(ef).traceRe()).widen(rest);

@@ -1,0 +1,112 @@
+package org.minorant.core.pair;
+
+import org.minorant.core.EnclosedMatrix;
+import org.minorant.core.internal.dd.DdProducts;
+import org.minorant.core.internal.number.DoubleDouble;
+
+/**
+ * One spin block of many copies of two qubits: A = diag(x^a) in its eigenbasis, B = diag(y^b) in its own, overlaps C between the two; leading indices only.
+ *
+ * <p>The inner products are what defines the pair: X*X = diag(x^a), Y*Y = diag(y^b), X*Y = x^(a/2) C_ab y^(b/2). The columns only guide the rotations: x_a lies along the a-th axis, and
+ * y_b has C_ab there and, beyond, column b of a triangle R with R*R = 1 − C*C.
+ */
+final class SpinBlock {
+
+    /** Directions in which y_b has less than this left are rounding. */
+    private static final double NOTHING = 1e-28;
+
+    private SpinBlock() {}
+
+    /**
+     * The pair of a block.
+     *
+     * @param x x^a and its root, a = 0, 1, …
+     * @param y y^b and its root
+     * @param c the window of C: a row for each column of A, a column for each of B
+     */
+    static ColumnPair columns(GeometricColumns x, GeometricColumns y, SpinOverlaps.Window c) {
+        double[][] ch = c.high();
+        double[][] cl = c.low();
+        double[][] radius = c.radius();
+        int k = ch.length;
+        int l = ch[0].length;
+        EnclosedMatrix.Builder cross = EnclosedMatrix.builder(k, l);
+        for (int a = 0; a < k; a++) {
+            for (int b = 0; b < l; b++) {
+                DoubleDouble scale = x.root(a).times(y.root(b));
+                DoubleDouble m = new DoubleDouble(ch[a][b], cl[a][b]).times(scale);
+                // the roots err by (a+1)·2^-101 and (b+1)·2^-101, the two products by 2^-102 each; roots below 2^-1000 count as 0
+                double r = scale.hi() * radius[a][b] * (1 + 0x1p-50)
+                        + Math.abs(m.hi()) * (a + b + 8) * 0x1p-101
+                        + 0x1p-990;
+                cross.set(a, b, m.hi(), m.lo(), 0, 0, r);
+            }
+        }
+        return new ColumnPair(
+                axes(x, k, l), guides(y, ch, cl, k, l), x.gram(k), y.gram(l), cross.build());
+    }
+
+    private static EnclosedMatrix axes(GeometricColumns x, int k, int l) {
+        EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, k);
+        for (int a = 0; a < k; a++) {
+            m.set(a, a, x.root(a).hi(), 0, 0, 0, 0);
+        }
+        return m.build();
+    }
+
+    private static EnclosedMatrix guides(GeometricColumns y, double[][] ch, double[][] cl, int k, int l) {
+        double[][] r = triangle(ch, cl, l);
+        EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, l);
+        for (int b = 0; b < l; b++) {
+            double scale = y.root(b).hi();
+            for (int a = 0; a < k; a++) {
+                m.set(a, b, scale * ch[a][b], 0, 0, 0, 0);
+            }
+            for (int i = 0; i <= b; i++) {
+                m.set(k + i, b, scale * r[i][b], 0, 0, 0, 0);
+            }
+        }
+        return m.build();
+    }
+
+    /** R upper triangular with R*R = 1 − C*C, nearly. */
+    private static double[][] triangle(double[][] ch, double[][] cl, int l) {
+        double[][] th = transposed(ch, l);
+        double[][] tl = transposed(cl, l);
+        double[][] s = new double[l][l];
+        double[][] low = new double[l][l];
+        for (int b = 0; b < l; b++) {
+            s[b][b] = 1;
+        }
+        DdProducts.addProduct(th, tl, ch, cl, -1, s, low);
+        double[][] r = new double[l][l];
+        for (int i = 0; i < l; i++) {
+            // row i of the Schur complement that is left after the rows above
+            double pivot = s[i][i];
+            if (!(pivot > NOTHING)) {
+                continue;
+            }
+            double root = Math.sqrt(pivot);
+            for (int j = i; j < l; j++) {
+                r[i][j] = s[i][j] / root;
+            }
+            for (int m = i + 1; m < l; m++) {
+                double f = r[i][m];
+                for (int j = m; j < l; j++) {
+                    s[m][j] -= f * r[i][j];
+                }
+            }
+        }
+        return r;
+    }
+
+    private static double[][] transposed(double[][] m, int columns) {
+        double[][] t = new double[columns][m.length];
+        for (int i = 0; i < m.length; i++) {
+            for (int j = 0; j < columns; j++) {
+                t[j][i] = m[i][j];
+            }
+        }
+        return t;
+    }
+}

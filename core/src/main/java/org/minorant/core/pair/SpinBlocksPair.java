@@ -1,0 +1,143 @@
+package org.minorant.core.pair;
+
+import org.minorant.core.Enclosure;
+import org.minorant.core.Estimate;
+import org.minorant.core.PositiveOperator;
+import org.minorant.core.WideDouble;
+import org.minorant.core.internal.number.DoubleDouble;
+import org.minorant.core.internal.number.WideDoubleDouble;
+
+/**
+ * n copies of two positive operators on a qubit, through the blocks of total spin:
+ *
+ * <pre>A^⊗n = ⊕_q (det A)^q Sym^k(A) ⊗ 1_m,   k = n − 2q,   m = C(n,q)(k+1)/(n−q+1),   q = 0 … ⌊n/2⌋,</pre>
+ *
+ * so that f(A^⊗n, B^⊗n) = Σ_q m f_q. In a block A has the eigenvalues a₁^(k−i) a₂^i, B the like, and their eigenbases overlap in a Wigner matrix ({@link SpinOverlaps}).
+ *
+ * <p><b>Truncation.</b> Eigenvalues fall geometrically: only the leading ones are kept. A block, or the tail of a spectrum, that is left out lowers f by at most its trace
+ * (Tr[(A₁+A₂) ∧ B] ≤ Tr[A₁ ∧ B] + Tr A₂, and f does not increase), which is added to the upper end. How much may be left out follows from the depth of the answer, first guessed from the Chernoff
+ * exponent and then corrected. So the cost depends on the depth, and on n only through the number of blocks that matter, about √n.
+ *
+ * <p><b>Errors.</b> Weights err by a relative 2^-50; the operators' own relative error η becomes (1 ± η)^n. A trace error ν changes A^⊗n by at most n ν (Tr A + ν)^(n−1) in trace norm.
+ *
+ * <p>The decomposition is that of addition of angular momenta (Schur and Weyl); for pairs of qubit states see K. M. R. Audenaert et al., Commun. Math. Phys. 279, 251 (2008), from memory.
+ */
+final class SpinBlocksPair extends PositivePair {
+
+    private static final double WEIGHT_ERROR = 0x1p-50;
+    private static final int MOST_ROUNDS = 5;
+
+    private final QubitSpectra spectra;
+    private final int n;
+    private final Effort effort;
+    private final Enclosure traceA;
+    private final Enclosure traceB;
+
+    private SpinBlocksPair(QubitSpectra spectra, int n, Effort effort, Enclosure traceA, Enclosure traceB) {
+        this.spectra = spectra;
+        this.n = n;
+        this.effort = effort;
+        this.traceA = traceA;
+        this.traceB = traceB;
+    }
+
+    static SpinBlocksPair of(PositiveOperator a, PositiveOperator b, int n) {
+        QubitSpectra s = QubitSpectra.of(a, b);
+        return new SpinBlocksPair(s, n, Effort.DEFAULT, trace(s.first(), n), trace(s.second(), n));
+    }
+
+    private static Enclosure trace(QubitSpectra.Spectrum s, int n) {
+        WideDoubleDouble t = WideDoubleDouble.of(s.large().plus(s.small())).power(n);
+        Enclosure power = new BlockWeight(t).enclosure();
+        return errors(s, n).apply(power, power).max(Enclosure.ZERO);
+    }
+
+    @Override
+    public PositivePair withEffort(Effort e) {
+        return new SpinBlocksPair(spectra, n, e, traceA, traceB);
+    }
+
+    @Override
+    Enclosure value(WideDouble wa, WideDouble wb) {
+        Enclosure f = run(wa, wb, true);
+        Enclosure x = errors(spectra.first(), n).apply(f, traceA.times(Enclosure.of(wa, wa)));
+        return errors(spectra.second(), n).apply(x, traceB.times(Enclosure.of(wb, wb)));
+    }
+
+    @Override
+    public Estimate traceMinimumEstimate(WideDouble a, WideDouble b) {
+        if (a.signum() <= 0 || b.signum() <= 0 || a.isInfinite() || b.isInfinite()) {
+            return super.traceMinimumEstimate(a, b);
+        }
+        Enclosure f = run(a, b, false);
+        return new Estimate(f.lowerWide(), f.relativeWidth() + n * 0x1p-50);
+    }
+
+    private Enclosure run(WideDouble wa, WideDouble wb, boolean proven) {
+        double log2Guess = ChernoffGuess.log2(spectra, n, wa, wb);
+        Enclosure best = Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);
+        for (int round = 0; round < MOST_ROUNDS; round++) {
+            SpinBlocksPlan plan = SpinBlocksPlan.of(spectra, n, wa, wb, log2Guess, effort.tolerance());
+            SpinBlocksRun run = new SpinBlocksRun(spectra, plan, effort, proven);
+            Enclosure kept = run.sum();
+            Enclosure all = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(plan.dropped()));
+            best = best.intersect(all);
+            double seen = log2(kept.lowerWide());
+            boolean fine = plan.dropped().compareTo(kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 2))) <= 0;
+            if (fine || seen >= log2Guess || seen == Double.NEGATIVE_INFINITY && round > 1) {
+                return best;
+            }
+            log2Guess = seen == Double.NEGATIVE_INFINITY ? log2Guess * 1.5 - 60 : seen - 0.5;
+        }
+        return best;
+    }
+
+    private static double log2(WideDouble x) {
+        return x.signum() <= 0 ? Double.NEGATIVE_INFINITY : x.exponent() + Math.log(x.significand()) / Math.log(2);
+    }
+
+    /** What the errors of one operator's data do to f at n copies. */
+    private record CopiedErrors(double relative, double absolute) {
+
+        Enclosure apply(Enclosure f, Enclosure weightedTrace) {
+            Enclosure x = relative == 0 ? f : f.times(Enclosure.of(1 - relative, 1 + relative));
+            if (absolute == 0) {
+                return x;
+            }
+            Enclosure e = weightedTrace.times(absolute);
+            return Enclosure.of(
+                    x.lowerWide().plusDown(e.upperWide().negate()), x.upperWide().plusUp(e.upperWide()));
+        }
+    }
+
+    private static CopiedErrors errors(QubitSpectra.Spectrum s, int n) {
+        // eigenvalues to 2^-103, their powers to n·2^-101; (1+x)^n − 1 ≤ 1.1 n x for n x ≤ 0.1
+        double each = s.relativeError() + 0x1p-99;
+        double relative = n * each <= 0.1 ? 1.1 * n * each : 1;
+        double total = s.large().hi() + s.small().hi();
+        double share = total == 0 ? 0 : s.traceError() / total;
+        double absolute = n * share <= 0.1 ? 1.2 * n * share : Double.POSITIVE_INFINITY;
+        return new CopiedErrors(relative + WEIGHT_ERROR, absolute);
+    }
+
+    @Override
+    public Enclosure firstTrace() {
+        return traceA;
+    }
+
+    @Override
+    public Enclosure secondTrace() {
+        return traceB;
+    }
+
+    /** The dimension 2^n, or the largest int beyond n = 30. */
+    @Override
+    public int dimension() {
+        return n < 31 ? 1 << n : Integer.MAX_VALUE;
+    }
+
+    @Override
+    public PairKind kind() {
+        return PairKind.SPIN_BLOCKS;
+    }
+}
