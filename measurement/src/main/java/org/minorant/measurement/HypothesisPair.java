@@ -9,9 +9,13 @@ import java.util.TreeMap;
 import java.util.stream.DoubleStream;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
+import org.minorant.core.Estimate;
+import org.minorant.core.Information;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.core.pair.Effort;
 import org.minorant.core.pair.PositivePair;
+import org.minorant.core.pair.WorkListener;
 
 /**
  * Two hypotheses: the system is in the first state ρ, or in the second state σ.
@@ -41,11 +45,18 @@ public final class HypothesisPair {
 
     private final PositivePair curve;
     private final Optional<States> states;
+    private final Optional<Copied> copied;
+    private final Effort effort;
 
-    private HypothesisPair(PositivePair curve, Optional<States> states) {
+    private HypothesisPair(PositivePair curve, Optional<States> states, Optional<Copied> copied, Effort effort) {
         this.curve = curve;
         this.states = states;
+        this.copied = copied;
+        this.effort = effort;
     }
+
+    /** Where a pair of many copies comes from. */
+    private record Copied(HypothesisPair single, int copies) {}
 
     private record States(DensityOperator first, DensityOperator second) {}
 
@@ -59,7 +70,11 @@ public final class HypothesisPair {
      */
     public static HypothesisPair of(DensityOperator first, DensityOperator second) {
         Checks.dimension("HypothesisPair.of", "the second state", second, first.dimension());
-        return new HypothesisPair(PositivePair.of(first, second), Optional.of(new States(first, second)));
+        return new HypothesisPair(
+                PositivePair.of(first, second),
+                Optional.of(new States(first, second)),
+                Optional.empty(),
+                Effort.DEFAULT);
     }
 
     /**
@@ -73,7 +88,68 @@ public final class HypothesisPair {
         double tolerance = curve.dimension() * TRACE_ROUNDING;
         unitTrace("first", curve.firstTrace(), tolerance);
         unitTrace("second", curve.secondTrace(), tolerance);
-        return new HypothesisPair(curve, Optional.empty());
+        return new HypothesisPair(curve, Optional.empty(), Optional.empty(), Effort.DEFAULT);
+    }
+
+    /**
+     * Returns the pair of n copies: the system is n times in the first state, or n times in the second, ρ^⊗n against σ^⊗n. Its curve is exact, in whatever form
+     * the structure of one copy allows ({@link PositivePair#copies}); a matrix of dimension d^n is never formed, so explicit tests cannot be asked for.
+     *
+     * @param n the number of copies, at least 1
+     * @return the pair of n copies; this pair for n = 1
+     * @throws InvalidInputException if n is below 1, or no exact form of n copies fits
+     */
+    public HypothesisPair copies(int n) {
+        if (n == 1) {
+            return this;
+        }
+        int all = copied.map(c -> Math.multiplyExact(c.copies(), n)).orElse(n);
+        HypothesisPair one = single();
+        return new HypothesisPair(
+                one.curve.copies(all).withEffort(effort), Optional.empty(), Optional.of(new Copied(one, all)), effort);
+    }
+
+    /**
+     * Returns the number of copies.
+     *
+     * @return n, 1 for a pair that was not made by {@link #copies}
+     */
+    public int copyCount() {
+        return copied.map(Copied::copies).orElse(1);
+    }
+
+    /**
+     * Returns the pair of one copy.
+     *
+     * @return the pair that {@link #copies} was called on, this pair if there was none
+     */
+    public HypothesisPair single() {
+        return copied.map(Copied::single).orElse(this);
+    }
+
+    /**
+     * Returns this pair with values of the curve to another relative width; 1e-12 if none was asked for. Where one copy is evaluated to full precision at once, nothing changes.
+     *
+     * @param relativeWidth between 1e-15 and 1
+     * @return the pair
+     * @throws InvalidInputException if the width is out of range
+     */
+    public HypothesisPair withTolerance(double relativeWidth) {
+        return with(effort.withTolerance(relativeWidth));
+    }
+
+    /**
+     * Returns this pair with a listener that follows long evaluations and can cancel them.
+     *
+     * @param listener told about progress, asked whether to stop
+     * @return the pair
+     */
+    public HypothesisPair withProgress(WorkListener listener) {
+        return with(effort.withListener(listener));
+    }
+
+    private HypothesisPair with(Effort e) {
+        return new HypothesisPair(curve.withEffort(e), states, copied, e);
     }
 
     private static void unitTrace(String name, Enclosure trace, double tolerance) {
@@ -153,6 +229,35 @@ public final class HypothesisPair {
     }
 
     /**
+     * Returns the least number of copies at which the minimum error is at most a target, enclosed there and one copy before.
+     *
+     * <p>Made from {@link #single() one copy} of this pair, with this pair's tolerance and listener.
+     *
+     * @param prior p, the prior of the first state, strictly between 0 and 1
+     * @param target the error to reach, above 0 and below min(p, 1 − p), which guessing reaches without any copy
+     * @return the number of copies, with the errors that prove it
+     * @throws InvalidInputException if a number is out of range, or a million copies are not enough
+     */
+    public CopiesNeeded copiesFor(double prior, double target) {
+        String asked = "HypothesisPair.copiesFor";
+        Checks.inRange(asked, "the prior", prior, Double.MIN_NORMAL, Math.nextDown(1.0));
+        Checks.inRange(asked, "the target", target, Double.MIN_NORMAL, Math.nextDown(Math.min(prior, 1 - prior)));
+        return new CopiesSearch(single().with(effort), prior, target).run();
+    }
+
+    /**
+     * Returns the minimum error probability without proof, faster than {@link #minimumError} for many copies.
+     *
+     * @param prior p, the prior of the first state, between 0 and 1
+     * @return an estimate of the minimum error
+     * @throws InvalidInputException if the prior is not between 0 and 1
+     */
+    public Estimate minimumErrorEstimate(double prior) {
+        Checks.inRange("HypothesisPair.minimumErrorEstimate", "the prior", prior, 0, 1);
+        return curve.traceMinimumEstimate(WideDouble.of(prior), WideDouble.of(1 - prior));
+    }
+
+    /**
      * Returns f(t) = Tr[ρ ∧ tσ].
      *
      * @param t the weight on the second state, at least 0 and finite
@@ -183,6 +288,17 @@ public final class HypothesisPair {
     public Enclosure typeTwoError(double level) {
         return typeTwo("HypothesisPair.typeTwoError", new SupportLines(curve), level, RELATIVE_GAP, 0)
                 .value();
+    }
+
+    /**
+     * Returns the hypothesis-testing relative entropy D_H^ε(ρ‖σ) = −ln β_ε (L. Wang, R. Renner, Phys. Rev. Lett. 108, 200501, 2012, from memory), +∞ where β_ε = 0.
+     *
+     * @param level ε, at least 0
+     * @return D_H^ε, of the n copies if this is a pair of copies
+     * @throws InvalidInputException if the level is negative, NaN or infinite
+     */
+    public Information hypothesisTestingDivergence(double level) {
+        return Information.ofNats(typeTwoError(level).ln().negate());
     }
 
     private SupportLines.Supremum typeTwo(

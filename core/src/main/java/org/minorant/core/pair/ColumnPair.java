@@ -95,7 +95,12 @@ record ColumnPair(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, Enclose
 
     /** Weighted inner products, those across in units of 2^exponent, and the finished rotations. */
     private record Weighted(
-            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, HyperbolicSweeps sweeps, Runnable checkpoint) {
+            EnclosedMatrix gx,
+            EnclosedMatrix gy,
+            EnclosedMatrix cross,
+            int exponent,
+            HyperbolicSweeps sweeps,
+            Runnable checkpoint) {
 
         Enclosure enclose() {
             return RotationCertificate.enclose(gx, gy, cross, exponent, sweeps, checkpoint);

@@ -127,6 +127,11 @@ final class DensePair extends PositivePair {
     }
 
     @Override
+    PositivePair power(int n) {
+        return PairStructure.power(a, b, n);
+    }
+
+    @Override
     public Enclosure firstTrace() {
         return a.traceEnclosure();
     }

@@ -209,6 +209,11 @@ final class FactorPair extends PositivePair {
     }
 
     @Override
+    PositivePair power(int n) {
+        return entries.isPresent() ? entries.get().power(n) : super.power(n);
+    }
+
+    @Override
     public Enclosure firstTrace() {
         return unscaled(traceA, powerA);
     }

@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.OptionalInt;
 import org.minorant.core.EnclosedMatrix;
+import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
 import org.minorant.core.PositiveOperator;
 
@@ -35,6 +36,18 @@ final class PairStructure {
         double[] ones = new double[pairs.size()];
         java.util.Arrays.fill(ones, 1);
         return DirectSumPair.of(pairs, ones);
+    }
+
+    /** The pair of n copies of two operators. */
+    static PositivePair power(PositiveOperator a, PositiveOperator b, int n) {
+        if (a.dimension() == 2) {
+            return SpinBlocksPair.of(a, b, n);
+        }
+        throw new InvalidInputException(
+                "PositivePair.copies",
+                "operators of dimension " + a.dimension() + " that do not commute",
+                "dimension 2",
+                "compress them to a common support of dimension 2 if they have one");
     }
 
     private static PositivePair single(PositiveOperator a, PositiveOperator b) {

@@ -70,9 +70,8 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
             return new QubitSpectra(p.spectrum(), q.spectrum(), DoubleDouble.ONE, DoubleDouble.ZERO);
         }
         BigDecimal dot = p.x.multiply(q.x).add(p.y.multiply(q.y)).add(p.z.multiply(q.z));
-        BigDecimal cross = square(p.y, q.z, p.z, q.y)
-                .add(square(p.z, q.x, p.x, q.z))
-                .add(square(p.x, q.y, p.y, q.x));
+        BigDecimal cross =
+                square(p.y, q.z, p.z, q.y).add(square(p.z, q.x, p.x, q.z)).add(square(p.x, q.y, p.y, q.x));
         BigDecimal sine = cross.sqrt(DIGITS).divide(lengths, DIGITS);
         BigDecimal cosine = dot.divide(lengths, DIGITS);
         // the larger of the two from the half-angle formula, the smaller one from sin θ = 2 sin cos

@@ -35,15 +35,15 @@ final class SpinBlock {
             for (int b = 0; b < l; b++) {
                 DoubleDouble scale = x.root(a).times(y.root(b));
                 DoubleDouble m = new DoubleDouble(ch[a][b], cl[a][b]).times(scale);
-                // the roots err by (a+1)·2^-101 and (b+1)·2^-101, the two products by 2^-102 each; roots below 2^-1000 count as 0
+                // the roots err by (a+1)·2^-101 and (b+1)·2^-101, the two products by 2^-102 each; roots below 2^-1000
+                // count as 0
                 double r = scale.hi() * radius[a][b] * (1 + 0x1p-50)
                         + Math.abs(m.hi()) * (a + b + 8) * 0x1p-101
                         + 0x1p-990;
                 cross.set(a, b, m.hi(), m.lo(), 0, 0, r);
             }
         }
-        return new ColumnPair(
-                axes(x, k, l), guides(y, ch, cl, k, l), x.gram(k), y.gram(l), cross.build());
+        return new ColumnPair(axes(x, k, l), guides(y, ch, cl, k, l), x.gram(k), y.gram(l), cross.build());
     }
 
     private static EnclosedMatrix axes(GeometricColumns x, int k, int l) {

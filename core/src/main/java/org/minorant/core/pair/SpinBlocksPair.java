@@ -4,7 +4,6 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
-import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
@@ -83,7 +82,8 @@ final class SpinBlocksPair extends PositivePair {
             Enclosure all = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(plan.dropped()));
             best = best.intersect(all);
             double seen = log2(kept.lowerWide());
-            boolean fine = plan.dropped().compareTo(kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 2))) <= 0;
+            boolean fine =
+                    plan.dropped().compareTo(kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 2))) <= 0;
             if (fine || seen >= log2Guess || seen == Double.NEGATIVE_INFINITY && round > 1) {
                 return best;
             }
@@ -106,7 +106,8 @@ final class SpinBlocksPair extends PositivePair {
             }
             Enclosure e = weightedTrace.times(absolute);
             return Enclosure.of(
-                    x.lowerWide().plusDown(e.upperWide().negate()), x.upperWide().plusUp(e.upperWide()));
+                    x.lowerWide().plusDown(e.upperWide().negate()),
+                    x.upperWide().plusUp(e.upperWide()));
         }
     }
 

@@ -29,7 +29,8 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
      * @param weightB the weight on B
      * @param most an upper end of the block's share, by its traces
      */
-    record Block(int order, int first, int second, WideDoubleDouble weightA, WideDoubleDouble weightB, WideDouble most) {}
+    record Block(
+            int order, int first, int second, WideDoubleDouble weightA, WideDoubleDouble weightB, WideDouble most) {}
 
     /** One operator in all blocks: log2 of the weight of block q, and the geometric spectrum in it. */
     private record Side(WideDoubleDouble[] weight, double[] log2Weight, double log2Ratio, double gap) {
@@ -40,13 +41,18 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             int blocks = multiplicity.length;
             WideDoubleDouble[] weight = new WideDoubleDouble[blocks];
             double[] log2 = new double[blocks];
-            WideDoubleDouble power = large.power(n).times(WideDoubleDouble.of(DoubleDouble.of(w.significand()), w.exponent()));
+            WideDoubleDouble power =
+                    large.power(n).times(WideDoubleDouble.of(DoubleDouble.of(w.significand()), w.exponent()));
             for (int q = 0; q < blocks; q++) {
                 weight[q] = power.times(multiplicity[q]);
                 log2[q] = weight[q].log2();
                 power = power.times(ratio);
             }
-            return new Side(weight, log2, ratio.log2(), DoubleDouble.ONE.minus(s.ratio()).hi());
+            return new Side(
+                    weight,
+                    log2,
+                    ratio.log2(),
+                    DoubleDouble.ONE.minus(s.ratio()).hi());
         }
 
         /** log2 of the trace from column i on, in block q with k + 1 columns. */
@@ -74,8 +80,7 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         }
     }
 
-    static SpinBlocksPlan of(
-            QubitSpectra s, int n, WideDouble wa, WideDouble wb, double log2Guess, double tolerance) {
+    static SpinBlocksPlan of(QubitSpectra s, int n, WideDouble wa, WideDouble wb, double log2Guess, double tolerance) {
         WideDoubleDouble[] multiplicity = multiplicities(n);
         Side a = Side.of(s.first(), n, wa, multiplicity);
         Side b = Side.of(s.second(), n, wb, multiplicity);

@@ -133,7 +133,9 @@ final class SpinOverlaps {
     }
 
     private static DoubleDouble root(int numerator, int k) {
-        return numerator <= 0 ? DoubleDouble.ZERO : DoubleDouble.of(numerator).dividedBy(DoubleDouble.of(k)).sqrt();
+        return numerator <= 0
+                ? DoubleDouble.ZERO
+                : DoubleDouble.of(numerator).dividedBy(DoubleDouble.of(k)).sqrt();
     }
 
     private void prepare(int k) {
@@ -181,9 +183,16 @@ final class SpinOverlaps {
 
     /** out = x·p + y·q in double-double. */
     private static void mix(
-            double[] xh, double[] xl, double[] ph, double[] pl,
-            double[] yh, double[] yl, double[] qh, double[] ql,
-            double[] outH, double[] outL) {
+            double[] xh,
+            double[] xl,
+            double[] ph,
+            double[] pl,
+            double[] yh,
+            double[] yl,
+            double[] qh,
+            double[] ql,
+            double[] outH,
+            double[] outL) {
         for (int b = 0; b < outH.length; b++) {
             double m = xh[b] * ph[b];
             double me = ProductError.of(xh[b], ph[b], m) + (xh[b] * pl[b] + xl[b] * ph[b]);
@@ -199,9 +208,16 @@ final class SpinOverlaps {
     }
 
     private static void mixMinus(
-            double[] xh, double[] xl, double[] ph, double[] pl,
-            double[] yh, double[] yl, double[] qh, double[] ql,
-            double[] outH, double[] outL) {
+            double[] xh,
+            double[] xl,
+            double[] ph,
+            double[] pl,
+            double[] yh,
+            double[] yl,
+            double[] qh,
+            double[] ql,
+            double[] outH,
+            double[] outL) {
         for (int b = 0; b < outH.length; b++) {
             double m = xh[b] * ph[b];
             double me = ProductError.of(xh[b], ph[b], m) + (xh[b] * pl[b] + xl[b] * ph[b]);
@@ -222,9 +238,16 @@ final class SpinOverlaps {
     }
 
     private static void combine(
-            double[] xh, double[] xl, double ph, double pl,
-            double[] yh, double[] yl, double qh, double ql,
-            double[] outH, double[] outL) {
+            double[] xh,
+            double[] xl,
+            double ph,
+            double pl,
+            double[] yh,
+            double[] yl,
+            double qh,
+            double ql,
+            double[] outH,
+            double[] outL) {
         for (int b = 0; b < outH.length; b++) {
             double m = xh[b] * ph;
             double me = ProductError.of(xh[b], ph, m) + (xh[b] * pl + xl[b] * ph);

@@ -1,0 +1,114 @@
+package org.minorant.measurement;
+
+import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertThrows;
+import static org.junit.jupiter.api.Assertions.assertTrue;
+
+import java.util.concurrent.CancellationException;
+import java.util.concurrent.atomic.AtomicLong;
+import org.junit.jupiter.api.Test;
+import org.minorant.core.DensityOperator;
+import org.minorant.core.Enclosure;
+import org.minorant.core.InvalidInputException;
+import org.minorant.core.pair.WorkListener;
+
+class CopiesTest {
+
+    private static final HypothesisPair PAIR =
+            HypothesisPair.of(DensityOperator.ofBloch(0, 0, 0.9), DensityOperator.ofBloch(0.6, 0, 0.5));
+
+    @Test
+    void oneCopyIsThePairItself() {
+        assertEquals(PAIR, PAIR.copies(1));
+        assertEquals(1, PAIR.copyCount());
+        assertEquals(PAIR, PAIR.single());
+    }
+
+    @Test
+    void copiesOfCopiesMultiply() {
+        HypothesisPair six = PAIR.copies(2).copies(3);
+        assertEquals(6, six.copyCount());
+        assertEquals(PAIR, six.single());
+        assertEquals(PAIR.copies(6).minimumError(0.5), six.minimumError(0.5));
+    }
+
+    @Test
+    void theLeastNumberOfCopiesIsProvenFromBothSides() {
+        CopiesNeeded k = PAIR.copiesFor(0.5, 1e-9);
+        assertTrue(k.errorAt().upper() <= 1e-9);
+        assertTrue(k.errorBefore().lower() > 1e-9);
+        assertTrue(k.isLeast());
+        assertEquals(PAIR.copies(k.value()).minimumError(0.5), k.errorAt());
+        assertEquals(PAIR.copies(k.value() - 1).minimumError(0.5), k.errorBefore());
+    }
+
+    @Test
+    void fewCopiesForALargeError() {
+        CopiesNeeded k = PAIR.copiesFor(0.5, 0.4);
+        assertEquals(1, k.value());
+        assertEquals(Enclosure.exact(0.5), k.errorBefore());
+    }
+
+    @Test
+    void whatGuessingReachesNeedsNoCopies() {
+        assertThrows(InvalidInputException.class, () -> PAIR.copiesFor(0.3, 0.3));
+    }
+
+    @Test
+    void equalStatesAreNeverToldApart() {
+        DensityOperator r = DensityOperator.ofBloch(0, 0.1, 0.9);
+        InvalidInputException e = assertThrows(
+                InvalidInputException.class, () -> HypothesisPair.of(r, r).copiesFor(0.5, 0.4));
+        assertTrue(e.getMessage().contains("check that the states differ"), e.getMessage());
+    }
+
+    @Test
+    void theEstimateLiesInTheEnclosureWithinItsError() {
+        HypothesisPair many = PAIR.copies(60);
+        Enclosure e = many.minimumError(0.3);
+        double estimate = many.minimumErrorEstimate(0.3).value();
+        double slack = many.minimumErrorEstimate(0.3).relativeError();
+        assertTrue(e.widen(slack * e.upper()).contains(estimate), e + " and " + estimate);
+    }
+
+    @Test
+    void progressIsReportedToTheEnd() {
+        AtomicLong last = new AtomicLong();
+        PAIR.copies(60)
+                .withProgress((done, total) -> last.accumulateAndGet(total - done, Math::min))
+                .minimumError(0.5);
+        assertEquals(0, last.get());
+    }
+
+    @Test
+    void theListenerCancels() {
+        WorkListener never = new WorkListener() {
+            @Override
+            public void onProgress(long done, long total) {}
+
+            @Override
+            public boolean isCancelled() {
+                return true;
+            }
+        };
+        HypothesisPair many = PAIR.copies(200).withProgress(never);
+        assertThrows(CancellationException.class, () -> many.minimumError(0.5));
+    }
+
+    @Test
+    void anInterruptCancels() {
+        Thread.currentThread().interrupt();
+        assertThrows(CancellationException.class, () -> PAIR.copies(200).minimumError(0.5));
+        assertTrue(Thread.interrupted());
+    }
+
+    @Test
+    void aWiderToleranceGivesAWiderEnclosureAroundTheSameNumber() {
+        Enclosure rough = PAIR.copies(100).withTolerance(1e-4).minimumError(0.5);
+        Enclosure fine = PAIR.copies(100).minimumError(0.5);
+        assertTrue(rough.relativeWidth() <= 1e-4, () -> "" + rough.relativeWidth());
+        assertTrue(fine.relativeWidth() <= 1e-12, () -> "" + fine.relativeWidth());
+        assertTrue(rough.upperWide().compareTo(fine.lowerWide()) >= 0);
+        assertTrue(rough.lowerWide().compareTo(fine.upperWide()) <= 0);
+    }
+}
