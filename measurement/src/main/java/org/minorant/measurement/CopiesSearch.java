@@ -56,18 +56,34 @@ final class CopiesSearch {
         return ln - Math.log(target);
     }
 
+    /**
+     * Refuses where even the trace distance T of one copy shows that too many copies are needed: Tr[pρ^⊗n ∧ (1−p)σ^⊗n] ≥ min(p, 1−p)(1 − nT), as the trace distance of n copies is at most nT.
+     */
+    private void refuseHopeless() {
+        double distance = 1 - pair.traceMinimum(1).lower();
+        double share = 1 - target / Math.min(prior, 1 - prior);
+        if (share > 2.0 * MOST * distance) {
+            throw tooMany("at " + MOST);
+        }
+    }
+
+    private InvalidInputException tooMany(String where) {
+        return new InvalidInputException(
+                "HypothesisPair.copiesFor",
+                "the error " + where + " copies is still above " + target,
+                "at most " + MOST + " copies",
+                "ask for a larger error, or check that the states differ");
+    }
+
     private int guess() {
+        refuseHopeless();
         int low = 0;
         double above = excess(0);
         int high = 1;
         double below = excess(high);
         while (below > 0) {
             if (high >= MOST) {
-                throw new InvalidInputException(
-                        "HypothesisPair.copiesFor",
-                        "the error at " + high + " copies is still above " + target,
-                        MOST + " copies",
-                        "ask for a larger error, or check that the states differ");
+                throw tooMany("at " + high);
             }
             double slope = (above - below) / (high - low);
             // where the secant says, a little further; at least half as many again and at most eight times as many

@@ -83,60 +83,34 @@ record ColumnPair(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, Enclose
 
     /** The same; the checkpoint is passed many times a second and may throw. */
     Enclosure enclose(double wa, double wb, Runnable checkpoint) {
-        return weighted(wa, wb, checkpoint).map(Weighted::enclose).orElse(Enclosure.ZERO);
+        return weighted(wa, wb)
+                .map(w -> RotationCertificate.enclose(w, checkpoint))
+                .orElse(Enclosure.ZERO);
     }
 
     /** Tr[wa XX* ∧ wb YY*] as the rotations find it, without proof. */
     WideDouble estimate(double wa, double wb, Runnable checkpoint) {
-        return weighted(wa, wb, checkpoint)
-                .map(w -> WideDouble.of(w.sweeps().total(), 2L * w.exponent()))
+        return weighted(wa, wb)
+                .map(w -> WideDouble.of(w.sweep(checkpoint).total(), 2L * w.exponent()))
                 .orElse(WideDouble.ZERO);
     }
 
-    /** Weighted inner products, those across in units of 2^exponent, and the finished rotations. */
-    private record Weighted(
-            EnclosedMatrix gx,
-            EnclosedMatrix gy,
-            EnclosedMatrix cross,
-            int exponent,
-            HyperbolicSweeps sweeps,
-            Runnable checkpoint) {
-
-        Enclosure enclose() {
-            return RotationCertificate.enclose(gx, gy, cross, exponent, sweeps, checkpoint);
-        }
-    }
-
-    private Optional<Weighted> weighted(double wa, double wb, Runnable checkpoint) {
+    private Optional<WeightedColumns> weighted(double wa, double wb) {
         DoubleDouble sa = DoubleDouble.of(wa).sqrt();
         DoubleDouble sb = DoubleDouble.of(wb).sqrt();
-        EnclosedMatrix wgx = scale(scale(gx, sa), sa);
-        EnclosedMatrix wgy = scale(scale(gy, sb), sb);
-        EnclosedMatrix m = scale(scale(cross, sa), sb);
-        double largest = 0;
-        for (int i = 0; i < m.rows(); i++) {
-            for (int j = 0; j < m.columns(); j++) {
-                largest = Math.max(largest, m.modulusUpper(i, j));
-            }
-        }
-        if (largest == 0) {
-            return Optional.empty();
-        }
-        int e = Math.getExponent(largest);
-        EnclosedMatrix unitCross = powerOfTwo(m, -e);
         EnclosedMatrix wx = scale(x, sa).midpoint();
         EnclosedMatrix wy = scale(y, sb).midpoint();
-        HyperbolicSweeps sweeps = HyperbolicSweeps.run(wx, wy, wgx, wgy, unitCross, e, checkpoint);
-        return Optional.of(new Weighted(wgx, wgy, unitCross, e, sweeps, checkpoint));
+        return new WeightedColumns(
+                        () -> wx,
+                        () -> wy,
+                        scale(scale(gx, sa), sa),
+                        scale(scale(gy, sb), sb),
+                        scale(scale(cross, sa), sb),
+                        0)
+                .rescaled();
     }
 
     private static EnclosedMatrix scale(EnclosedMatrix m, DoubleDouble s) {
         return s.lo() == 0 ? m.times(s.hi()) : m.times(s.hi()).plus(m.times(s.lo()));
-    }
-
-    /** m · 2^e in steps that do not overflow. */
-    private static EnclosedMatrix powerOfTwo(EnclosedMatrix m, int e) {
-        int half = e / 2;
-        return m.times(Math.scalb(1.0, half)).times(Math.scalb(1.0, e - half));
     }
 }

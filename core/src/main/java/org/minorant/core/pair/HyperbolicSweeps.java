@@ -24,7 +24,10 @@ final class HyperbolicSweeps {
     private static final double NEGLIGIBLE = 1e-25;
 
     private static final double ORTHOGONAL = 1e-16;
-    private static final double SHORT_OF_EQUAL = 1e-14;
+    private static final double SHORT_OF_EQUAL = 1e-7;
+    /** Beyond this part of the sum of the norms the root is of no danger. */
+    private static final double WIDE_ANGLE = 0.1;
+
     /** Overlaps met below this are squared by the rotations of the sweep that met them. */
     private static final double NEARLY_ORTHOGONAL = 1e-4;
 
@@ -185,8 +188,7 @@ final class HyperbolicSweeps {
             d = a * Rotations.distance(re[c], im[c], re[p], im[p], unit * hr / a, unit * hi / a);
         }
         double exactRoot = Math.sqrt((a - b) * (a - b) + 4 * d);
-        // equal columns would need an infinite angle; stopping short loses 1e-14 of what they share
-        double root = Math.max(exactRoot, SHORT_OF_EQUAL * (a + b));
+        double root = Math.max(exactRoot, shortest(p, c, exactRoot, a + b));
         double s = a + b + root;
         total += 2 * h2 / s;
         // t in units of 2^e; 1 − |t|² written without cancellation
@@ -200,6 +202,27 @@ final class HyperbolicSweeps {
             retire(c);
         }
         return true;
+    }
+
+    /**
+     * The least root that may be used. Equal columns would need an infinite angle. Stopping short leaves 1e-7 of what they share to the next level of the certificate; coefficients that have already been stretched
+     * count. The inner products there have lost 14 digits of 32 by then: less would leave more, and more would lose more.
+     */
+    private double shortest(int p, int c, double exactRoot, double sum) {
+        if (exactRoot > WIDE_ANGLE * sum) {
+            return 0;
+        }
+        double stretch = Math.max(stretch(p, 0, k), stretch(c, k, r));
+        return Math.min(1, SHORT_OF_EQUAL * Math.max(1, stretch)) * sum;
+    }
+
+    /** The squared coefficients of column j in the columns of its own operator. */
+    private double stretch(int j, int from, int to) {
+        double s = 0;
+        for (int i = from; i < to; i++) {
+            s += vr[j][i] * vr[j][i] + (vi[j].length == 0 ? 0 : vi[j][i] * vi[j][i]);
+        }
+        return s;
     }
 
     private void retire(int j) {
@@ -242,9 +265,14 @@ final class HyperbolicSweeps {
         norm[p] = squared(p);
         norm[m] = squared(m);
         mixCoefficients(p, m, c, sr, si, tr, ti, hyperbolic);
-        for (int z = 0; z < r; z++) {
-            if (z != p && z != m && norm[z] > 0) {
-                mixProducts(z, p, m, c, sr, si, tr, ti, hyperbolic);
+        if (gi[0].length == 0) {
+            mixRealProducts(p, m, c, sr, tr, hyperbolic ? q : 1, 1, 0, k);
+            mixRealProducts(p, m, c, sr, tr, 1, hyperbolic ? q : 1, k, r);
+        } else {
+            for (int z = 0; z < r; z++) {
+                if (z != p && z != m && norm[z] > 0) {
+                    mixProducts(z, p, m, c, sr, si, tr, ti, hyperbolic);
+                }
             }
         }
         setProduct(p, m, 0, 0);
@@ -259,6 +287,48 @@ final class HyperbolicSweeps {
         // in the x rows (0..k) column p is plain and column m in units of 2^e; in the y rows it is the other way round
         Rotations.mixRange(vr[p], vi[p], vr[m], vi[m], 0, k, c, q * sr, q * si, tr, ti);
         Rotations.mixRange(vr[p], vi[p], vr[m], vi[m], k, r, c, sr, si, q * tr, q * ti);
+    }
+
+    /**
+     * What {@link #mixProducts} does, for real columns z from (included) to (excluded), all of one type; this is where the time goes. up and um are the factors of a
+     * second product across types. A sum that cancels is computed from the columns.
+     */
+    private void mixRealProducts(int p, int m, double c, double s, double t, double up, double um, int from, int to) {
+        double[] gp = gr[p];
+        double[] gm = gr[m];
+        double us = up * s;
+        double ut = um * t;
+        double scaleP = ((p < k) != (from < k) ? q : 1) / norm[p];
+        double scaleM = ((m < k) != (from < k) ? q : 1) / norm[m];
+        for (int z = from; z < to; z++) {
+            if (z == p || z == m || !(norm[z] > 0)) {
+                continue;
+            }
+            double a = gp[z];
+            double b = gm[z];
+            double x = c * a;
+            double y = us * b;
+            double v = x + y;
+            double size = Math.abs(x) + Math.abs(y);
+            if (!(scaleP * size * size <= norm[z])) {
+                v = product(z, p);
+            }
+            gp[z] = v;
+            gr[z][p] = v;
+            x = c * b;
+            y = ut * a;
+            v = x + y;
+            size = Math.abs(x) + Math.abs(y);
+            if (!(scaleM * size * size <= norm[z])) {
+                v = product(z, m);
+            }
+            gm[z] = v;
+            gr[z][m] = v;
+        }
+    }
+
+    private double product(int z, int j) {
+        return Rotations.dotRe(re[z], im[z], re[j], im[j]) / ((z < k) != (j < k) ? unit : 1);
     }
 
     private void mixProducts(

@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.Optional;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Operator;
@@ -26,9 +27,12 @@ import org.minorant.core.WideDouble;
  */
 final class RotationCertificate {
 
-    private static final double FINE = 1e-9;
-    private static final int REFINEMENTS = 8;
+    /** Beyond this relative width what the rotations left is enclosed in its turn. */
+    private static final double WIDE = 0x1p-46;
 
+    private static final int MOST_LEVELS = 3;
+
+    private final WeightedColumns pair;
     private final EnclosedMatrix gx;
     private final EnclosedMatrix gy;
     private final EnclosedMatrix cross;
@@ -39,89 +43,123 @@ final class RotationCertificate {
     private final EnclosedMatrix nGy;
     /** Gx N. */
     private final EnclosedMatrix gxN;
+    /** NN*. */
+    private final EnclosedMatrix nn;
 
-    private RotationCertificate(
-            EnclosedMatrix gx, EnclosedMatrix gy, EnclosedMatrix cross, int exponent, EnclosedMatrix n) {
-        this.gx = gx;
-        this.gy = gy;
-        this.cross = cross;
-        this.exponent = exponent;
+    private RotationCertificate(WeightedColumns pair, EnclosedMatrix n) {
+        this.pair = pair;
+        this.gx = pair.gx();
+        this.gy = pair.gy();
+        this.cross = pair.cross();
+        this.exponent = pair.exponent();
         this.n = n;
-        this.nGy = n.times(gy);
+        // Gy is often diagonal, and zeros of a left factor cost nothing
+        this.nGy = gy.times(n.adjoint()).adjoint();
         this.gxN = gx.times(n);
+        this.nn = n.times(n.adjoint());
     }
 
     /**
      * Encloses f.
      *
-     * @param gx X*X
-     * @param gy Y*Y
-     * @param cross X*Y / 2^exponent
-     * @param exponent the unit of cross
-     * @param sweeps the finished rotations
+     * @param pair the columns with their inner products
      * @param checkpoint passed many times a second, may throw
      * @return an enclosure of f
      */
-    static Enclosure enclose(
-            EnclosedMatrix gx,
-            EnclosedMatrix gy,
-            EnclosedMatrix cross,
-            int exponent,
-            HyperbolicSweeps sweeps,
-            Runnable checkpoint) {
-        ContractionBlocks blocks = ContractionBlocks.of(sweeps, exponent);
-        checkpoint.run();
-        return new RotationCertificate(gx, gy, cross, exponent, blocks.contraction())
-                .enclose(blocks.first(), blocks.second(), checkpoint);
+    static Enclosure enclose(WeightedColumns pair, Runnable checkpoint) {
+        return enclose(pair, pair.sweep(checkpoint), checkpoint);
     }
 
-    private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second, Runnable checkpoint) {
-        EnclosedMatrix nn = n.times(n.adjoint());
-        EnclosedMatrix left = EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn));
-        EnclosedMatrix right =
-                EnclosedMatrix.identity(gy.rows()).minus(scaleByQ(n.adjoint().times(n)));
-        EnclosedMatrix p = refine(first, left);
+    /** The same from rotations found elsewhere, which are not trusted. */
+    static Enclosure enclose(WeightedColumns pair, HyperbolicSweeps sweeps, Runnable checkpoint) {
+        return enclose(pair, sweeps, 1, checkpoint);
+    }
+
+    private static Enclosure enclose(WeightedColumns pair, HyperbolicSweeps sweeps, int level, Runnable checkpoint) {
+        ContractionBlocks blocks = ContractionBlocks.of(sweeps, pair.exponent());
         checkpoint.run();
-        EnclosedMatrix p2 = refine(second, right);
+        Enclosure unit = new RotationCertificate(pair, blocks.contraction())
+                .enclose(blocks.first(), blocks.second(), level, checkpoint);
+        return Enclosure.of(
+                unit.lowerWide().timesPowerOfTwo(2L * pair.exponent()),
+                unit.upperWide().timesPowerOfTwo(2L * pair.exponent()));
+    }
+
+    /** f in units of 2^2e. */
+    private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second, int level, Runnable checkpoint) {
+        Inverse p = Inverse.refine(first, EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn)));
         checkpoint.run();
-        EnclosedMatrix e = defect(p, left);
-        double epsilon = Math.max(e.frobeniusUpper(), defect(p2, right).frobeniusUpper());
+        Inverse p2 = Inverse.refine(
+                second,
+                EnclosedMatrix.identity(gy.rows()).minus(scaleByQ(n.adjoint().times(n))));
+        checkpoint.run();
+        double epsilon = Math.max(p.size(), p2.size());
         if (!(epsilon < 0.5)) {
             return Enclosure.of(0, Double.POSITIVE_INFINITY);
         }
         EnclosedMatrix w = n.times(cross.adjoint());
         EnclosedMatrix mixed = w.plus(w.adjoint());
         EnclosedMatrix quadratic = nGy.times(n.adjoint());
-        EnclosedMatrix phi = mixed.minus(nn.times(gx)).minus(quadratic);
-        EnclosedMatrix f = p.adjoint().times(phi).times(p);
-        EnclosedMatrix ef = e.times(f);
+        // (Gx NN*)*, for the same reason as above
+        EnclosedMatrix phi = mixed.minus(gx.times(nn).adjoint()).minus(quadratic);
+        Enclosure value = p.traceOfInverse(congruence(p, phi));
         checkpoint.run();
-        double rest = Math.pow(e.frobeniusUpper(), 3) * f.frobeniusUpper() / (1 - epsilon) * (1 + 0x1p-40);
-        Enclosure value =
-                f.traceRe().minus(ef.traceRe()).plus(e.times(ef).traceRe()).widen(rest);
-        Enclosure leftover = leftover(p, p2, mixed, quadratic, value).dividedBy(Enclosure.of(1 - epsilon, 1));
-        Enclosure total = Enclosure.of(value.lowerWide(), value.upperWide().plusUp(leftover.upperWide()));
-        return Enclosure.of(
-                total.lowerWide().timesPowerOfTwo(2L * exponent),
-                total.upperWide().timesPowerOfTwo(2L * exponent));
+        WeightedColumns rest = leftover(p, p2, mixed, quadratic);
+        WideDouble seen = value.lowerWide().max(WideDouble.ZERO);
+        WideDouble bound = LeftoverBound.of(rest.gx(), rest.gy(), rest.cross(), exponent, seen);
+        // A' = (X − YN*)P(1 + E)⁻¹P*(…)* lies between (1 ± ε)⁻¹ times what P alone gives, and f is monotone and
+        // homogeneous
+        Enclosure error = Enclosure.of(1 - epsilon, 1).dividedBy(Enclosure.of(1 - epsilon, 1));
+        Enclosure more = Enclosure.of(WideDouble.ZERO, bound).times(error);
+        Enclosure total = plus(value, more);
+        if (level == MOST_LEVELS || total.relativeWidth() <= WIDE) {
+            return total;
+        }
+        return total.intersect(plus(value, deeper(rest, level, checkpoint).times(error)));
     }
 
-    /** Bounds f(A',B') in units of 2^2e. */
-    private Enclosure leftover(
-            EnclosedMatrix p, EnclosedMatrix p2, EnclosedMatrix mixed, EnclosedMatrix quadratic, Enclosure value) {
-        EnclosedMatrix riccati = cross.minus(gxN)
-                .minus(nGy)
-                .plus(scaleByQ(n.times(cross.adjoint().times(n))));
-        EnclosedMatrix across = p.adjoint().times(riccati).times(p2);
-        EnclosedMatrix gramX = p.adjoint()
-                .times(gx.minus(scaleByQ(mixed)).plus(scaleByQ(quadratic)))
-                .times(p);
+    private static Enclosure plus(Enclosure value, Enclosure more) {
+        return Enclosure.of(
+                value.lowerWide().plusDown(more.lowerWide()), value.upperWide().plusUp(more.upperWide()));
+    }
+
+    /** f(A',B') in units of 2^2e, by rotations of the columns that are left. */
+    private Enclosure deeper(WeightedColumns rest, int level, Runnable checkpoint) {
+        Optional<WeightedColumns> unit = rest.rescaled();
+        if (unit.isEmpty()) {
+            return Enclosure.ZERO;
+        }
+        Enclosure f = enclose(unit.get(), unit.get().sweep(checkpoint), level + 1, checkpoint);
+        return Enclosure.of(
+                f.lowerWide().max(WideDouble.ZERO).timesPowerOfTwo(-2L * exponent),
+                f.upperWide().timesPowerOfTwo(-2L * exponent));
+    }
+
+    private static EnclosedMatrix congruence(Inverse p, EnclosedMatrix m) {
+        return p.root().adjoint().times(m).times(p.root());
+    }
+
+    /** The columns X' = (X − YN*)P and Y' = (Y − XN)P₂ with their inner products, those across in units of 2^e. */
+    private WeightedColumns leftover(Inverse p, Inverse p2, EnclosedMatrix mixed, EnclosedMatrix quadratic) {
         EnclosedMatrix v = cross.adjoint().times(n);
+        EnclosedMatrix riccati = cross.minus(gxN).minus(nGy).plus(scaleByQ(n.times(v)));
+        EnclosedMatrix across = p.root().adjoint().times(riccati).times(p2.root());
+        EnclosedMatrix gramX = congruence(p, gx.minus(scaleByQ(mixed)).plus(scaleByQ(quadratic)));
         EnclosedMatrix inner = gy.minus(scaleByQ(v.plus(v.adjoint())))
                 .plus(scaleByQ(n.adjoint().times(gxN)));
-        EnclosedMatrix gramY = p2.adjoint().times(inner).times(p2);
-        WideDouble seen = value.lowerWide().max(WideDouble.ZERO);
-        return Enclosure.of(WideDouble.ZERO, LeftoverBound.of(gramX, gramY, across, exponent, seen));
+        return new WeightedColumns(
+                () -> changed(pair.x(), pair.y(), n.adjoint(), p.root()),
+                () -> changed(pair.y(), pair.x(), n, p2.root()),
+                gramX,
+                congruence(p2, inner),
+                across,
+                exponent);
+    }
+
+    /** (X − Y·2^e·N)P. */
+    private EnclosedMatrix changed(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix by, EnclosedMatrix p) {
+        double unit = Math.scalb(1.0, Math.max(exponent, -1060));
+        return x.minus(y.times(by.times(unit))).times(p).midpoint();
     }
 
     /** q·Z with q = 2^2e; an underflowing q becomes zero with a radius that covers it. */
@@ -136,27 +174,6 @@ final class RotationCertificate {
             }
         }
         return b.build();
-    }
-
-    private static EnclosedMatrix defect(EnclosedMatrix p, EnclosedMatrix s) {
-        return p.adjoint().times(s.times(p)).minus(EnclosedMatrix.identity(p.columns()));
-    }
-
-    /** Newton–Schulz steps of third order towards P*SP = 1. */
-    private static EnclosedMatrix refine(EnclosedMatrix start, EnclosedMatrix s) {
-        EnclosedMatrix p = start;
-        for (int i = 0; i < REFINEMENTS; i++) {
-            EnclosedMatrix e = defect(p, s).midpoint();
-            double size = e.frobeniusUpper();
-            if (size < FINE || !(size < 0.9)) {
-                return p;
-            }
-            EnclosedMatrix step = EnclosedMatrix.identity(p.columns())
-                    .minus(e.times(0.5))
-                    .plus(e.times(e).times(0.375));
-            p = p.times(step).midpoint();
-        }
-        return p;
     }
 
     /** An operator from two functions of its indices, as an exact matrix. */

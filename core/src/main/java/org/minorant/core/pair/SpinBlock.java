@@ -13,7 +13,7 @@ import org.minorant.core.internal.number.DoubleDouble;
 final class SpinBlock {
 
     /** Directions in which y_b has less than this left are rounding. */
-    private static final double NOTHING = 1e-28;
+    private static final double NOTHING = 1e-27;
 
     private SpinBlock() {}
 
@@ -69,33 +69,40 @@ final class SpinBlock {
         return m.build();
     }
 
-    /** R upper triangular with R*R = 1 − C*C, nearly. */
+    /** R upper triangular with R*R = 1 − C*C, nearly; in double-double, as columns that nearly depend on each other leave pivots far below 1e-16. */
     private static double[][] triangle(double[][] ch, double[][] cl, int l) {
-        double[][] th = transposed(ch, l);
-        double[][] tl = transposed(cl, l);
-        double[][] s = new double[l][l];
-        double[][] low = new double[l][l];
+        double[][] sh = new double[l][l];
+        double[][] sl = new double[l][l];
         for (int b = 0; b < l; b++) {
-            s[b][b] = 1;
+            sh[b][b] = 1;
         }
-        DdProducts.addProduct(th, tl, ch, cl, -1, s, low);
+        DdProducts.addProduct(transposed(ch, l), transposed(cl, l), ch, cl, -1, sh, sl);
         double[][] r = new double[l][l];
         for (int i = 0; i < l; i++) {
-            // row i of the Schur complement that is left after the rows above
-            double pivot = s[i][i];
-            if (!(pivot > NOTHING)) {
+            DoubleDouble pivot = new DoubleDouble(sh[i][i], sl[i][i]);
+            if (!(pivot.hi() > NOTHING)) {
                 continue;
             }
-            double root = Math.sqrt(pivot);
+            DoubleDouble root = pivot.sqrt();
+            double[][] rowHigh = new double[1][l];
+            double[][] rowLow = new double[1][l];
             for (int j = i; j < l; j++) {
-                r[i][j] = s[i][j] / root;
+                DoubleDouble v = new DoubleDouble(sh[i][j], sl[i][j]).dividedBy(root);
+                rowHigh[0][j] = v.hi();
+                rowLow[0][j] = v.lo();
             }
-            for (int m = i + 1; m < l; m++) {
-                double f = r[i][m];
-                for (int j = m; j < l; j++) {
-                    s[m][j] -= f * r[i][j];
-                }
-            }
+            r[i] = rowHigh[0];
+            // the Schur complement of what is left
+            double[][] columnHigh = transposed(rowHigh, l);
+            double[][] columnLow = transposed(rowLow, l);
+            DdProducts.addProduct(
+                    java.util.Arrays.copyOfRange(columnHigh, i + 1, l),
+                    java.util.Arrays.copyOfRange(columnLow, i + 1, l),
+                    rowHigh,
+                    rowLow,
+                    -1,
+                    java.util.Arrays.copyOfRange(sh, i + 1, l),
+                    java.util.Arrays.copyOfRange(sl, i + 1, l));
         }
         return r;
     }

@@ -85,7 +85,7 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         Side a = Side.of(s.first(), n, wa, multiplicity);
         Side b = Side.of(s.second(), n, wb, multiplicity);
         int count = multiplicity.length;
-        double budget = log2Guess + Math.log(tolerance) / LN2 - 2;
+        double budget = log2Guess + Math.log(tolerance) / LN2 - 3;
         double[] most = new double[count];
         List<Integer> order = new ArrayList<>();
         for (int q = 0; q < count; q++) {

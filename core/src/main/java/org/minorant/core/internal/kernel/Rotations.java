@@ -7,16 +7,26 @@ public final class Rotations {
 
     /** Re Σ conj(x) y. */
     public static double dotRe(double[] xr, double[] xi, double[] yr, double[] yi) {
+        return xi.length == 0 ? dot(xr, yr) : dot(xr, yr) + dot(xi, yi);
+    }
+
+    /** Σ x y in four interleaved sums: one alone would wait for itself, as its order is fixed. */
+    private static double dot(double[] x, double[] y) {
         double s = 0;
-        for (int i = 0; i < xr.length; i++) {
-            s += xr[i] * yr[i];
+        double t = 0;
+        double u = 0;
+        double v = 0;
+        int i = 0;
+        for (; i + 3 < x.length; i += 4) {
+            s += x[i] * y[i];
+            t += x[i + 1] * y[i + 1];
+            u += x[i + 2] * y[i + 2];
+            v += x[i + 3] * y[i + 3];
         }
-        if (xi.length != 0) {
-            for (int i = 0; i < xi.length; i++) {
-                s += xi[i] * yi[i];
-            }
+        for (; i < x.length; i++) {
+            s += x[i] * y[i];
         }
-        return s;
+        return (s + t) + (u + v);
     }
 
     /** Im Σ conj(x) y. */
@@ -83,20 +93,24 @@ public final class Rotations {
             double si,
             double tr,
             double ti) {
-        for (int i = from; i < to; i++) {
-            double a = xr[i];
-            double d = yr[i];
-            if (xi.length == 0) {
+        if (xi.length == 0) {
+            for (int i = from; i < to; i++) {
+                double a = xr[i];
+                double d = yr[i];
                 xr[i] = c * a + sr * d;
                 yr[i] = tr * a + c * d;
-            } else {
-                double b = xi[i];
-                double e = yi[i];
-                xr[i] = c * a + (sr * d - si * e);
-                xi[i] = c * b + (sr * e + si * d);
-                yr[i] = c * d + (tr * a - ti * b);
-                yi[i] = c * e + (tr * b + ti * a);
             }
+            return;
+        }
+        for (int i = from; i < to; i++) {
+            double a = xr[i];
+            double b = xi[i];
+            double d = yr[i];
+            double e = yi[i];
+            xr[i] = c * a + (sr * d - si * e);
+            xi[i] = c * b + (sr * e + si * d);
+            yr[i] = c * d + (tr * a - ti * b);
+            yi[i] = c * e + (tr * b + ti * a);
         }
     }
 }
