@@ -1,7 +1,7 @@
 package org.minorant.core;
 
 import java.util.OptionalDouble;
-import org.minorant.core.internal.kernel.LinearSolve;
+import org.minorant.core.internal.door.LinearSolve;
 
 /**
  * What an error of the columns of a factor does to the operator.

@@ -1,7 +1,7 @@
 package org.minorant.core.pair;
 
 import org.minorant.core.EnclosedMatrix;
-import org.minorant.core.internal.kernel.LinearSolve;
+import org.minorant.core.internal.door.LinearSolve;
 
 /**
  * The contraction N and the two square blocks of a finished run of rotations: X' = XV₁₁ + YV₂₁ and Y' = XV₁₂ + YV₂₂ with N* = −V₂₁V₁₁⁻¹,
