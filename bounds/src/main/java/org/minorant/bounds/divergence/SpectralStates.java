@@ -4,6 +4,8 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.BitSet;
 import java.util.List;
+import java.util.OptionalInt;
+import java.util.function.Supplier;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.Operator;
@@ -29,9 +31,11 @@ final class SpectralStates {
             return new SpectralState(EnclosedMatrix.builder(a.dimension(), 1).build(), List.of(), 0, 0, rows, true);
         }
         if (!a.isDefinedByFactor()) {
-            return isDiagonal(a)
-                    ? diagonal(a)
-                    : ofMatrix(EnclosedMatrix.of(submatrix(a, rows)), 0, rows, a.dimension());
+            if (isDiagonal(a)) {
+                return diagonal(a);
+            }
+            EnclosedMatrix h = EnclosedMatrix.of(submatrix(a, rows));
+            return ofMatrix(h, 0, () -> ExactRank.of(h), rows, a.dimension());
         }
         PositiveFactor f = a.factor();
         if (f.traceError() == 0 && f.rank() <= rows.cardinality()) {
@@ -44,7 +48,9 @@ final class SpectralStates {
         EnclosedMatrix m = y.times(y.adjoint());
         // −ηXX* − N₁ ≤ A − XX* ≤ ηXX* + N₂ bounds the trace norm of the difference by 2(η Tr XX* + ν)
         double error = 2.1 * (f.relativeError() * m.traceRe().upper() + f.traceError());
-        return ofMatrix(m, error, rows, a.dimension());
+        // (1 − η)XX* ≤ A ≤ (1 + η)XX*: the rank is that of X
+        Supplier<OptionalInt> rank = () -> f.traceError() == 0 ? ExactRank.of(y) : OptionalInt.empty();
+        return ofMatrix(m, error, rank, rows, a.dimension());
     }
 
     private static BitSet nonzeroRows(EnclosedMatrix x) {
@@ -134,9 +140,11 @@ final class SpectralStates {
      * g_i. With C = Ũ*PŨ, |1 − C|_ij ≤ g_i g_j, the isometry U' = PŨC^(−½) has the range of P; its columns are within 2g_i of Ũ's, and
      * U'*HU' = Λ + K with ‖K‖ ≤ e + 3‖g‖(‖gΛ‖ + ‖g‖(‖Λ'‖ + e)), Λ' the values left out, as long as ‖g‖ ≤ ½. What is left is the positive
      * part of (1−P)H(1−P), at most
-     * (Λ_(k+1))₊ + e, and zero where all those Λ are below −e.
+     * (Λ_(k+1))₊ + e, and zero where all those Λ are below −e, or where elimination in whole numbers shows that H has no more nonzero eigenvalues than are clearly positive or
+     * negative.
      */
-    private static SpectralState ofMatrix(EnclosedMatrix h, double error, BitSet rows, int dimension) {
+    private static SpectralState ofMatrix(
+            EnclosedMatrix h, double error, Supplier<OptionalInt> exactRank, BitSet rows, int dimension) {
         EnclosedSpectrum s = EnclosedSpectrum.of(h);
         int n = s.dimension();
         double e = (distance(s) + error) * (1 + 0x1p-48);
@@ -156,6 +164,9 @@ final class SpectralStates {
         int restRank = 0;
         for (int i = 0; i < n - k; i++) {
             restRank += s.value(i) > -e ? 1 : 0;
+        }
+        if (restRank > 0 && exactRank.get().equals(OptionalInt.of(n - restRank))) {
+            restRank = 0;
         }
         double rest = restRank == 0 ? 0 : (Math.max(0, s.value(n - k - 1)) + e) * (1 + 0x1p-48);
         List<Ball> values = new ArrayList<>();

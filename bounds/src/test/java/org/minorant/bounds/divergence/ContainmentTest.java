@@ -40,8 +40,18 @@ class ContainmentTest {
         list.add(entries("clustered", TestStates.Kind.CLUSTERED, TestStates.Kind.RANDOM, 3, random, 1e-15));
         list.add(entries("both clustered", TestStates.Kind.CLUSTERED, TestStates.Kind.CLUSTERED, 3, random, 1e-15));
         list.add(entries("graded", TestStates.Kind.GRADED, TestStates.Kind.GRADED, 3, random, 1e-14));
+        list.add(singular());
         list.add(entries("deficient", TestStates.Kind.DEFICIENT, TestStates.Kind.RANDOM, 3, random, 1e-15));
         return list.build().map(Arguments::of);
+    }
+
+    /** A state of rank two by entries that are exactly singular, (1, 1, 0; 1, 0, 1)* times itself over 4, against one of full rank. */
+    private static Case singular() {
+        DensityOperator rho =
+                DensityOperator.ofReal(new double[][] {{0.5, 0.25, 0.25}, {0.25, 0.25, 0}, {0.25, 0, 0.25}});
+        DensityOperator sigma =
+                DensityOperator.ofReal(new double[][] {{0.25, 0.125, 0}, {0.125, 0.5, 0.125}, {0, 0.125, 0.25}});
+        return new Case("singular entries", rho, sigma, ReferencePair.of(rho, sigma), 1e-15);
     }
 
     private static Case bloch(String name, double x, double y, double z, double u, double v, double w, double width) {
