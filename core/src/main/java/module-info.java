@@ -3,6 +3,7 @@ module org.minorant.core {
     requires ojalgo;
 
     exports org.minorant.core;
+    exports org.minorant.core.curve;
     exports org.minorant.core.pair;
     exports org.minorant.core.state;
 }

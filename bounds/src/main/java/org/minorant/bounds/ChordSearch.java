@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
 
 /**
  * Global minimisation of a function of (s, f(s)) for a concave nondecreasing f, by branch and bound: between two samples f lies above their

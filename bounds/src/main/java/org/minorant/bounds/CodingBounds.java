@@ -10,6 +10,7 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.Information;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
 
 /**
  * What codes for one use of a classical-quantum channel can and cannot do, certified from both sides.
@@ -226,7 +227,7 @@ public final class CodingBounds {
      */
     public Enclosure converseError(long messages) {
         Enclosure m = MessageCount.messages("CodingBounds.converseError", messages);
-        return TraceMinimumConverse.error(letters.get().leastAgainst(), m);
+        return TraceMinimumConverse.error(letters.get(), m);
     }
 
     /**
@@ -238,7 +239,7 @@ public final class CodingBounds {
      */
     public Enclosure converseError(Information messages) {
         Enclosure m = MessageCount.messages("CodingBounds.converseError", messages);
-        return TraceMinimumConverse.error(letters.get().leastAgainst(), m);
+        return TraceMinimumConverse.error(letters.get(), m);
     }
 
     /**
@@ -252,7 +253,7 @@ public final class CodingBounds {
      */
     public Information converse(double epsilon) {
         ChannelChecks.error("CodingBounds.converse", epsilon);
-        return TraceMinimumConverse.messages(letters.get().least(), epsilon);
+        return TraceMinimumConverse.messages(letters.get(), epsilon);
     }
 
     /**

@@ -2,6 +2,7 @@ package org.minorant.bounds;
 
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
 
 /**
  * The older one-shot achievability bound, for comparison: M codewords drawn independently from P, decoded with square-root measurements of a

@@ -1,8 +1,11 @@
 package org.minorant.bounds;
 
 import java.util.List;
+import java.util.function.ToDoubleBiFunction;
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
+import org.minorant.core.curve.Guess;
 import org.minorant.core.pair.PositivePair;
 
 /**
@@ -48,9 +51,16 @@ final class LetterCurves {
         Enclosure scale = Enclosure.ONE.dividedBy(total).times(factor).hull(factor);
         Enclosure most = total.times(traces).hull(Enclosure.ONE);
         WideDouble saturation = saturation(weights);
-        return t -> t.compareTo(saturation) >= 0
+        Curve values = t -> t.compareTo(saturation) >= 0
                 ? most
                 : sum.traceMinimum(WideDouble.ONE, t).times(scale);
+        return sum.hasCheapEstimate() ? values.withGuess(s -> lnEstimate(sum, 0, s)) : values;
+    }
+
+    /** About ln Tr[aA ∧ bB] of a pair, from ln a and ln b. */
+    private static double lnEstimate(PositivePair pair, double lnA, double lnB) {
+        return pair.traceMinimumEstimate(WideDouble.expDown(lnA), WideDouble.expDown(lnB))
+                .ln();
     }
 
     /** A point beyond 1/min P, also for weights that miss their sum by a rounding. */
@@ -64,12 +74,30 @@ final class LetterCurves {
 
     /** t ↦ min over x of Tr[tW_x ∧ σ]. */
     Curve least() {
-        return t -> least(t, WideDouble.ONE);
+        return guessed(t -> least(t, WideDouble.ONE), (pair, t) -> lnEstimate(pair, t, 0));
     }
 
     /** s ↦ min over x of Tr[W_x ∧ sσ]. */
     Curve leastAgainst() {
-        return s -> least(WideDouble.ONE, s);
+        return guessed(s -> least(WideDouble.ONE, s), (pair, s) -> lnEstimate(pair, 0, s));
+    }
+
+    private Curve guessed(Curve values, ToDoubleBiFunction<PositivePair, Double> estimate) {
+        Guess least = t -> pairs.stream()
+                .mapToDouble(pair -> estimate.applyAsDouble(pair, t))
+                .min()
+                .orElse(Double.NaN);
+        return pairs.stream().allMatch(PositivePair::hasCheapEstimate) ? values.withGuess(least) : values;
+    }
+
+    /** A number that no value of {@link #least} and {@link #leastAgainst} exceeds, nor its ratio to the weight. */
+    WideDouble most() {
+        WideDouble most = traces.upperWide();
+        for (PositivePair pair : pairs) {
+            most = most.max(pair.firstTrace().upperWide())
+                    .max(pair.secondTrace().upperWide());
+        }
+        return most.timesUp(factor.upperWide());
     }
 
     private Enclosure least(WideDouble a, WideDouble b) {

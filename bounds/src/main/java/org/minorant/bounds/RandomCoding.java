@@ -2,6 +2,8 @@ package org.minorant.bounds;
 
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
+import org.minorant.core.curve.CurveRoot;
 
 /**
  * The one-shot achievability bound by f: M codewords drawn independently from P, decoded with the pretty-good measurement, have an expected
@@ -32,30 +34,10 @@ final class RandomCoding {
      * @param saturation a point where f is 1: W_x ≤ ρ_B/P(x), so the inverse of the least positive probability
      */
     static Enclosure others(Curve f, double epsilon, WideDouble saturation) {
-        WideDouble level = WideDouble.of(epsilon);
-        WideDouble low = WideDouble.ONE;
-        Enclosure atOne = f.at(low);
-        if (atOne.lowerWide().compareTo(level) > 0) {
-            return Enclosure.of(WideDouble.ZERO, WideDouble.of(Math.nextDown(1.0)));
-        }
-        boolean certain = atOne.upperWide().compareTo(level) <= 0;
-        WideDouble high = low;
-        for (long power = 1; ; power *= 2) {
-            high = high.timesPowerOfTwo(power);
-            if (high.compareTo(saturation) >= 0) {
-                high = saturation;
-                break;
-            }
-            Enclosure value = f.at(high);
-            if (value.lowerWide().compareTo(level) > 0) {
-                break;
-            }
-            if (value.upperWide().compareTo(level) <= 0) {
-                low = high;
-                certain = true;
-            }
-        }
-        Enclosure root = CurveRoot.of(f, epsilon, low, high);
-        return certain ? root : Enclosure.of(WideDouble.ZERO, root.upperWide());
+        Enclosure root = CurveRoot.of(f, WideDouble.of(epsilon), WideDouble.ONE, saturation, 0);
+        // an end at 1 is one where f exceeds the level
+        return root.upperWide().compareTo(WideDouble.ONE) > 0
+                ? root
+                : Enclosure.of(WideDouble.ZERO, WideDouble.of(Math.nextDown(1.0)));
     }
 }

@@ -3,6 +3,8 @@ package org.minorant.bounds;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Information;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
+import org.minorant.core.curve.SupportLines;
 
 /**
  * The one-shot converse through f, for any state σ of the output: a code of M messages with average error ε obeys, for every t ≥ 0,
@@ -20,43 +22,37 @@ final class TraceMinimumConverse {
             "H. Nagaoka, Proc. 1st Asia-Europe Workshop on Concepts in Information Theory (2001); Y. Polyanskiy, H. V. Poor, S. Verdu, IEEE Trans."
                     + " Inf. Theory 56, 2307 (2010), theorem 27 (both from memory)");
 
+    /** A relative gap that is always enough. */
+    private static final double ENOUGH = 0x1p-46;
+
     private TraceMinimumConverse() {}
 
     /**
      * −ln S.
      *
-     * @param least the curve t ↦ min over x of Tr[tW_x ∧ σ], for a σ of trace one
+     * @param letters the curves of all letters against a σ of trace one
      * @param epsilon the average error
      */
-    static Information messages(Curve least, double epsilon) {
-        Enclosure sup = supremum(least, Enclosure.exact(epsilon));
+    static Information messages(LetterCurves letters, double epsilon) {
+        Enclosure sup = supremum(letters.least(), letters.most(), Enclosure.exact(epsilon));
         return Information.ofNats(sup.ln().negate().max(Enclosure.ZERO)).withSource(THEOREM.toString());
     }
 
     /**
      * The least average error that the same inequality leaves to M messages: sup over s = 1/t of min over x of Tr[W_x ∧ sσ] − s/M.
      *
-     * @param least the curve s ↦ min over x of Tr[W_x ∧ sσ], for states of trace one
+     * @param letters the curves of all letters against a σ of trace one
      * @param messages M, at least 1
      */
-    static Enclosure error(Curve least, Enclosure messages) {
+    static Enclosure error(LetterCurves letters, Enclosure messages) {
         return messages.equals(Enclosure.ONE)
                 ? Enclosure.ZERO
-                : supremum(least, Enclosure.ONE.dividedBy(messages)).clip(0, 1);
+                : supremum(letters.leastAgainst(), letters.most(), Enclosure.ONE.dividedBy(messages))
+                        .clip(0, 1);
     }
 
-    /**
-     * sup over t of c(t) − rate·t for a concave c with c(0) = 0 and c ≤ 1. Every rate in the enclosure has its own concave curve within
-     * the samples, so the result holds for each.
-     */
-    private static Enclosure supremum(Curve c, Enclosure rate) {
-        // from here on c(t) − rate·t ≤ 1 − rate·t ≤ 0, also for traces that are one only up to rounding
-        WideDouble end = WideDouble.of(1 + 0x1p-30).dividedByUp(rate.lowerWide());
-        if (c.at(end).upperWide().signum() == 0) {
-            // nondecreasing and not negative, so zero up to there
-            return Enclosure.ZERO;
-        }
-        Curve g = t -> c.at(t).minus(rate.times(Enclosure.of(t, t)));
-        return ConcaveMaximum.of(g, end, WideDouble.ZERO);
+    /** sup over t of c(t) − rate·t, for each rate in the enclosure. */
+    private static Enclosure supremum(Curve c, WideDouble most, Enclosure rate) {
+        return new SupportLines(c, most, most).at(rate, ENOUGH, 0).value();
     }
 }

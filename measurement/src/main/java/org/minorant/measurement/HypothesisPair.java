@@ -13,6 +13,10 @@ import org.minorant.core.Estimate;
 import org.minorant.core.Information;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Curve;
+import org.minorant.core.curve.CurveSample;
+import org.minorant.core.curve.SupportLines;
+import org.minorant.core.curve.Supremum;
 import org.minorant.core.pair.Effort;
 import org.minorant.core.pair.PositivePair;
 import org.minorant.core.pair.WorkListener;
@@ -276,7 +280,9 @@ public final class HypothesisPair {
      * (strong duality; K. M. R. Audenaert, M. Mosonyi, F. Verstraete, J. Math. Phys. 53, 122205, 2012, from memory). Both ends come from certified values of
      * Tr[tρ ∧ σ] by concavity: any t gives a lower end, extended chords an upper one.
      *
-     * <p><b>Cost.</b> 5 to 45 values of the curve: few where it is piecewise linear, most where it is smooth and known to full precision.
+     * <p><b>Cost.</b> 10 to 50 values of the curve to full precision, most where it has corners and is smooth elsewhere; about 15 to a tolerance of 1e-9 ({@link
+     * #typeTwoError(double, double)}). For many copies the tolerance is that of {@link #withTolerance}. Where the curve has cheap estimates ({@link PositivePair#hasCheapEstimate}) these are followed: about 5 values to full precision, 3
+     * to a tolerance, and some thirty estimates. See {@link SupportLines}.
      *
      * <p><b>Special cases.</b> 0 if ε is at least Tr ρ. At ε = 0 it is Tr σΠ with Π the projector onto the support of ρ: where the pair has states and
      * ρ has a factor that certifies its support (kets, full rank), both ends are tight; otherwise the upper end is Tr σ.
@@ -286,7 +292,9 @@ public final class HypothesisPair {
      * @throws InvalidInputException if the level is negative, NaN or infinite
      */
     public Enclosure typeTwoError(double level) {
-        return typeTwo("HypothesisPair.typeTwoError", new SupportLines(curve), level, RELATIVE_GAP, 0)
+        // values of many copies are no narrower than their effort asks for, and each costs time
+        double gap = copied.isPresent() ? Math.max(RELATIVE_GAP, effort.tolerance()) : RELATIVE_GAP;
+        return typeTwo("HypothesisPair.typeTwoError", supportLines(), level, gap, 0)
                 .value();
     }
 
@@ -301,15 +309,43 @@ public final class HypothesisPair {
         return Information.ofNats(typeTwoError(level).ln().negate());
     }
 
-    private SupportLines.Supremum typeTwo(
-            String asked, SupportLines lines, double level, double relativeGap, double absoluteGap) {
+    /**
+     * Returns the least type-II error as {@link #typeTwoError(double)}, to a tolerance: the values of the curve that more digits would cost are saved.
+     *
+     * @param level ε, at least 0
+     * @param relativeTolerance the relative width that is narrow enough, between 0 and 1; the width of the result may be larger where the curve is not known well enough,
+     *     and is smaller where that costs nothing
+     * @return β_ε
+     * @throws InvalidInputException if the level is negative, NaN or infinite, or the tolerance is not between 0 and 1
+     */
+    public Enclosure typeTwoError(double level, double relativeTolerance) {
+        String asked = "HypothesisPair.typeTwoError";
+        double tolerance = Checks.inRange(asked, "the relative tolerance", relativeTolerance, 0, 1);
+        return typeTwo(asked, supportLines(), level, Math.max(tolerance, RELATIVE_GAP), 0)
+                .value();
+    }
+
+    /** The curve t ↦ Tr[tρ ∧ σ], without samples yet. */
+    private SupportLines supportLines() {
+        Curve values = t -> curve.traceMinimum(t, WideDouble.ONE);
+        Curve f = curve.hasCheapEstimate() ? values.withGuess(this::lnEstimate) : values;
+        return new SupportLines(
+                f, curve.firstTrace().upperWide(), curve.secondTrace().upperWide());
+    }
+
+    private double lnEstimate(double lnT) {
+        return curve.traceMinimumEstimate(WideDouble.expDown(lnT), WideDouble.ONE)
+                .ln();
+    }
+
+    private Supremum typeTwo(String asked, SupportLines lines, double level, double relativeGap, double absoluteGap) {
         Checks.inRange(asked, "the type-I level", level, 0, Double.MAX_VALUE);
-        SupportLines.Supremum s = lines.at(level, relativeGap, absoluteGap);
+        Supremum s = lines.at(Enclosure.exact(level), relativeGap, absoluteGap);
         if (level > 0 || states.isEmpty()) {
             return s;
         }
         Enclosure support = SupportOverlap.of(states.get().first(), states.get().second());
-        return new SupportLines.Supremum(s.value().intersect(support), s.best(), s.from(), s.to());
+        return s.intersect(support);
     }
 
     /**
@@ -342,7 +378,7 @@ public final class HypothesisPair {
     public BinaryTest neymanPearsonTest(double level) {
         String asked = "HypothesisPair.neymanPearsonTest";
         States s = states(asked);
-        SupportLines.Supremum best = typeTwo(asked, new SupportLines(curve), level, RELATIVE_GAP, 0);
+        Supremum best = typeTwo(asked, supportLines(), level, RELATIVE_GAP, 0);
         return new ThresholdTests(s.first(), s.second()).neymanPearson(level, best);
     }
 
@@ -401,8 +437,8 @@ public final class HypothesisPair {
         private final String asked;
         private final double relativeGap;
         private final double absoluteGap;
-        private final SupportLines lines = new SupportLines(curve);
-        private final List<CurveSamples.Sample> below = new ArrayList<>();
+        private final SupportLines lines = supportLines();
+        private final List<CurveSample> below = new ArrayList<>();
         private final TreeMap<Double, WideDouble> above = new TreeMap<>();
 
         Sketch(String asked, double relativeGap, double absoluteGap) {
@@ -442,7 +478,7 @@ public final class HypothesisPair {
         }
 
         void add(double level) {
-            SupportLines.Supremum s = typeTwo(asked, lines, level + 0.0, relativeGap, absoluteGap);
+            Supremum s = typeTwo(asked, lines, level + 0.0, relativeGap, absoluteGap);
             below.add(s.best());
             above.put(level + 0.0, s.value().upperWide());
         }

@@ -7,6 +7,7 @@ import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.HermitianOperator;
 import org.minorant.core.SpectralDecomposition;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.Supremum;
 
 /**
  * Explicit tests between two states: projectors onto the positive part of aρ − bσ, and mixtures of two of them.
@@ -91,7 +92,7 @@ final class ThresholdTests {
     }
 
     /** The test at a level, from what is known of β and of the t that attains it. */
-    BinaryTest neymanPearson(double level, SupportLines.Supremum best) {
+    BinaryTest neymanPearson(double level, Supremum best) {
         BinaryTest never = BinaryTest.of(constant(0), first, second);
         if (never.typeOneError().upper() <= level) {
             return never;
@@ -134,7 +135,7 @@ final class ThresholdTests {
     }
 
     /** How much the mixture of two tests exceeds the least type-II error. */
-    private static double excess(Threshold lo, Threshold hi, double level, SupportLines.Supremum best) {
+    private static double excess(Threshold lo, Threshold hi, double level, Supremum best) {
         double w = weight(lo, hi, level);
         double excess = w * hi.typeTwo() + (1 - w) * lo.typeTwo() - best.value().upper();
         double byDuality = difference(hi.t(), lo.t()) * (lo.typeOne() - hi.typeOne()) / 4;

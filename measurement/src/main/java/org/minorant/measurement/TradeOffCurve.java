@@ -5,6 +5,8 @@ import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.core.curve.CurveSample;
+import org.minorant.core.curve.LineBound;
 
 /**
  * The error trade-off curve α ↦ β(α), the least type-II error at type-I error at most α, between two convex polygons.
@@ -17,11 +19,11 @@ import org.minorant.core.WideDouble;
  */
 public final class TradeOffCurve {
 
-    private final List<CurveSamples.Sample> lines;
+    private final List<CurveSample> lines;
     private final List<TradeOffPoint> lower;
     private final List<TradeOffPoint> upper;
 
-    private TradeOffCurve(List<CurveSamples.Sample> lines, List<TradeOffPoint> lower, List<TradeOffPoint> upper) {
+    private TradeOffCurve(List<CurveSample> lines, List<TradeOffPoint> lower, List<TradeOffPoint> upper) {
         this.lines = lines;
         this.lower = lower;
         this.upper = upper;
@@ -31,8 +33,8 @@ public final class TradeOffCurve {
      * The curve from support lines of any slopes and from points above it, in ascending order of their type-I error, the first at 0 and the last at
      * 1.
      */
-    static TradeOffCurve of(List<CurveSamples.Sample> lines, List<TradeOffPoint> above) {
-        List<CurveSamples.Sample> envelope = envelope(lines);
+    static TradeOffCurve of(List<CurveSample> lines, List<TradeOffPoint> above) {
+        List<CurveSample> envelope = envelope(lines);
         return new TradeOffCurve(envelope, corners(envelope), hull(above));
     }
 
@@ -94,7 +96,7 @@ public final class TradeOffCurve {
     private WideDouble below(double a) {
         WideDouble alpha = WideDouble.of(a);
         WideDouble most = WideDouble.ZERO;
-        for (CurveSamples.Sample s : lines) {
+        for (CurveSample s : lines) {
             most = most.max(s.supportDown(alpha));
         }
         return most;
@@ -115,12 +117,12 @@ public final class TradeOffCurve {
     }
 
     /** The lines that the upper envelope over [0, 1] consists of, from the flattest (β = 0) to the steepest. */
-    private static List<CurveSamples.Sample> envelope(List<CurveSamples.Sample> lines) {
-        List<CurveSamples.Sample> sorted = new ArrayList<>(lines);
-        sorted.add(new CurveSamples.Sample(WideDouble.ZERO, WideDouble.ZERO, WideDouble.ZERO));
+    private static List<CurveSample> envelope(List<CurveSample> lines) {
+        List<CurveSample> sorted = new ArrayList<>(lines);
+        sorted.add(CurveSample.ORIGIN);
         sorted.sort((x, y) -> x.t().equals(y.t()) ? y.lower().compareTo(x.lower()) : x.t().compareTo(y.t()));
-        List<CurveSamples.Sample> out = new ArrayList<>();
-        for (CurveSamples.Sample s : sorted) {
+        List<CurveSample> out = new ArrayList<>();
+        for (CurveSample s : sorted) {
             if (!out.isEmpty() && out.get(out.size() - 1).t().equals(s.t())) {
                 continue;
             }
@@ -135,14 +137,14 @@ public final class TradeOffCurve {
     }
 
     /** Whether the last line lies below its neighbour and the steeper line s wherever it matters. */
-    private static boolean isHidden(List<CurveSamples.Sample> out, CurveSamples.Sample s) {
-        CurveSamples.Sample last = out.get(out.size() - 1);
+    private static boolean isHidden(List<CurveSample> out, CurveSample s) {
+        CurveSample last = out.get(out.size() - 1);
         double before = out.size() == 1 ? 1 : meeting(out.get(out.size() - 2), last);
         return meeting(last, s) >= before;
     }
 
     /** Where a line meets a steeper one: the steeper is higher before it. */
-    private static double meeting(CurveSamples.Sample flat, CurveSamples.Sample steep) {
+    private static double meeting(CurveSample flat, CurveSample steep) {
         WideDouble rise = steep.lower().plusDown(flat.lower().negate());
         WideDouble slope = steep.t().plusUp(flat.t().negate());
         return rise.dividedByDown(slope).toDoubleDown();
@@ -152,7 +154,7 @@ public final class TradeOffCurve {
      * The corners of the envelope, which ascend strictly since no line in it is hidden. A corner is rounded in its place, so it takes the lower
      * of its two lines there: then each edge lies below the line it belongs to.
      */
-    private static List<TradeOffPoint> corners(List<CurveSamples.Sample> envelope) {
+    private static List<TradeOffPoint> corners(List<CurveSample> envelope) {
         List<TradeOffPoint> out = new ArrayList<>();
         int last = envelope.size() - 1;
         out.add(new TradeOffPoint(0, envelope.get(last).lower().max(WideDouble.ZERO)));

@@ -179,6 +179,16 @@ public abstract sealed class PositivePair
     }
 
     /**
+     * Tells whether {@link #traceMinimumEstimate} costs little next to {@link #traceMinimum}, so that searches on the curve go by it and certify only where
+     * it leads them.
+     *
+     * @return whether estimates are cheap; false unless the kind has an estimate of its own
+     */
+    public boolean hasCheapEstimate() {
+        return false;
+    }
+
+    /**
      * Returns the pair (A^⊗n, B^⊗n), in the cheapest exact form that the structure of this pair allows.
      *
      * @param n the number of copies, at least 1

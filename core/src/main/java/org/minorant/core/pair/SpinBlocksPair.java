@@ -72,6 +72,11 @@ final class SpinBlocksPair extends PositivePair {
         return new Estimate(f.lowerWide(), f.relativeWidth() + n * 0x1p-50);
     }
 
+    @Override
+    public boolean hasCheapEstimate() {
+        return true;
+    }
+
     private Enclosure run(WideDouble wa, WideDouble wb, boolean proven) {
         double log2Guess = ChernoffGuess.log2(spectra, n, wa, wb);
         Enclosure best = Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);

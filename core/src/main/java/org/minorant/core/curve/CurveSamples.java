@@ -1,15 +1,14 @@
-package org.minorant.measurement;
+package org.minorant.core.curve;
 
 import java.util.ArrayList;
 import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
-import org.minorant.core.pair.PositivePair;
 
 /**
- * Certified values of F(t) = Tr[tρ ∧ σ] in ascending order of t, and what they say about F in between.
+ * Certified values of a curve F in ascending order of t, and what they say about F in between.
  *
- * <p><b>Argument.</b> F is concave and nondecreasing with F(0) = 0, F ≤ t Tr ρ and F ≤ Tr σ. A chord through two samples, extended beyond either, lies
+ * <p><b>Argument.</b> F is concave and nondecreasing with F(0) = 0, F ≤ t · steepest and F ≤ most. A chord through two samples, extended beyond either, lies
  * above F there; so on the interval between two neighbouring samples F lies below the extended chord from the left, below that from the right, and below the smaller
  * of the two ({@link LineBound}). For one thread.
  */
@@ -18,60 +17,42 @@ final class CurveSamples {
     /** Chords to this many samples on either side are tried: the nearest are the steepest, those further away less noisy. */
     static final int CHORDS = 5;
 
-    private final PositivePair pair;
-    private final WideDouble firstTrace;
-    private final WideDouble secondTrace;
-    private final List<Sample> samples = new ArrayList<>();
+    private final Curve curve;
+    private final WideDouble steepest;
+    private final WideDouble most;
+    private final List<CurveSample> samples = new ArrayList<>();
 
-    CurveSamples(PositivePair pair) {
-        this.pair = pair;
-        this.firstTrace = pair.firstTrace().upperWide();
-        this.secondTrace = pair.secondTrace().upperWide();
-        samples.add(new Sample(WideDouble.ZERO, WideDouble.ZERO, WideDouble.ZERO));
-    }
-
-    /** F(t) between two ends. */
-    record Sample(WideDouble t, WideDouble lower, WideDouble upper) {
-
-        /** A lower end of F(t) − tα. */
-        WideDouble supportDown(WideDouble alpha) {
-            return lower.plusDown(t.timesUp(alpha).negate());
-        }
-
-        WideDouble width() {
-            return upper.plusUp(lower.negate());
-        }
+    CurveSamples(Curve curve, WideDouble steepest, WideDouble most) {
+        this.curve = curve;
+        this.steepest = steepest;
+        this.most = most;
+        samples.add(CurveSample.ORIGIN);
     }
 
     /**
      * An interval between two samples, or between the last and an end of the range.
      *
-     * @param bound no larger value does F(t) − tα take in it
+     * @param bound no larger value does F(t) − ta take in it
      * @param meeting where the two best lines meet, from 0 to 1
      */
     record Interval(WideDouble from, WideDouble to, WideDouble bound, double meeting) {}
 
-    /** An upper end of Tr ρ. */
-    WideDouble firstTrace() {
-        return firstTrace;
+    /** A number that F(t)/t does not exceed. */
+    WideDouble steepest() {
+        return steepest;
     }
 
-    /** An upper end of Tr σ. */
-    WideDouble secondTrace() {
-        return secondTrace;
+    /** A number that F does not exceed. */
+    WideDouble most() {
+        return most;
     }
 
     int size() {
         return samples.size();
     }
 
-    Sample get(int k) {
+    CurveSample get(int k) {
         return samples.get(k);
-    }
-
-    /** The first sample, F(0) = 0. */
-    Sample origin() {
-        return samples.get(0);
     }
 
     /** The number of samples before t. */
@@ -90,13 +71,13 @@ final class CurveSamples {
     }
 
     /** The sample at t, taken now if there is none. */
-    Sample at(WideDouble t) {
+    CurveSample at(WideDouble t) {
         int k = before(t);
         if (k < samples.size() && samples.get(k).t().equals(t)) {
             return samples.get(k);
         }
-        Enclosure f = pair.traceMinimum(t, WideDouble.ONE);
-        Sample s = new Sample(t, f.lowerWide(), f.upperWide());
+        Enclosure f = curve.at(t);
+        CurveSample s = new CurveSample(t, f.lowerWide(), f.upperWide());
         samples.add(k, s);
         return s;
     }
@@ -106,8 +87,8 @@ final class CurveSamples {
         WideDouble x = samples.get(k).t();
         WideDouble y = k + 1 == samples.size() ? end : samples.get(k + 1).t().min(end);
         List<LineBound> lines = new ArrayList<>();
-        lines.add(line(x.timesUp(firstTrace), y.timesUp(firstTrace), x, y, a));
-        lines.add(line(secondTrace, secondTrace, x, y, a));
+        lines.add(line(x.timesUp(steepest), y.timesUp(steepest), x, y, a));
+        lines.add(line(most, most, x, y, a));
         addFromLeft(lines, k, x, y, a);
         addFromRight(lines, k + 1, x, y, a);
         WideDouble least = WideDouble.POSITIVE_INFINITY;
@@ -128,7 +109,7 @@ final class CurveSamples {
     private void addFromLeft(List<LineBound> lines, int k, WideDouble x, WideDouble y, WideDouble a) {
         WideDouble u = samples.get(k).upper();
         for (int i = Math.max(0, k - CHORDS); i < k; i++) {
-            Sample s = samples.get(i);
+            CurveSample s = samples.get(i);
             WideDouble ratio = up(y, x).dividedByUp(down(x, s.t()));
             WideDouble rise = up(u, s.lower()).timesUp(ratio);
             lines.add(line(u, u.plusUp(rise), x, y, a));
@@ -140,18 +121,18 @@ final class CurveSamples {
     }
 
     /**
-     * The level line through sample r, and chords from samples j &gt; r through it, extended to the left. Sample r may lie beyond the end of
+     * The level line through sample r, and chords from samples j &gt; r through it, extended to the left. CurveSample r may lie beyond the end of
      * the range.
      */
     private void addFromRight(List<LineBound> lines, int r, WideDouble x, WideDouble y, WideDouble a) {
         if (r == samples.size()) {
             return;
         }
-        Sample through = samples.get(r);
+        CurveSample through = samples.get(r);
         WideDouble u = through.upper();
         lines.add(line(u, u, x, y, a));
         for (int j = r + 1; j < samples.size() && j <= r + CHORDS; j++) {
-            Sample s = samples.get(j);
+            CurveSample s = samples.get(j);
             WideDouble drop = down(s.lower(), u).max(WideDouble.ZERO);
             WideDouble run = up(s.t(), through.t());
             WideDouble atLeft = drop.timesDown(down(through.t(), x).dividedByDown(run));
@@ -170,7 +151,7 @@ final class CurveSamples {
         return a.plusDown(b.negate());
     }
 
-    /** A line above F, as a line above F(t) − tα. */
+    /** A line above F, as a line above F(t) − ta. */
     private static LineBound line(WideDouble left, WideDouble right, WideDouble x, WideDouble y, WideDouble a) {
         return new LineBound(up(left, x.timesDown(a)), up(right, y.timesDown(a)));
     }

@@ -1,4 +1,4 @@
-package org.minorant.measurement;
+package org.minorant.core.curve;
 
 import org.minorant.core.WideDouble;
 
@@ -8,7 +8,7 @@ import org.minorant.core.WideDouble;
  * @param left the value at the left end
  * @param right the value at the right end
  */
-record LineBound(WideDouble left, WideDouble right) {
+public record LineBound(WideDouble left, WideDouble right) {
 
     /** The largest value on the interval. */
     WideDouble most() {
@@ -51,8 +51,15 @@ record LineBound(WideDouble left, WideDouble right) {
         return WideDouble.of(a).timesUp(x).plusUp(WideDouble.of(b).timesUp(y));
     }
 
-    /** An upper end of the value at a number between the ends of the interval, given as numbers too. */
-    WideDouble at(double from, double x, double to) {
+    /**
+     * Returns an upper end of the value at a point of the interval.
+     *
+     * @param from the left end of the interval
+     * @param x the point
+     * @param to the right end
+     * @return a number not below the line at x
+     */
+    public WideDouble at(double from, double x, double to) {
         WideDouble whole = WideDouble.of(to).plusUp(WideDouble.of(-from));
         double share =
                 WideDouble.of(x).plusUp(WideDouble.of(-from)).dividedByUp(whole).toDoubleUp();
