@@ -234,18 +234,17 @@ public final class EnclosedMatrix {
      * @return at least |entry|
      */
     public double modulusUpper(int i, int j) {
-        return (modulus(rh[i][j], im(i, j)) + radius[i][j]) * UP;
+        return (RadiusOfProduct.modulus(rh[i][j], im(i, j)) + radius[i][j]) * UP;
     }
 
-    /** √(x² + y²), rounded up also where the squares under- or overflow. */
-    private static double modulus(double x, double y) {
-        double a = Math.abs(x);
-        double b = Math.abs(y);
-        double r = Math.sqrt(a * a + b * b);
-        if (!(r > 1e-140 && r < 1e150)) {
-            r = a + b;
+    private double[][] moduli() {
+        double[][] m = new double[rows][columns];
+        for (int i = 0; i < rows; i++) {
+            for (int j = 0; j < columns; j++) {
+                m[i][j] = RadiusOfProduct.modulus(rh[i][j], im(i, j));
+            }
         }
-        return r * UP;
+        return m;
     }
 
     /**
@@ -304,77 +303,8 @@ public final class EnclosedMatrix {
         if (!isReal()) {
             DdProducts.addProduct(ih, il, other.rh, other.rl, 1, c.ih, c.il);
         }
-        productRadius(other, c.radius);
+        RadiusOfProduct.add(moduli(), radius, other.moduli(), other.radius, c.radius);
         return c.build();
-    }
-
-    /** γ|A||B| + |A|R_B + R_A(|B| + R_B), rounded up, as γ(|A||B|) + R_A|B| + (|A| + R_A)R_B; γ comes last, γ|A| alone may underflow. */
-    private void productRadius(EnclosedMatrix b, double[][] r) {
-        double gamma = DdProducts.gamma(columns);
-        double up = 1 + (columns + 16) * 0x1p-51;
-        double[][] mb = b.moduli();
-        boolean exact = isZero(radius);
-        boolean exactB = isZero(b.radius);
-        boolean[] nonzero = b.nonzeroColumns();
-        for (int i = 0; i < rows; i++) {
-            double[] row = r[i];
-            boolean zero = true;
-            for (int k = 0; k < columns; k++) {
-                double m = modulus(rh[i][k], im(i, k));
-                zero &= m == 0 && radius[i][k] == 0;
-                addScaled(row, m, mb[k]);
-            }
-            for (int j = 0; j < row.length; j++) {
-                row[j] *= gamma;
-            }
-            for (int k = 0; k < columns && !exact; k++) {
-                addScaled(row, radius[i][k], mb[k]);
-            }
-            for (int k = 0; k < columns && !exactB; k++) {
-                addScaled(row, (modulus(rh[i][k], im(i, k)) + radius[i][k]) * UP, b.radius[k]);
-            }
-            for (int j = 0; j < row.length; j++) {
-                // products with exact zeros are exact
-                row[j] = row[j] * up + (zero || !nonzero[j] ? 0 : DdProducts.underflow(columns));
-            }
-        }
-    }
-
-    private boolean[] nonzeroColumns() {
-        boolean[] nonzero = new boolean[columns];
-        for (int i = 0; i < rows; i++) {
-            for (int j = 0; j < columns; j++) {
-                nonzero[j] |= rh[i][j] != 0 || im(i, j) != 0 || radius[i][j] != 0;
-            }
-        }
-        return nonzero;
-    }
-
-    private static void addScaled(double[] c, double x, double[] b) {
-        for (int j = 0; j < c.length; j++) {
-            c[j] += x * b[j];
-        }
-    }
-
-    private static boolean isZero(double[][] a) {
-        for (double[] row : a) {
-            for (double v : row) {
-                if (v != 0) {
-                    return false;
-                }
-            }
-        }
-        return true;
-    }
-
-    private double[][] moduli() {
-        double[][] m = new double[rows][columns];
-        for (int i = 0; i < rows; i++) {
-            for (int j = 0; j < columns; j++) {
-                m[i][j] = modulus(rh[i][j], im(i, j));
-            }
-        }
-        return m;
     }
 
     /**
@@ -421,7 +351,10 @@ public final class EnclosedMatrix {
                     c.il[i][j] = y.lo();
                 }
                 double r = radius[i][j] + other.radius[i][j];
-                c.radius[i][j] = (r + DoubleDouble.EPS * modulus(c.rh[i][j], c.ih.length == 0 ? 0 : c.ih[i][j])) * UP;
+                c.radius[i][j] = (r
+                                + DoubleDouble.EPS
+                                        * RadiusOfProduct.modulus(c.rh[i][j], c.ih.length == 0 ? 0 : c.ih[i][j]))
+                        * UP;
             }
         }
         return c.build();
@@ -456,7 +389,7 @@ public final class EnclosedMatrix {
                     c.ih[i][j] = y.hi();
                     c.il[i][j] = y.lo();
                 }
-                double r = f * radius[i][j] + loss * f * modulus(rh[i][j], im(i, j));
+                double r = f * radius[i][j] + loss * f * RadiusOfProduct.modulus(rh[i][j], im(i, j));
                 // an exact zero stays one; anything else may lose what it had to gradual underflow
                 boolean zero = radius[i][j] == 0 && rh[i][j] == 0 && im(i, j) == 0;
                 c.radius[i][j] = r * UP + (factor == 0 || zero ? 0 : 0x1p-1068);
