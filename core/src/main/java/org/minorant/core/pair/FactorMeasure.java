@@ -12,6 +12,8 @@ import org.minorant.core.internal.number.WideDoubleDouble;
 /**
  * The spectral measure of B = YY* in ψ to about 30 digits, relative ones where the Gram matrix Y*Y is not too ill-conditioned.
  *
+ * <p>Two columns have a closed form, whatever their condition: {@link PlaneMeasure}.
+ *
  * <p><b>Argument.</b> Let V be a nearly unitary matrix that nearly diagonalises Y*Y (any will do), D a diagonal one and E = YVD. With 1 + Δ = E*E, the columns of Ẽ = E(1 + Δ)^(−½) are
  * orthonormal exactly, and B̃ = ẼD⁻²Ẽ* has the eigenvalues D_j⁻² exactly. B̃ is within a relative error of B in the Loewner order: YVV*Y* is within δ = ‖V*V − 1‖ of B, and D⁻¹(1 + Δ)^½ = (1 + Ξ)D⁻¹ with
  * ‖Ξ‖ ≤ ‖Δ‖ = ξ, so that ED⁻²E* and B̃ differ relatively by at most 2ξ√κ + ξ²κ, κ the ratio of the largest to the smallest D_j⁻². The amplitudes Ẽ*ψ differ from E*ψ by at most ξ‖E*ψ‖.
@@ -33,6 +35,9 @@ record FactorMeasure(SpectralMeasure spectral, double relativeError) {
     static Optional<FactorMeasure> of(UnitFactor psi, UnitFactor b) {
         EnclosedMatrix y = b.columns();
         int r = y.columns();
+        if (r == 2) {
+            return Optional.of(new FactorMeasure(PlaneMeasure.of(psi, b), 0));
+        }
         EnclosedMatrix v = EnclosedMatrix.identity(1);
         double defect = 0;
         DoubleDouble[] values = new DoubleDouble[r];

@@ -186,6 +186,34 @@ class RankOneCopiesTest {
         }
     }
 
+    /** A ket against a qubit next to purity, and against one with eigenvectors at right angles to it that its entries do not show. */
+    @Test
+    void resolvesNearlyPureAndHiddenOrthogonalQubits() {
+        DensityOperator psi = DensityOperator.ofKet(0.6, 0.8);
+        for (double length : new double[] {1 - 1e-3, 1 - 1e-9, 1 - 0x1p-50}) {
+            DensityOperator b = DensityOperator.ofBloch(0, 0, length);
+            double up = (1 + length) / 2;
+            double down = (1 - length) / 2;
+            PositivePair exact = PositivePair.ofSpectralMeasure(new double[] {0.36, 0.64}, new double[] {up, down});
+            // the doubles of 0.6 and 0.8 square to 0.36 and 0.64 within 2^-52 each
+            Enclosure f = RankOneCopies.of(psi, b, false, 1000)
+                    .orElseThrow()
+                    .traceMinimum(WideDouble.ONE, WideDouble.of(1, 900));
+            double expected = exact.copies(1000)
+                    .traceMinimum(WideDouble.ONE, WideDouble.of(1, 900))
+                    .midpoint();
+            assertEquals(expected, f.midpoint(), expected * 1e-12);
+            assertTrue(f.relativeWidth() < NARROW, f::toString);
+        }
+        DensityOperator plus = DensityOperator.ofReal(new double[][] {{0.5, 0.25}, {0.25, 0.5}});
+        Enclosure f = RankOneCopies.of(DensityOperator.ofBloch(1, 0, 0), plus, false, 400)
+                .orElseThrow()
+                .traceMinimum(1);
+        double expected = Math.pow(0.75, 400);
+        assertEquals(expected, f.midpoint(), expected * 1e-12);
+        assertTrue(f.relativeWidth() < NARROW, f::toString);
+    }
+
     /** A ket and a mixed qubit a million times, at any depth. */
     @Test
     void staysTightForAMillionCopies() {
