@@ -4,7 +4,6 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.stream.IntStream;
 import org.minorant.core.Enclosure;
-import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
@@ -17,11 +16,13 @@ import org.minorant.core.internal.number.WideDoubleDouble;
  * <p><b>Enclosure.</b> All terms are positive. Each is a product of table entries of relative error 2^-53 (powers over factorials, made in double-double), so that f has relative error
  * (2K + 8) · 2^-53 plus n times that of the letters, at any depth. Types outside the windows of {@link Tilt} are left out; what they can amount to is added to the upper end.
  *
+ * <p>Where more than 10^8 types matter, {@link LikelihoodBins} enclose the sum as closely as 2^14 bins allow.
+ *
  * <p>Types and their use here: T. M. Cover and J. A. Thomas, Elements of Information Theory, ch. 11 (from memory).
  */
 final class CommutingCopies extends PositivePair {
 
-    /** Beyond this many types a value would take more than a second or so. */
+    /** Beyond this many types a value would take more than a second or so, and bins take over. */
     static final double MOST_TYPES = 1e8;
 
     private static final double U = 0x1p-53;
@@ -36,6 +37,8 @@ final class CommutingCopies extends PositivePair {
     private final WideDoubleDouble totalB;
     private final double traceError;
     private final Effort effort;
+    /** Made when first needed; the same value whoever makes it. */
+    private volatile BinnedSum bins;
 
     private CommutingCopies(
             int n,
@@ -102,9 +105,20 @@ final class CommutingCopies extends PositivePair {
         int k = letters.count();
         // the sum is below its bound by a factor polynomial in n
         double ln = Math.log(2 * k / effort.tolerance()) + Math.log(n) * 0.5 * (k + 1) + 10;
+        int[] from = new int[k];
+        int[] to = new int[k];
         Enclosure f = Enclosure.ZERO;
         for (int attempt = 0; attempt < ATTEMPTS; attempt++) {
-            Enclosure kept = sum(tilt, ln, lnBound, wa, wb);
+            for (int i = 0; i < k; i++) {
+                from[i] = tilt.from(i, ln);
+                to[i] = tilt.to(i, ln);
+            }
+            if (TypeBox.count(n, from, to) > MOST_TYPES) {
+                Enclosure binned = bins().sum(wa, wb, (long) Math.ceil(lnBound / Math.log(2)));
+                WideDouble upper = binned.upperWide().min(WideDouble.expUp(lnBound));
+                return Enclosure.of(binned.lowerWide().min(upper), upper);
+            }
+            Enclosure kept = sum(from, to, lnBound, wa, wb);
             WideDouble skipped = WideDouble.expUp(lnBound - ln + Math.log(2 * k));
             f = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(skipped));
             WideDouble allowed = kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 8));
@@ -116,26 +130,21 @@ final class CommutingCopies extends PositivePair {
         return f;
     }
 
+    private BinnedSum bins() {
+        BinnedSum b = bins;
+        if (b == null) {
+            b = BinnedSum.of(letters, n, effort);
+            bins = b;
+        }
+        return b;
+    }
+
     private static double ln(WideDouble w) {
         return Math.log(w.significand()) + w.exponent() * Math.log(2);
     }
 
-    private Enclosure sum(Tilt tilt, double ln, double lnBound, WideDouble wa, WideDouble wb) {
+    private Enclosure sum(int[] from, int[] to, double lnBound, WideDouble wa, WideDouble wb) {
         int k = letters.count();
-        int[] from = new int[k];
-        int[] to = new int[k];
-        for (int i = 0; i < k; i++) {
-            from[i] = tilt.from(i, ln);
-            to[i] = tilt.to(i, ln);
-        }
-        double types = TypeBox.count(n, from, to);
-        if (types > MOST_TYPES) {
-            throw new InvalidInputException(
-                    "PositivePair.copies",
-                    n + " copies of " + k + " letters have " + (long) types + " types that matter",
-                    "at most " + (long) MOST_TYPES,
-                    "take fewer copies, or merge letters of nearly equal ratio");
-        }
         TypeBox box = TypeBox.of(
                 n,
                 from,

@@ -4,7 +4,6 @@ import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
 import org.minorant.core.Enclosure;
-import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
@@ -22,11 +21,13 @@ import org.minorant.core.internal.number.WideDoubleDouble;
  *   <li>in the second the vector is cut by ε = √(Σ w), and √f is 1-Lipschitz in the vector: (√f − ε)² ≤ f' ≤ (√f + ε)².
  * </ul>
  *
+ * <p>Where more than 5 · 10^6 types matter, {@link BinnedSecular} encloses f as closely as 2^14 bins allow.
+ *
  * <p>Errors η, ν of the operators' factors: A^⊗n is within (1 ± η)^n of its model, and n ν (a + ν)^(n−1) in trace.
  */
 final class RankOneCopies extends PositivePair {
 
-    /** More points would take more than half a gigabyte. */
+    /** More points would take more than half a gigabyte, and bins take over. */
     static final double MOST_POINTS = 5e6;
 
     private static final double U = 0x1p-53;
@@ -50,6 +51,9 @@ final class RankOneCopies extends PositivePair {
     private final double[] lnWeight;
 
     private final double[] lnProduct;
+
+    /** Made when first needed; the same value whoever makes it. */
+    private volatile BinnedSecular binned;
 
     private RankOneCopies(
             int n,
@@ -135,7 +139,7 @@ final class RankOneCopies extends PositivePair {
         if (measure.weights().size() > 0) {
             WideDouble t = other.dividedByUp(one);
             double off = t.equals(other.dividedByDown(one)) ? 0 : 2 * U;
-            f = small(t, off).orElseGet(() -> large(t, off));
+            f = wanted(t) > MOST_POINTS ? throughBins(t, off) : small(t, off).orElseGet(() -> large(t, off));
         } else if (measure.unresolved().signum() > 0) {
             // ψ^⊗n is cut to what B^⊗n does not meet; see the second form
             f = Enclosure.of(WideDouble.ZERO, leftOut(Tilt.at(0, lnWeight, lnProduct, 0, n), LIGHT));
@@ -148,13 +152,56 @@ final class RankOneCopies extends PositivePair {
         return off.signum() == 0 ? scaled : scaled.plus(Enclosure.of(off.negate(), off));
     }
 
+    /** An upper estimate of the points that a value takes, in either form. */
+    private double wanted(WideDouble t) {
+        int k = measure.weights().size();
+        Tilt[] tilts = {Tilt.of(lnWeight, lnProduct, lnRatio(t), n), Tilt.at(0, lnWeight, lnProduct, 0, n)};
+        double[] ln = {lnLeftOut() + 10, LIGHT + Math.log(2 * lnWeight.length)};
+        double most = 0;
+        for (int j = 0; j < 2; j++) {
+            int[] from = new int[k];
+            int[] to = new int[k];
+            for (int i = 0; i < k; i++) {
+                from[i] = tilts[j].from(i, ln[j]);
+                to[i] = tilts[j].to(i, ln[j]);
+            }
+            most = Math.max(most, TypeBox.count(n, from, to));
+        }
+        return most;
+    }
+
+    /** By bins, or by f ≤ Tr[A^(1−s)(tB)^s] = t^s Σ w b^s (Audenaert et al., PRL 98, 160501, 2007) where f is so deep that bins lose it. */
+    private Enclosure throughBins(WideDouble t, double off) {
+        Enclosure f = binned().value(t, total(), CopyErrors.kernel(measure, n), off);
+        WideDouble chernoff =
+                WideDouble.expUp(Tilt.of(lnWeight, lnProduct, lnRatio(t), n).lnChernoff());
+        WideDouble upper = f.upperWide().min(chernoff);
+        return Enclosure.of(f.lowerWide().min(upper), upper);
+    }
+
+    private BinnedSecular binned() {
+        BinnedSecular b = binned;
+        if (b == null) {
+            b = BinnedSecular.of(measure, n, effort);
+            binned = b;
+        }
+        return b;
+    }
+
+    private double lnRatio(WideDouble t) {
+        return Math.log(t.significand()) + t.exponent() * Math.log(2) - n * Letters.ln(measure.total());
+    }
+
+    /** How small a share of types is left out at first: f is below its bound by a factor polynomial in n. */
+    private double lnLeftOut() {
+        int k = lnWeight.length;
+        return Math.log(8 * k / effort.tolerance()) + Math.log(n) * 0.5 * (k + 1) + 10;
+    }
+
     /** The value where it is at most about half of a. */
     private Optional<Enclosure> small(WideDouble t, double off) {
-        double lnA = n * Letters.ln(measure.total());
-        double lnT = Math.log(t.significand()) + t.exponent() * Math.log(2) - lnA;
-        Tilt tilt = Tilt.of(lnWeight, lnProduct, lnT, n);
-        int k = lnWeight.length;
-        double ln = Math.log(8 * k / effort.tolerance()) + Math.log(n) * 0.5 * (k + 1) + 10;
+        Tilt tilt = Tilt.of(lnWeight, lnProduct, lnRatio(t), n);
+        double ln = lnLeftOut();
         Optional<Enclosure> f = Optional.empty();
         for (int attempt = 0; attempt < ATTEMPTS; attempt++) {
             WideDouble skipped = leftOut(tilt, ln).timesPowerOfTwo(2);
@@ -199,14 +246,6 @@ final class RankOneCopies extends PositivePair {
             from[i] = tilt.from(i, ln);
             to[i] = tilt.to(i, ln);
         }
-        double count = TypeBox.count(n, from, to);
-        if (count > MOST_POINTS) {
-            throw new InvalidInputException(
-                    "PositivePair.copies",
-                    n + " copies of " + k + " eigenvalues have " + (long) count + " types that matter",
-                    "at most " + (long) MOST_POINTS,
-                    "take fewer copies, or a vector with fewer different eigenvalues");
-        }
         TypeBox box = TypeBox.of(
                 n,
                 from,
@@ -224,7 +263,7 @@ final class RankOneCopies extends PositivePair {
         return new SpectralPoints(
                 c.weights(),
                 c.values(),
-                Letters.enclosure(measure.total().power(n), n * (measure.totalError() + 2 * DoubleDouble.EPS)),
+                total(),
                 CopyErrors.kernel(measure, n),
                 rounding + 2 * n * measure.weightError(),
                 rounding + 2 * n * measure.valueError() + off);
@@ -240,9 +279,13 @@ final class RankOneCopies extends PositivePair {
         return swapped ? oneTrace() : otherTrace();
     }
 
+    /** ‖ψ‖^2n. */
+    private Enclosure total() {
+        return Letters.enclosure(measure.total().power(n), n * (measure.totalError() + 2 * DoubleDouble.EPS));
+    }
+
     private Enclosure oneTrace() {
-        Enclosure a = Letters.enclosure(measure.total().power(n), n * (measure.totalError() + 2 * DoubleDouble.EPS))
-                .times(CopyErrors.relative(errors.relative(), n));
+        Enclosure a = total().times(CopyErrors.relative(errors.relative(), n));
         WideDouble off = CopyErrors.trace(n, measure.totalEnclosure(), errors.traceOne(), errors.relative());
         return off.signum() == 0 ? a : a.plus(Enclosure.of(off.negate(), off)).max(Enclosure.ZERO);
     }

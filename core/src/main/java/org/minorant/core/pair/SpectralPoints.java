@@ -45,4 +45,9 @@ record SpectralPoints(
     SpectralPoints withValueError(double e) {
         return new SpectralPoints(weights, values, total, kernel, weightError, e);
     }
+
+    /** The same with another total and kernel, the values known less well by the given amount. */
+    SpectralPoints withTotal(Enclosure newTotal, Enclosure newKernel, double off) {
+        return new SpectralPoints(weights, values, newTotal, newKernel, weightError, valueError + off);
+    }
 }
