@@ -2,6 +2,7 @@ package org.minorant.core.pair;
 
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Optional;
 import java.util.OptionalInt;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.InvalidInputException;
@@ -40,13 +41,22 @@ final class PairStructure {
 
     /** The pair of n copies of two operators. */
     static PositivePair power(PositiveOperator a, PositiveOperator b, int n) {
+        Optional<PositivePair> rankOne = Optional.empty();
+        if (a.knownColumns().equals(OptionalInt.of(1))) {
+            rankOne = RankOneCopies.of(a, b, false, n);
+        } else if (b.knownColumns().equals(OptionalInt.of(1))) {
+            rankOne = RankOneCopies.of(b, a, true, n);
+        }
+        if (rankOne.isPresent()) {
+            return rankOne.get();
+        }
         if (a.dimension() == 2) {
             return SpinBlocksPair.of(a, b, n);
         }
         throw new InvalidInputException(
                 "PositivePair.copies",
-                "operators of dimension " + a.dimension() + " that do not commute",
-                "dimension 2",
+                "mixed operators of dimension " + a.dimension() + " that do not commute",
+                "dimension 2, or one operator a ket",
                 "compress them to a common support of dimension 2 if they have one");
     }
 

@@ -180,6 +180,9 @@ class RankOneCopiesTest {
             Enclosure f = RankOneCopies.of(psi, b, false, 3).orElseThrow().traceMinimum(t);
             Enclosure other = RankOneCopies.of(psi, b, true, 3).orElseThrow().traceMinimum(t, 1);
             Enclosure dense = PositivePair.of(psiN, bN).traceMinimum(t);
+            // found from the operators as well
+            assertEquals(f, PositivePair.of(psi, b).copies(3).traceMinimum(t));
+            assertEquals(other, PositivePair.of(b, psi).copies(3).traceMinimum(t, 1));
             assertTrue(
                     f.isPossiblyBelow(dense) && dense.isPossiblyBelow(f),
                     () -> t + ": " + f.toIntervalString(18) + " and " + dense.toIntervalString(18));
