@@ -3,7 +3,7 @@ package org.minorant.bounds;
 import java.util.List;
 import java.util.Optional;
 
-/** P_e ≤ √(p(1−p)) Tr √ρ√σ: the quantum Chernoff bound at s = ½, the counterpart of Bhattacharyya's. */
+/** P_e ≤ √(p(1−p)) (Tr √ρ√σ)^n: the quantum Chernoff bound at s = ½, the counterpart of Bhattacharyya's. */
 final class ChernoffAtHalf implements TestingBound {
 
     private static final Theorem THEOREM = new Theorem(
@@ -15,7 +15,10 @@ final class ChernoffAtHalf implements TestingBound {
         return problem.hasTwoStates()
                 ? Optional.of(Bound.of(
                         Side.UPPER,
-                        ChernoffBound.curve(problem).value(0.5).exp(),
+                        ChernoffBound.curve(problem)
+                                .value(0.5)
+                                .times(problem.copies())
+                                .exp(),
                         THEOREM,
                         List.of(TestingProblem.BOTH_POSSIBLE)))
                 : Optional.empty();

@@ -7,8 +7,8 @@ import org.minorant.bounds.divergence.StatePair;
 import org.minorant.core.Enclosure;
 
 /**
- * P_e ≤ √(p(1−p)) F: Tr[A ∧ B] ≤ Tr √A√B ≤ ‖√A√B‖₁ with A = pρ, B = (1−p)σ; the first step is the Chernoff bound at ½, the second |Tr X| ≤
- * ‖X‖₁.
+ * P_e ≤ √(p(1−p)) F^n: Tr[A ∧ B] ≤ Tr √A√B ≤ ‖√A√B‖₁ with A = pρ^⊗n, B = (1−p)σ^⊗n; the first step is the Chernoff bound at ½, the second |Tr X| ≤
+ * ‖X‖₁. The relative error of F enters n times.
  */
 final class FidelityFromAbove implements TestingBound {
 
@@ -26,8 +26,9 @@ final class FidelityFromAbove implements TestingBound {
     /** ‖√A√B‖₁ for the operators as given. */
     static Enclosure fidelity(TestingProblem problem) {
         StatePair s = problem.spectra();
-        Enclosure a = s.first().trace().toEnclosure().times(problem.prior());
-        Enclosure b = s.second().trace().toEnclosure().times(problem.otherPrior());
-        return a.times(b).sqrt().times(Fidelity.value(s));
+        int n = problem.copies();
+        Enclosure a = Powers.of(s.first().trace().toEnclosure(), n).times(problem.prior());
+        Enclosure b = Powers.of(s.second().trace().toEnclosure(), n).times(problem.otherPrior());
+        return a.times(b).sqrt().times(Powers.of(Fidelity.value(s), n));
     }
 }

@@ -5,7 +5,7 @@ import java.util.Optional;
 import org.minorant.core.Enclosure;
 
 /**
- * P_e ≥ ½(1 − √(1 − 4p(1−p)F²)). With A = pρ, B = (1−p)σ, F' = ‖√A√B‖₁ and T = Tr(A + B): ‖A − B‖₁² ≤ T² − 4F'² (Fuchs and van de Graaf for
+ * P_e ≥ ½(1 − √(1 − 4p(1−p)F^(2n))). With A = pρ^⊗n, B = (1−p)σ^⊗n, F' = ‖√A√B‖₁ and T = Tr(A + B): ‖A − B‖₁² ≤ T² − 4F'² (Fuchs and van de Graaf for
  * normalised states; their proof, by
  * purifications of A and B and ‖|a⟩⟨a| − |b⟩⟨b|‖₁² = (‖a‖² + ‖b‖²)² − 4|⟨a|b⟩|², holds for any traces), so P_e = ½(T − ‖A − B‖₁) ≥ 2F'²/(T
  * + √(T² − 4F'²)), written so that small

@@ -5,6 +5,8 @@ import java.util.Optional;
 import org.minorant.bounds.divergence.Ball;
 import org.minorant.bounds.divergence.SpectralState;
 import org.minorant.bounds.divergence.StatePair;
+import org.minorant.core.Enclosure;
+import org.minorant.core.InvalidInputException;
 
 /**
  * P_e ≥ ½ Σ_ij |⟨u_i|v_j⟩|² min(p a_i, (1−p) b_j) with a_i, u_i and b_j, v_j eigenvalues and eigenvectors of ρ and σ.
@@ -12,6 +14,8 @@ import org.minorant.bounds.divergence.StatePair;
  * <p><b>Accuracy.</b> The sum is that of the certified spectral decompositions at the lower ends of their eigenvalues. These operators lie
  * below pρ and
  * (1−p)σ, so that the theorem for them and monotonicity of Tr[A ∧ B] give the bound for the states themselves.
+ *
+ * <p><b>n copies.</b> Their distributions are products, summed exactly over types of pairs (i, j), see {@link PairLetters}. Where more types matter than can be summed, the bound is left out.
  */
 final class HalfNussbaumSzkola implements TestingBound {
 
@@ -24,6 +28,23 @@ final class HalfNussbaumSzkola implements TestingBound {
         if (!problem.hasTwoStates()) {
             return Optional.empty();
         }
+        return value(problem).map(v -> Bound.of(Side.LOWER, v, THEOREM, List.of(TestingProblem.BOTH_POSSIBLE)));
+    }
+
+    private static Optional<Enclosure> value(TestingProblem problem) {
+        if (problem.copies() == 1) {
+            return Optional.of(oneCopy(problem));
+        }
+        try {
+            return Optional.of(PairLetters.of(problem.spectra())
+                    .traceMinimum(problem.copies(), problem.prior(), problem.otherPrior())
+                    .times(0.5));
+        } catch (InvalidInputException tooManyTypes) {
+            return Optional.empty();
+        }
+    }
+
+    private static Enclosure oneCopy(TestingProblem problem) {
         StatePair pair = problem.spectra();
         SpectralState a = pair.first();
         SpectralState b = pair.second();
@@ -36,10 +57,6 @@ final class HalfNussbaumSzkola implements TestingBound {
                 sum = sum.plus(pair.square(i, j).times(least));
             }
         }
-        return Optional.of(Bound.of(
-                Side.LOWER,
-                sum.times(0.5).toEnclosure().clip(0, Double.POSITIVE_INFINITY),
-                THEOREM,
-                List.of(TestingProblem.BOTH_POSSIBLE)));
+        return sum.times(0.5).toEnclosure().clip(0, Double.POSITIVE_INFINITY);
     }
 }

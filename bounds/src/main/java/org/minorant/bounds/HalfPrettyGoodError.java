@@ -3,7 +3,7 @@ package org.minorant.bounds;
 import java.util.List;
 import java.util.Optional;
 
-/** P_e ≥ Tr[A (A+B)^(−½) B (A+B)^(−½)], A = pρ, B = (1−p)σ: half the error of the pretty-good measurement. */
+/** P_e ≥ Tr[A (A+B)^(−½) B (A+B)^(−½)], A = pρ, B = (1−p)σ: half the error of the pretty-good measurement; for one copy only. */
 final class HalfPrettyGoodError implements TestingBound {
 
     private static final Theorem THEOREM = new Theorem(
@@ -12,7 +12,7 @@ final class HalfPrettyGoodError implements TestingBound {
 
     @Override
     public Optional<Bound> on(TestingProblem problem) {
-        return problem.hasTwoStates()
+        return problem.hasTwoStates() && problem.pair().hasStates()
                 ? Optional.of(Bound.of(
                         Side.LOWER,
                         PrettyGoodError.error(problem).times(0.5),

@@ -8,7 +8,7 @@ import org.minorant.measurement.PrettyGoodMeasurement;
 
 /**
  * P_e is at most the error 2 Tr[A (A+B)^(−½) B (A+B)^(−½)] of the pretty-good measurement, A = pρ, B = (1−p)σ, as it is at most that of
- * any.
+ * any. For one copy only: the square root of p ρ^⊗n + (1−p) σ^⊗n does not factor.
  */
 final class PrettyGoodError implements TestingBound {
 
@@ -17,7 +17,7 @@ final class PrettyGoodError implements TestingBound {
 
     @Override
     public Optional<Bound> on(TestingProblem problem) {
-        return problem.hasTwoStates()
+        return problem.hasTwoStates() && problem.pair().hasStates()
                 ? Optional.of(Bound.of(Side.UPPER, error(problem), THEOREM, List.of(TestingProblem.BOTH_POSSIBLE)))
                 : Optional.empty();
     }

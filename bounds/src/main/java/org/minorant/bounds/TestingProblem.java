@@ -9,9 +9,9 @@ import org.minorant.measurement.HypothesisPair;
 /**
  * What a bound on the minimum error is about: P_e = Tr[pρ ∧ (1−p)σ] for a pair of hypotheses and the prior p of the first.
  *
- * <p>States are used as given, as {@link HypothesisPair#minimumError} does. What several bounds need (spectra and their overlaps) is
- * computed when the first of them
- * asks. Immutable and thread-safe.
+ * <p>States are used as given, as {@link HypothesisPair#minimumError} does. For a pair of n copies the bounds are computed from the states of
+ * one copy, so that they can be had at any n. What several bounds need (spectra and their overlaps) is computed when the first of them asks.
+ * Immutable and thread-safe.
  */
 public final class TestingProblem {
 
@@ -68,19 +68,37 @@ public final class TestingProblem {
     }
 
     /**
-     * Tells whether both hypotheses are possible and the two states at hand, which most bounds ask for.
+     * Returns the number of copies n: the hypotheses are ρ^⊗n and σ^⊗n.
      *
-     * @return whether 0 &lt; p &lt; 1 and the pair has states
+     * @return n, 1 unless the pair was made by {@link HypothesisPair#copies}
      */
-    public boolean hasTwoStates() {
-        return prior > 0 && prior < 1 && pair.hasStates();
+    public int copies() {
+        return pair.copyCount();
     }
 
-    /** The spectra of both states and their overlaps. */
+    /**
+     * Returns the hypotheses about one copy.
+     *
+     * @return ρ and σ themselves
+     */
+    public HypothesisPair single() {
+        return pair.single();
+    }
+
+    /**
+     * Tells whether both hypotheses are possible and the two states of one copy at hand, which most bounds ask for.
+     *
+     * @return whether 0 &lt; p &lt; 1 and {@link #single()} has states
+     */
+    public boolean hasTwoStates() {
+        return prior > 0 && prior < 1 && single().hasStates();
+    }
+
+    /** The spectra of both states of one copy and their overlaps. */
     StatePair spectra() {
         Optional<StatePair> s = spectra;
         if (s.isEmpty()) {
-            s = Optional.of(StatePair.of(pair.first(), pair.second()));
+            s = Optional.of(StatePair.of(single().first(), single().second()));
             spectra = s;
         }
         return s.get();
