@@ -69,6 +69,30 @@ final class CommutingCopies extends PositivePair {
                 n, a.length, letters, total(a), total(b), a.length * DoubleDouble.EPS, Effort.DEFAULT);
     }
 
+    /** n copies of two commuting operators whose eigenvalues are known within a relative error, small ones included. */
+    static PositivePair of(DoubleDouble[] a, DoubleDouble[] b, double relativeError, int n) {
+        List<WideDoubleDouble> x = new ArrayList<>();
+        List<WideDoubleDouble> y = new ArrayList<>();
+        WideDoubleDouble totalA = WideDoubleDouble.ZERO;
+        WideDoubleDouble totalB = WideDoubleDouble.ZERO;
+        for (int i = 0; i < a.length; i++) {
+            WideDoubleDouble p = WideDoubleDouble.of(a[i]);
+            WideDoubleDouble q = WideDoubleDouble.of(b[i]);
+            totalA = Letters.sum(totalA, p);
+            totalB = Letters.sum(totalB, q);
+            if (a[i].hi() > 0 && b[i].hi() > 0) {
+                x.add(p);
+                y.add(q);
+            }
+        }
+        Letters letters = new Letters(List.copyOf(x), List.copyOf(y), relativeError);
+        List<WideDoubleDouble> all = new ArrayList<>(x);
+        all.addAll(y);
+        Letters.checkCopies(n, all);
+        double traceError = relativeError + a.length * DoubleDouble.EPS;
+        return new CommutingCopies(n, a.length, letters, totalA, totalB, traceError, Effort.DEFAULT);
+    }
+
     private static WideDoubleDouble total(double[] a) {
         WideDoubleDouble s = WideDoubleDouble.ZERO;
         for (double v : a) {

@@ -1,6 +1,8 @@
 package org.minorant.core.pair;
 
 import java.util.List;
+import java.util.Optional;
+import java.util.function.IntFunction;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
@@ -10,10 +12,25 @@ final class DirectSumPair extends PositivePair {
 
     private final List<PositivePair> pairs;
     private final double[] weights;
+    /** n copies of the operators that the blocks were found in. */
+    private final Optional<IntFunction<PositivePair>> many;
 
-    private DirectSumPair(List<PositivePair> pairs, double[] weights) {
+    private DirectSumPair(List<PositivePair> pairs, double[] weights, Optional<IntFunction<PositivePair>> many) {
         this.pairs = pairs;
         this.weights = weights;
+        this.many = many;
+    }
+
+    /** The blocks of two operators. */
+    static DirectSumPair ofBlocks(List<PositivePair> blocks, IntFunction<PositivePair> many) {
+        double[] ones = new double[blocks.size()];
+        java.util.Arrays.fill(ones, 1);
+        return new DirectSumPair(List.copyOf(blocks), ones, Optional.of(many));
+    }
+
+    @Override
+    PositivePair power(int n) {
+        return many.isPresent() ? many.get().apply(n) : super.power(n);
     }
 
     static DirectSumPair of(List<? extends PositivePair> pairs, double[] weights) {
@@ -31,7 +48,7 @@ final class DirectSumPair extends PositivePair {
                         asked, "weight " + i + " is " + weights[i], "at least 0 and finite", "check the weights");
             }
         }
-        return new DirectSumPair(List.copyOf(pairs), weights.clone());
+        return new DirectSumPair(List.copyOf(pairs), weights.clone(), Optional.empty());
     }
 
     @Override

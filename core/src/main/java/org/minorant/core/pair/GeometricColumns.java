@@ -2,27 +2,43 @@ package org.minorant.core.pair;
 
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.internal.number.DoubleDouble;
+import org.minorant.core.internal.number.WideDoubleDouble;
 
-/** The powers 1, r, r², … of a ratio 0 ≤ r ≤ 1 and their square roots, with relative errors below 2^-94 for the first few thousand; what underflows is zero. */
+/**
+ * The weights w, wr, wr², … of one operator's columns in a spin block, 0 ≤ r ≤ 1, in units of 2^shift, and their square roots: relative errors below (i + 4) · 2^-101 beside that of w. Weights below 2^-1000 of the unit are left out.
+ */
 final class GeometricColumns {
 
-    private static final double TINY = 0x1p-1000;
+    private static final int LEAST = -1000;
 
     private final DoubleDouble[] power;
     private final DoubleDouble[] root;
+    private final int held;
 
-    GeometricColumns(DoubleDouble ratio, int count) {
+    GeometricColumns(WideDoubleDouble weight, DoubleDouble ratio, int count, long shift) {
         power = new DoubleDouble[count];
         root = new DoubleDouble[count];
-        DoubleDouble half = ratio.sqrt();
-        DoubleDouble p = DoubleDouble.ONE;
-        DoubleDouble h = DoubleDouble.ONE;
-        for (int i = 0; i < count; i++) {
-            power[i] = p.hi() < TINY ? DoubleDouble.ZERO : p;
-            root[i] = h.hi() < TINY ? DoubleDouble.ZERO : h;
-            p = p.times(ratio);
-            h = h.times(half);
+        WideDoubleDouble r = WideDoubleDouble.of(ratio);
+        WideDoubleDouble p = weight;
+        int n = 0;
+        while (n < count && p.significand().hi() != 0 && p.exponent() - shift >= LEAST) {
+            power[n] = p.toDoubleDouble(shift);
+            WideDoubleDouble unit = new WideDoubleDouble(p.significand(), p.exponent() - shift);
+            root[n] = unit.sqrt().toDoubleDouble(0);
+            p = p.times(r);
+            n++;
         }
+        held = n;
+    }
+
+    /** How many columns are heavy enough to be held. */
+    int held() {
+        return held;
+    }
+
+    /** An upper end of the weight that is left out, in units of 2^shift. */
+    double leftOut() {
+        return (power.length - held) * Math.scalb(1.0, LEAST + 1);
     }
 
     DoubleDouble root(int i) {
@@ -33,12 +49,20 @@ final class GeometricColumns {
         return power[i];
     }
 
-    /** The diagonal matrix of the first powers. */
+    /** The sum of the first weights, rounded once for each. */
+    double trace(int count) {
+        double s = 0;
+        for (int i = 0; i < count; i++) {
+            s += power[i].hi();
+        }
+        return s;
+    }
+
+    /** The diagonal matrix of the first weights. */
     EnclosedMatrix gram(int count) {
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(count, count);
         for (int i = 0; i < count; i++) {
-            double radius = power[i].hi() * (i + 1) * 0x1p-100 + (i == 0 ? 0 : 0x1p-990);
-            m.set(i, i, power[i].hi(), power[i].lo(), 0, 0, i == 0 ? 0 : radius);
+            m.set(i, i, power[i].hi(), power[i].lo(), 0, 0, i == 0 ? 0 : power[i].hi() * (i + 4) * 0x1p-100);
         }
         return m.build();
     }

@@ -25,7 +25,7 @@ final class HyperbolicSweeps {
 
     private static final double ORTHOGONAL = 1e-16;
     private static final double SHORT_OF_EQUAL = 1e-7;
-    /** Beyond this part of the sum of the norms the root is of no danger. */
+    /** A root beyond this, in units of the sum of the norms, is of no danger. */
     private static final double WIDE_ANGLE = 0.1;
 
     /** Overlaps met below this are squared by the rotations of the sweep that met them. */
@@ -48,6 +48,8 @@ final class HyperbolicSweeps {
 
     private final double[][] gi;
     private final double[] norm;
+    /** Roots of the norms: products of these do not underflow where products of the norms would. */
+    private final double[] length;
     private double total;
     /** The largest normalised inner product met within one operator during the sweep. */
     private double overlap;
@@ -66,6 +68,7 @@ final class HyperbolicSweeps {
         gr = new double[r][r];
         gi = new double[r][real ? 0 : r];
         norm = new double[r];
+        length = new double[r];
         for (int j = 0; j < r; j++) {
             EnclosedMatrix from = j < k ? x : y;
             int c = j < k ? j : j - k;
@@ -122,7 +125,7 @@ final class HyperbolicSweeps {
 
     private void measure() {
         for (int j = 0; j < r; j++) {
-            norm[j] = squared(j);
+            measure(j);
         }
     }
 
@@ -150,8 +153,9 @@ final class HyperbolicSweeps {
         }
     }
 
-    private double squared(int j) {
-        return Rotations.dotRe(re[j], im[j], re[j], im[j]);
+    private void measure(int j) {
+        norm[j] = Rotations.dotRe(re[j], im[j], re[j], im[j]);
+        length[j] = Math.sqrt(norm[j]);
     }
 
     private double imag(int i, int j) {
@@ -176,25 +180,30 @@ final class HyperbolicSweeps {
         double b = norm[c];
         double hr = gr[p][c];
         double hi = imag(p, c);
-        double h2 = hr * hr + hi * hi;
-        if (2 * h2 / (a + b) <= NEGLIGIBLE * total) {
+        double sum = a + b;
+        double h = Math.hypot(hr, hi);
+        if (2 * h * (h / sum) <= NEGLIGIBLE * total) {
             return false;
         }
-        double d = a * b - q * h2;
-        if (q * h2 > 0.25 * a * b) {
+        // everything relative to a + b: products of light columns' norms would underflow
+        double x = a / sum;
+        double y = b / sum;
+        double g = unit * h / sum;
+        double d = x * y - g * g;
+        if (g * g > 0.25 * x * y) {
             hr = Rotations.dotRe(re[p], im[p], re[c], im[c]) / unit;
             hi = Rotations.dotIm(re[p], im[p], re[c], im[c]) / unit;
-            h2 = hr * hr + hi * hi;
-            d = a * Rotations.distance(re[c], im[c], re[p], im[p], unit * hr / a, unit * hi / a);
+            h = Math.hypot(hr, hi);
+            d = x * (Rotations.distance(re[c], im[c], re[p], im[p], unit * hr / a, unit * hi / a) / sum);
         }
-        double exactRoot = Math.sqrt((a - b) * (a - b) + 4 * d);
-        double root = Math.max(exactRoot, shortest(p, c, exactRoot, a + b));
-        double s = a + b + root;
-        total += 2 * h2 / s;
+        double exactRoot = Math.sqrt((x - y) * (x - y) + 4 * d);
+        double root = Math.max(exactRoot, shortest(p, c, exactRoot));
+        double s = sum * (1 + root);
+        total += 2 * h * (h / s);
         // t in units of 2^e; 1 − |t|² written without cancellation
         double tr = -2 * hr / s;
         double ti = 2 * hi / s;
-        double cosh = s / Math.sqrt(root * root + 2 * root * (a + b) + exactRoot * exactRoot);
+        double cosh = (1 + root) / Math.sqrt(root * root + 2 * root + exactRoot * exactRoot);
         turn(p, c, cosh, cosh * tr, cosh * ti, true);
         if (root > exactRoot) {
             // what is left of equal columns is rounding noise; turning it further would only blow up the coefficients
@@ -205,15 +214,15 @@ final class HyperbolicSweeps {
     }
 
     /**
-     * The least root that may be used. Equal columns would need an infinite angle. Stopping short leaves 1e-7 of what they share to the next level of the certificate; coefficients that have already been stretched
+     * The least root that may be used, in units of the sum of the norms. Equal columns would need an infinite angle. Stopping short leaves 1e-7 of what they share to the next level of the certificate; coefficients that have already been stretched
      * count. The inner products there have lost 14 digits of 32 by then: less would leave more, and more would lose more.
      */
-    private double shortest(int p, int c, double exactRoot, double sum) {
-        if (exactRoot > WIDE_ANGLE * sum) {
+    private double shortest(int p, int c, double exactRoot) {
+        if (exactRoot > WIDE_ANGLE) {
             return 0;
         }
         double stretch = Math.max(stretch(p, 0, k), stretch(c, k, r));
-        return Math.min(1, SHORT_OF_EQUAL * Math.max(1, stretch)) * sum;
+        return Math.min(1, SHORT_OF_EQUAL * Math.max(1, stretch));
     }
 
     /** The squared coefficients of column j in the columns of its own operator. */
@@ -227,6 +236,7 @@ final class HyperbolicSweeps {
 
     private void retire(int j) {
         norm[j] = 0;
+        length[j] = 0;
         java.util.Arrays.fill(re[j], 0);
         java.util.Arrays.fill(im[j], 0);
     }
@@ -262,8 +272,8 @@ final class HyperbolicSweeps {
         double ti = hyperbolic ? -si : si;
         double u = hyperbolic ? unit : 1;
         Rotations.mix(re[p], im[p], re[m], im[m], c, u * sr, u * si, u * tr, u * ti);
-        norm[p] = squared(p);
-        norm[m] = squared(m);
+        measure(p);
+        measure(m);
         mixCoefficients(p, m, c, sr, si, tr, ti, hyperbolic);
         if (gi[0].length == 0) {
             mixRealProducts(p, m, c, sr, tr, hyperbolic ? q : 1, 1, 0, k);
@@ -298,8 +308,8 @@ final class HyperbolicSweeps {
         double[] gm = gr[m];
         double us = up * s;
         double ut = um * t;
-        double scaleP = ((p < k) != (from < k) ? q : 1) / norm[p];
-        double scaleM = ((m < k) != (from < k) ? q : 1) / norm[m];
+        double mostP = length[p] / ((p < k) != (from < k) ? unit : 1);
+        double mostM = length[m] / ((m < k) != (from < k) ? unit : 1);
         for (int z = from; z < to; z++) {
             if (z == p || z == m || !(norm[z] > 0)) {
                 continue;
@@ -310,7 +320,7 @@ final class HyperbolicSweeps {
             double y = us * b;
             double v = x + y;
             double size = Math.abs(x) + Math.abs(y);
-            if (!(scaleP * size * size <= norm[z])) {
+            if (!(size <= mostP * length[z])) {
                 v = product(z, p);
             }
             gp[z] = v;
@@ -319,7 +329,7 @@ final class HyperbolicSweeps {
             y = ut * a;
             v = x + y;
             size = Math.abs(x) + Math.abs(y);
-            if (!(scaleM * size * size <= norm[z])) {
+            if (!(size <= mostM * length[z])) {
                 v = product(z, m);
             }
             gm[z] = v;
@@ -349,8 +359,7 @@ final class HyperbolicSweeps {
     private void setIfTrusted(int z, int j, double xr, double xi, double yr, double yi) {
         double size = Math.sqrt(xr * xr + xi * xi) + Math.sqrt(yr * yr + yi * yi);
         boolean across = (z < k) != (j < k);
-        double scale = across ? q : 1;
-        if (scale * size * size <= norm[z] * norm[j]) {
+        if (size <= length[z] / (across ? unit : 1) * length[j]) {
             setProduct(z, j, xr + yr, xi + yi);
         } else {
             double u = across ? unit : 1;

@@ -14,8 +14,6 @@ record Inverse(EnclosedMatrix root, EnclosedMatrix defect, double size) {
 
     /** E this small needs no further step of refinement. */
     private static final double FINE = 1e-9;
-    /** Beyond this the remainder of the series needs its second term. */
-    private static final double SECOND = 1e-13;
 
     private static final int REFINEMENTS = 8;
 
@@ -23,11 +21,7 @@ record Inverse(EnclosedMatrix root, EnclosedMatrix defect, double size) {
     static Inverse refine(EnclosedMatrix start, EnclosedMatrix s) {
         Inverse p = of(start, s);
         for (int i = 0; i < REFINEMENTS && p.size >= FINE && p.size < 0.9; i++) {
-            EnclosedMatrix e = p.defect.midpoint();
-            EnclosedMatrix step = EnclosedMatrix.identity(e.columns())
-                    .minus(e.times(0.5))
-                    .plus(e.times(e).times(0.375));
-            p = of(p.root.times(step).midpoint(), s);
+            p = p.refined(s);
         }
         return p;
     }
@@ -37,14 +31,21 @@ record Inverse(EnclosedMatrix root, EnclosedMatrix defect, double size) {
         return new Inverse(root, e, e.frobeniusUpper());
     }
 
-    /** Tr S⁻¹Φ = Tr (1 + E)⁻¹F for F = P*ΦP given; |Tr E^k F| ≤ ‖E‖_F^k ‖F‖_F bounds what is left of the series. */
+    /** One more step. */
+    Inverse refined(EnclosedMatrix s) {
+        EnclosedMatrix e = defect.midpoint();
+        EnclosedMatrix step = EnclosedMatrix.identity(e.columns())
+                .minus(e.times(0.5))
+                .plus(e.times(e).times(0.375));
+        return of(root.times(step).midpoint(), s);
+    }
+
+    /**
+     * Tr S⁻¹Φ = Tr (1 + E)⁻¹F for F = P*ΦP given, by the first two terms of the series; the others add up to at most ‖E‖_F² ‖F‖_F/(1 − ‖E‖_F). F has entries far larger than its trace where weights are
+     * steeply graded; E must be as much smaller.
+     */
     Enclosure traceOfInverse(EnclosedMatrix f) {
-        double norm = f.frobeniusUpper() * (1 + 0x1p-40);
-        EnclosedMatrix ef = defect.times(f);
-        Enclosure first = f.traceRe().minus(ef.traceRe());
-        if (size < SECOND) {
-            return first.widen(size * size * norm / (1 - size) * (1 + 0x1p-40));
-        }
-        return first.plus(defect.times(ef).traceRe()).widen(Math.pow(size, 3) * norm / (1 - size) * (1 + 0x1p-40));
+        double rest = size * size * f.frobeniusUpper() / (1 - size) * (1 + 0x1p-40);
+        return f.traceRe().minus(defect.times(f).traceRe()).widen(rest);
     }
 }

@@ -34,21 +34,17 @@ final class PairStructure {
         for (int[] block : blocks) {
             pairs.add(single(PositiveOperator.compression(a, block), PositiveOperator.compression(b, block)));
         }
-        double[] ones = new double[pairs.size()];
-        java.util.Arrays.fill(ones, 1);
-        return DirectSumPair.of(pairs, ones);
+        return DirectSumPair.ofBlocks(pairs, n -> power(a, b, n));
     }
 
     /** The pair of n copies of two operators. */
     static PositivePair power(PositiveOperator a, PositiveOperator b, int n) {
-        Optional<PositivePair> rankOne = Optional.empty();
-        if (a.knownColumns().equals(OptionalInt.of(1))) {
-            rankOne = RankOneCopies.of(a, b, false, n);
-        } else if (b.knownColumns().equals(OptionalInt.of(1))) {
-            rankOne = RankOneCopies.of(b, a, true, n);
-        }
-        if (rankOne.isPresent()) {
-            return rankOne.get();
+        if (isKet(a) || isKet(b)) {
+            Optional<PositivePair> secular =
+                    isKet(a) ? RankOneCopies.of(a, b, false, n) : RankOneCopies.of(b, a, true, n);
+            if (secular.isPresent()) {
+                return secular.get();
+            }
         }
         if (a.dimension() == 2) {
             return SpinBlocksPair.of(a, b, n);
@@ -58,6 +54,10 @@ final class PairStructure {
                 "mixed operators of dimension " + a.dimension() + " that do not commute",
                 "dimension 2, or one operator a ket",
                 "compress them to a common support of dimension 2 if they have one");
+    }
+
+    private static boolean isKet(PositiveOperator a) {
+        return a.knownColumns().isPresent() && a.knownColumns().getAsInt() == 1;
     }
 
     private static PositivePair single(PositiveOperator a, PositiveOperator b) {

@@ -10,6 +10,7 @@ import java.util.concurrent.Future;
 import java.util.concurrent.Semaphore;
 import java.util.concurrent.ThreadFactory;
 import java.util.concurrent.atomic.AtomicBoolean;
+import java.util.concurrent.atomic.AtomicReference;
 import java.util.function.Function;
 
 /**
@@ -50,6 +51,7 @@ final class Parallel {
         }
         ExecutorService pool = Executors.newFixedThreadPool(threads, DAEMONS);
         AtomicBoolean stopped = new AtomicBoolean();
+        AtomicReference<Throwable> cause = new AtomicReference<>();
         Runnable checkpoint = () -> {
             if (stopped.get()) {
                 throw new CancellationException("another part of the work has ended it");
@@ -67,6 +69,7 @@ final class Parallel {
                     try {
                         return part.finish(checkpoint);
                     } catch (RuntimeException | Error e) {
+                        cause.compareAndSet(null, e);
                         stopped.set(true);
                         throw e;
                     } finally {
@@ -83,13 +86,12 @@ final class Parallel {
             Thread.currentThread().interrupt();
             throw new CancellationException("cancelled by an interrupt");
         } catch (ExecutionException e) {
-            if (e.getCause() instanceof RuntimeException r) {
-                throw r;
+            // what ended the work first, not what the others were ended with
+            Throwable first = cause.get();
+            if (first instanceof Error error) {
+                throw error;
             }
-            if (e.getCause() instanceof Error r) {
-                throw r;
-            }
-            throw new IllegalStateException(e.getCause());
+            throw (RuntimeException) first;
         } finally {
             stopped.set(true);
             pool.shutdownNow();

@@ -39,6 +39,9 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
         }
     }
 
+    /** A Bloch vector this short, relative to the trace, is rounding of a factor: the operator is a multiple of the identity within that relative error. */
+    private static final double NO_DIRECTION = 0x1p-94;
+
     /** Trace and unnormalised Bloch vector of a qubit operator, exactly. */
     private record Entries(
             BigDecimal trace, BigDecimal x, BigDecimal y, BigDecimal z, double relativeError, double traceError) {
@@ -51,14 +54,26 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
             return squaredLength().sqrt(DIGITS);
         }
 
-        Spectrum spectrum() {
-            BigDecimal large = trace.add(length()).divide(TWO);
+        Entries withRelative(double more) {
+            return new Entries(trace, x, y, z, relativeError + more, traceError);
+        }
+
+        BigDecimal largeEigenvalue() {
+            return trace.add(length()).divide(TWO);
+        }
+
+        /** det/λ₁; a negative determinant is rounding of the entries, and the operator meant is their positive part. */
+        BigDecimal smallEigenvalue() {
+            BigDecimal large = largeEigenvalue();
             BigDecimal four = trace.multiply(trace).subtract(squaredLength());
-            // a negative determinant is rounding of the entries; the operator meant is their positive part
-            BigDecimal small = four.signum() <= 0 || large.signum() == 0
+            return four.signum() <= 0 || large.signum() == 0
                     ? BigDecimal.ZERO
                     : four.divide(large.multiply(BigDecimal.valueOf(4)), DIGITS);
-            return new Spectrum(DoubleDouble.of(large), DoubleDouble.of(small), relativeError, traceError);
+        }
+
+        Spectrum spectrum() {
+            return new Spectrum(
+                    DoubleDouble.of(largeEigenvalue()), DoubleDouble.of(smallEigenvalue()), relativeError, traceError);
         }
     }
 
@@ -78,6 +93,15 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
         BigDecimal larger = BigDecimal.ONE.add(cosine.abs()).divide(TWO).sqrt(DIGITS);
         BigDecimal smaller = sine.divide(larger.multiply(TWO), DIGITS);
         boolean acute = dot.signum() >= 0;
+        BigDecimal turn = smaller.multiply(TWO).multiply(q.length());
+        BigDecimal small = q.smallEigenvalue();
+        if (turn.signum() > 0 && turn.compareTo(small.multiply(new BigDecimal(NO_DIRECTION))) < 0) {
+            // turning B by the angle 2φ changes it by 2 sin φ times its Bloch length at most, a relative error of that over its least eigenvalue
+            Spectrum turned = q.withRelative(NO_DIRECTION).spectrum();
+            return acute
+                    ? new QubitSpectra(p.spectrum(), turned, DoubleDouble.ONE, DoubleDouble.ZERO)
+                    : new QubitSpectra(p.spectrum(), turned, DoubleDouble.ZERO, DoubleDouble.ONE);
+        }
         return new QubitSpectra(
                 p.spectrum(),
                 q.spectrum(),
@@ -122,6 +146,12 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
 
     private static Entries entries(
             BigDecimal up, BigDecimal down, BigDecimal re, BigDecimal im, double relative, double trace) {
-        return new Entries(up.add(down), re.multiply(TWO), im.multiply(TWO), up.subtract(down), relative, trace);
+        Entries e = new Entries(up.add(down), re.multiply(TWO), im.multiply(TWO), up.subtract(down), relative, trace);
+        BigDecimal least = e.trace.multiply(new BigDecimal(NO_DIRECTION));
+        if (e.squaredLength().signum() > 0 && e.squaredLength().compareTo(least.multiply(least)) < 0) {
+            BigDecimal zero = BigDecimal.ZERO;
+            return new Entries(e.trace, zero, zero, zero, relative + NO_DIRECTION, trace);
+        }
+        return e;
     }
 }

@@ -32,6 +32,11 @@ final class RotationCertificate {
 
     private static final int MOST_LEVELS = 3;
 
+    /** A value of φ wider than this gains from another step towards P*SP = 1. */
+    private static final double SHARP = 0x1p-60;
+
+    private static final int MOST_STEPS = 2;
+
     private final WeightedColumns pair;
     private final EnclosedMatrix gx;
     private final EnclosedMatrix gy;
@@ -87,7 +92,8 @@ final class RotationCertificate {
 
     /** f in units of 2^2e. */
     private Enclosure enclose(EnclosedMatrix first, EnclosedMatrix second, int level, Runnable checkpoint) {
-        Inverse p = Inverse.refine(first, EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn)));
+        EnclosedMatrix left = EnclosedMatrix.identity(gx.rows()).minus(scaleByQ(nn));
+        Inverse p = Inverse.refine(first, left);
         checkpoint.run();
         Inverse p2 = Inverse.refine(
                 second,
@@ -103,6 +109,10 @@ final class RotationCertificate {
         // (Gx NN*)*, for the same reason as above
         EnclosedMatrix phi = mixed.minus(gx.times(nn).adjoint()).minus(quadratic);
         Enclosure value = p.traceOfInverse(congruence(p, phi));
+        for (int i = 0; i < MOST_STEPS && !(value.relativeWidth() <= SHARP); i++) {
+            p = p.refined(left);
+            value = value.intersect(p.traceOfInverse(congruence(p, phi)));
+        }
         checkpoint.run();
         WeightedColumns rest = leftover(p, p2, mixed, quadratic);
         WideDouble seen = value.lowerWide().max(WideDouble.ZERO);

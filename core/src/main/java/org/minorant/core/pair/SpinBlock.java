@@ -5,9 +5,9 @@ import org.minorant.core.internal.dd.DdProducts;
 import org.minorant.core.internal.number.DoubleDouble;
 
 /**
- * One spin block of many copies of two qubits: A = diag(x^a) in its eigenbasis, B = diag(y^b) in its own, overlaps C between the two; leading indices only.
+ * One spin block of many copies of two qubits: A = diag(x_a) in its eigenbasis, B = diag(y_b) in its own, overlaps C between the two; leading indices only.
  *
- * <p>The inner products are what defines the pair: X*X = diag(x^a), Y*Y = diag(y^b), X*Y = x^(a/2) C_ab y^(b/2). The columns only guide the rotations: x_a lies along the a-th axis, and
+ * <p>The inner products are what defines the pair: X*X = diag(x_a), Y*Y = diag(y_b), X*Y = √x_a C_ab √y_b. The columns only guide the rotations: x_a lies along the a-th axis, and
  * y_b has C_ab there and, beyond, column b of a triangle R with R*R = 1 − C*C.
  */
 final class SpinBlock {
@@ -20,26 +20,26 @@ final class SpinBlock {
     /**
      * The pair of a block.
      *
-     * @param x x^a and its root, a = 0, 1, …
-     * @param y y^b and its root
-     * @param c the window of C: a row for each column of A, a column for each of B
+     * @param x the weights of A
+     * @param y the weights of B
+     * @param window overlaps: a row for each column of A, a column for each of B, or more
      */
-    static ColumnPair columns(GeometricColumns x, GeometricColumns y, SpinOverlaps.Window c) {
+    static ColumnPair columns(GeometricColumns x, GeometricColumns y, SpinOverlaps.Window window) {
+        int k = x.held();
+        int l = y.held();
+        SpinOverlaps.Window c = window.leading(k, l);
         double[][] ch = c.high();
         double[][] cl = c.low();
         double[][] radius = c.radius();
-        int k = ch.length;
-        int l = ch[0].length;
         EnclosedMatrix.Builder cross = EnclosedMatrix.builder(k, l);
         for (int a = 0; a < k; a++) {
             for (int b = 0; b < l; b++) {
                 DoubleDouble scale = x.root(a).times(y.root(b));
                 DoubleDouble m = new DoubleDouble(ch[a][b], cl[a][b]).times(scale);
-                // the roots err by (a+1)·2^-101 and (b+1)·2^-101, the two products by 2^-102 each; roots below 2^-1000
-                // count as 0
+                // the roots err by (a+4)·2^-102 and (b+4)·2^-102 beside their weights, the two products by 2^-102 each
                 double r = scale.hi() * radius[a][b] * (1 + 0x1p-50)
-                        + Math.abs(m.hi()) * (a + b + 8) * 0x1p-101
-                        + 0x1p-990;
+                        + Math.abs(m.hi()) * (a + b + 16) * 0x1p-101
+                        + 0x1p-1060;
                 cross.set(a, b, m.hi(), m.lo(), 0, 0, r);
             }
         }

@@ -4,6 +4,7 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
+import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
@@ -40,8 +41,18 @@ final class SpinBlocksPair extends PositivePair {
         this.traceB = traceB;
     }
 
-    static SpinBlocksPair of(PositiveOperator a, PositiveOperator b, int n) {
+    /** n copies of two qubit operators; by types if they commute. */
+    static PositivePair of(PositiveOperator a, PositiveOperator b, int n) {
         QubitSpectra s = QubitSpectra.of(a, b);
+        boolean commute = s.sin().hi() == 0 || s.cos().hi() == 0;
+        if (commute && s.first().traceError() == 0 && s.second().traceError() == 0) {
+            DoubleDouble[] x = {s.first().large(), s.first().small()};
+            DoubleDouble large = s.second().large();
+            DoubleDouble small = s.second().small();
+            DoubleDouble[] y = s.sin().hi() == 0 ? new DoubleDouble[] {large, small} : new DoubleDouble[] {small, large};
+            double error = Math.max(s.first().relativeError(), s.second().relativeError()) + 0x1p-100;
+            return CommutingCopies.of(x, y, error, n);
+        }
         return new SpinBlocksPair(s, n, Effort.DEFAULT, trace(s.first(), n), trace(s.second(), n));
     }
 

@@ -28,9 +28,16 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
      * @param weightA the weight on diag(x^a), multiplicity included
      * @param weightB the weight on B
      * @param most an upper end of the block's share, by its traces
+     * @param allowance a width of the block's share that cannot be seen in the sum
      */
     record Block(
-            int order, int first, int second, WideDoubleDouble weightA, WideDoubleDouble weightB, WideDouble most) {}
+            int order,
+            int first,
+            int second,
+            WideDoubleDouble weightA,
+            WideDoubleDouble weightB,
+            WideDouble most,
+            WideDouble allowance) {}
 
     /** One operator in all blocks: log2 of the weight of block q, and the geometric spectrum in it. */
     private record Side(WideDoubleDouble[] weight, double[] log2Weight, double log2Ratio, double gap) {
@@ -113,7 +120,8 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             int second = b.columns(q, k, share);
             dropped = dropped.plusUp(power(a.tail(q, first, k))).plusUp(power(b.tail(q, second, k)));
             if (first > 0 && second > 0) {
-                blocks.add(new Block(k, first, second, a.weight()[q], b.weight()[q], power(most[q])));
+                blocks.add(new Block(
+                        k, first, second, a.weight()[q], b.weight()[q], power(most[q]), power(share)));
             }
         }
         blocks.sort(Comparator.comparingInt(Block::order));

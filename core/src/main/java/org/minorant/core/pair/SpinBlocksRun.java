@@ -8,10 +8,13 @@ import org.minorant.core.WideDouble;
 /** Evaluates the blocks of a plan: one thread walks through the orders and hands windows of overlaps to the others; the sum is taken in the order of the blocks. */
 final class SpinBlocksRun {
 
-    /** Weights beyond 2^±this would over- or underflow when squared. */
-    private static final long FAR = 505;
+    /** log2 of the heaviest weight; its square and the products of a few such weights stay in range. */
+    private static final long TOP = 450;
 
-    private static final double ROUNDING = 0x1p-50;
+    /** The relative error of a weight is below 4n · 2^-102, n at most 2^27 or so. */
+    private static final double ROUNDING = 0x1p-70;
+    /** A block this narrow needs no rotations. */
+    private static final double ENOUGH = 0x1p-45;
 
     private final QubitSpectra spectra;
     private final SpinBlocksPlan plan;
@@ -31,8 +34,6 @@ final class SpinBlocksRun {
         if (blocks.isEmpty()) {
             return Enclosure.ZERO;
         }
-        GeometricColumns x = new GeometricColumns(spectra.first().ratio(), plan.mostFirst());
-        GeometricColumns y = new GeometricColumns(spectra.second().ratio(), plan.mostSecond());
         SpinOverlaps overlaps = new SpinOverlaps(spectra.cos(), spectra.sin(), plan.mostFirst(), plan.mostSecond());
         AtomicLong done = new AtomicLong();
         List<Enclosure> parts = Parallel.inOrder(effort, blocks, block -> {
@@ -42,7 +43,7 @@ final class SpinBlocksRun {
             }
             SpinOverlaps.Window window = overlaps.window(block.first(), block.second());
             return stop -> {
-                Enclosure f = value(block, SpinBlock.columns(x, y, window), stop);
+                Enclosure f = value(block, window, stop);
                 effort.listener().onProgress(done.incrementAndGet(), blocks.size());
                 return f;
             };
@@ -54,31 +55,45 @@ final class SpinBlocksRun {
         return s;
     }
 
-    private Enclosure value(SpinBlocksPlan.Block block, ColumnPair columns, Runnable stop) {
-        WideDouble a = new BlockWeight(block.weightA()).wide();
-        WideDouble b = new BlockWeight(block.weightB()).wide();
-        long shift = Math.floorDiv(a.exponent() + b.exponent(), 2L);
-        WideDouble wa = a.timesPowerOfTwo(-shift);
-        WideDouble wb = b.timesPowerOfTwo(-shift);
-        // beyond the range the heavier weight is lowered: f is monotone, so this is a lower end
-        WideDouble most = WideDouble.of(1, FAR);
-        boolean far = wa.compareTo(most) > 0 || wb.compareTo(most) > 0;
-        WideDouble factor = far ? wa.min(wb).timesPowerOfTwo(FAR) : WideDouble.ONE;
-        double x = far ? edge(wa, wb) : wa.toDoubleDown();
-        double y = far ? edge(wb, wa) : wb.toDoubleDown();
-        if (!proven) {
-            WideDouble e = columns.estimate(x, y, stop).timesDown(factor).timesPowerOfTwo(shift);
-            return Enclosure.of(e, e);
+    private Enclosure value(SpinBlocksPlan.Block block, SpinOverlaps.Window window, Runnable stop) {
+        // one unit for both operators; the heavier one's first column is near the top of what squares without overflow
+        long shift = Math.max(block.weightA().exponent(), block.weightB().exponent()) - TOP;
+        GeometricColumns x =
+                new GeometricColumns(block.weightA(), spectra.first().ratio(), block.first(), shift);
+        GeometricColumns y =
+                new GeometricColumns(block.weightB(), spectra.second().ratio(), block.second(), shift);
+        if (x.held() == 0 || y.held() == 0) {
+            return Enclosure.of(WideDouble.ZERO, block.most());
         }
-        Enclosure f = columns.enclose(x, y, stop).times(Enclosure.of(1 - ROUNDING, 1 + ROUNDING));
-        WideDouble upper = far || f.upperWide().isInfinite()
-                ? block.most()
-                : f.upperWide().timesPowerOfTwo(shift).min(block.most());
-        WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesDown(factor).timesPowerOfTwo(shift);
-        return Enclosure.of(lower.min(upper), upper);
+        WideDouble leftOut = WideDouble.of(x.leftOut()).plusUp(WideDouble.of(y.leftOut()));
+        if (!DenseBlock.fits(block.order(), x, y)) {
+            return share(block, byRotations(SpinBlock.columns(x, y, window), stop), leftOut, shift);
+        }
+        Enclosure dense = share(block, DenseBlock.enclose(x, y, window, stop), leftOut, shift);
+        WideDouble width = dense.upperWide().plusUp(dense.lowerWide().negate());
+        if (width.compareTo(block.allowance()) <= 0
+                || dense.relativeWidth() <= Math.max(ENOUGH, effort.tolerance() / 4)) {
+            return dense;
+        }
+        Enclosure rotated = share(block, byRotations(SpinBlock.columns(x, y, window), stop), leftOut, shift);
+        return proven ? dense.intersect(rotated) : rotated;
     }
 
-    private static double edge(WideDouble own, WideDouble other) {
-        return Math.scalb(1.0, (int) (own.compareTo(other) > 0 ? FAR : -FAR));
+    private Enclosure byRotations(ColumnPair columns, Runnable stop) {
+        if (proven) {
+            return columns.enclose(1, 1, stop);
+        }
+        WideDouble e = columns.estimate(1, 1, stop);
+        return Enclosure.of(e, e);
+    }
+
+    /** The share of a block from its value in units of 2^shift; it is no more than the block's traces allow. */
+    private static Enclosure share(SpinBlocksPlan.Block block, Enclosure unit, WideDouble leftOut, long shift) {
+        Enclosure f = unit.times(Enclosure.of(1 - ROUNDING, 1 + ROUNDING));
+        WideDouble upper = f.upperWide().isInfinite()
+                ? block.most()
+                : f.upperWide().plusUp(leftOut).timesPowerOfTwo(shift).min(block.most());
+        WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesPowerOfTwo(shift);
+        return Enclosure.of(lower.min(upper), upper);
     }
 }

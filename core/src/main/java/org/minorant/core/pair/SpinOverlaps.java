@@ -76,7 +76,15 @@ final class SpinOverlaps {
      * @param low low words
      * @param radius radii of the entries
      */
-    record Window(double[][] high, double[][] low, double[][] radius) {}
+    record Window(double[][] high, double[][] low, double[][] radius) {
+
+        /** The first k rows and l columns. */
+        Window leading(int k, int l) {
+            return k == high.length && l == high[0].length
+                    ? this
+                    : new Window(copy(high, k, l), copy(low, k, l), copy(radius, k, l));
+        }
+    }
 
     /** The first k rows and l columns as they are now. */
     Window window(int k, int l) {

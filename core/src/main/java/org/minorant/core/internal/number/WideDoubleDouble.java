@@ -46,6 +46,12 @@ public record WideDoubleDouble(DoubleDouble significand, long exponent) {
         return of(significand.dividedBy(DoubleDouble.of(o)), exponent);
     }
 
+    /** The square root, with half the relative error and 2^-102 more. */
+    public WideDoubleDouble sqrt() {
+        long half = Math.floorDiv(exponent, 2L);
+        return of(significand.times(exponent - 2 * half == 1 ? 2 : 1).sqrt(), half);
+    }
+
     /** The n-th power, n ≥ 0. */
     public WideDoubleDouble power(int n) {
         WideDoubleDouble result = ONE;
