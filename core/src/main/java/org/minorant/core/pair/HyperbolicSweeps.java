@@ -50,6 +50,7 @@ final class HyperbolicSweeps {
     private final double[] norm;
     /** Roots of the norms: products of these do not underflow where products of the norms would. */
     private final double[] length;
+
     private double total;
     /** The largest normalised inner product met within one operator during the sweep. */
     private double overlap;

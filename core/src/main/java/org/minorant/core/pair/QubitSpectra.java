@@ -96,7 +96,8 @@ record QubitSpectra(Spectrum first, Spectrum second, DoubleDouble cos, DoubleDou
         BigDecimal turn = smaller.multiply(TWO).multiply(q.length());
         BigDecimal small = q.smallEigenvalue();
         if (turn.signum() > 0 && turn.compareTo(small.multiply(new BigDecimal(NO_DIRECTION))) < 0) {
-            // turning B by the angle 2φ changes it by 2 sin φ times its Bloch length at most, a relative error of that over its least eigenvalue
+            // turning B by the angle 2φ changes it by 2 sin φ times its Bloch length at most, a relative error of that
+            // over its least eigenvalue
             Spectrum turned = q.withRelative(NO_DIRECTION).spectrum();
             return acute
                     ? new QubitSpectra(p.spectrum(), turned, DoubleDouble.ONE, DoubleDouble.ZERO)

@@ -49,7 +49,8 @@ final class SpinBlocksPair extends PositivePair {
             DoubleDouble[] x = {s.first().large(), s.first().small()};
             DoubleDouble large = s.second().large();
             DoubleDouble small = s.second().small();
-            DoubleDouble[] y = s.sin().hi() == 0 ? new DoubleDouble[] {large, small} : new DoubleDouble[] {small, large};
+            DoubleDouble[] y =
+                    s.sin().hi() == 0 ? new DoubleDouble[] {large, small} : new DoubleDouble[] {small, large};
             double error = Math.max(s.first().relativeError(), s.second().relativeError()) + 0x1p-100;
             return CommutingCopies.of(x, y, error, n);
         }

@@ -120,8 +120,7 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             int second = b.columns(q, k, share);
             dropped = dropped.plusUp(power(a.tail(q, first, k))).plusUp(power(b.tail(q, second, k)));
             if (first > 0 && second > 0) {
-                blocks.add(new Block(
-                        k, first, second, a.weight()[q], b.weight()[q], power(most[q]), power(share)));
+                blocks.add(new Block(k, first, second, a.weight()[q], b.weight()[q], power(most[q]), power(share)));
             }
         }
         blocks.sort(Comparator.comparingInt(Block::order));
