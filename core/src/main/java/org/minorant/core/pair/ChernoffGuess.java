@@ -15,6 +15,15 @@ final class ChernoffGuess {
     private ChernoffGuess() {}
 
     static double log2(QubitSpectra q, int n, WideDouble wa, WideDouble wb) {
+        double c2 = q.cos().hi() * q.cos().hi();
+        double s2 = q.sin().hi() * q.sin().hi();
+        double[] a = {q.first().large().hi(), q.first().small().hi()};
+        double[] b = {q.second().large().hi(), q.second().small().hi()};
+        return log2(a, b, new double[][] {{c2, s2}, {s2, c2}}, n, wa, wb);
+    }
+
+    /** The guess from two spectra and the squared moduli of the overlaps between their eigenvectors. */
+    static double log2(double[] a, double[] b, double[][] squares, int n, WideDouble wa, WideDouble wb) {
         double la = log2(wa);
         double lb = log2(wb);
         double low = 1e-6;
@@ -22,13 +31,13 @@ final class ChernoffGuess {
         for (int i = 0; i < STEPS; i++) {
             double x = high - GOLDEN * (high - low);
             double y = low + GOLDEN * (high - low);
-            if (at(q, n, la, lb, x) <= at(q, n, la, lb, y)) {
+            if (at(a, b, squares, n, la, lb, x) <= at(a, b, squares, n, la, lb, y)) {
                 high = y;
             } else {
                 low = x;
             }
         }
-        double bound = at(q, n, la, lb, (low + high) / 2);
+        double bound = at(a, b, squares, n, la, lb, (low + high) / 2);
         return Math.max(-1e9, Math.min(bound, Math.min(la, lb))) - Math.log(n) / LN2 - 3;
     }
 
@@ -36,14 +45,13 @@ final class ChernoffGuess {
         return x.exponent() + Math.log(x.significand()) / LN2;
     }
 
-    private static double at(QubitSpectra q, int n, double la, double lb, double s) {
-        double c2 = q.cos().hi() * q.cos().hi();
-        double s2 = q.sin().hi() * q.sin().hi();
-        double a1 = Math.pow(q.first().large().hi(), s);
-        double a2 = Math.pow(q.first().small().hi(), s);
-        double b1 = Math.pow(q.second().large().hi(), 1 - s);
-        double b2 = Math.pow(q.second().small().hi(), 1 - s);
-        double trace = c2 * (a1 * b1 + a2 * b2) + s2 * (a1 * b2 + a2 * b1);
+    private static double at(double[] a, double[] b, double[][] squares, int n, double la, double lb, double s) {
+        double trace = 0;
+        for (int i = 0; i < a.length; i++) {
+            for (int j = 0; j < b.length; j++) {
+                trace += Math.pow(a[i], s) * Math.pow(b[j], 1 - s) * squares[i][j];
+            }
+        }
         return s * la + (1 - s) * lb + n * Math.log(trace) / LN2;
     }
 }

@@ -15,5 +15,7 @@ public enum PairKind {
     /** Copies of two commuting operators: a sum over types, that is over the counts of each eigenvalue. */
     TYPES,
     /** Copies of two qubit operators: blocks of total spin, each as {@link #FACTORED}. */
-    SPIN_BLOCKS
+    SPIN_BLOCKS,
+    /** Copies of two operators of dimension three or more: irreducible blocks of the general linear group, each as {@link #FACTORED}. */
+    UNITARY_BLOCKS
 }

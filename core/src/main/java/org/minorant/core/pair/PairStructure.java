@@ -5,7 +5,6 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalInt;
 import org.minorant.core.EnclosedMatrix;
-import org.minorant.core.InvalidInputException;
 import org.minorant.core.PositiveFactor;
 import org.minorant.core.PositiveOperator;
 
@@ -49,11 +48,7 @@ final class PairStructure {
         if (a.dimension() == 2) {
             return SpinBlocksPair.of(a, b, n);
         }
-        throw new InvalidInputException(
-                "PositivePair.copies",
-                "mixed operators of dimension " + a.dimension() + " that do not commute",
-                "dimension 2, or one operator a ket",
-                "compress them to a common support of dimension 2 if they have one");
+        return UnitaryBlocksPair.of(a, b, n);
     }
 
     private static boolean isKet(PositiveOperator a) {

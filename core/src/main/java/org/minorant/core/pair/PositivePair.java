@@ -32,7 +32,8 @@ public abstract sealed class PositivePair
                 FactorPair,
                 RankOneCopies,
                 RankOnePair,
-                SpinBlocksPair {
+                SpinBlocksPair,
+                UnitaryBlocksPair {
 
     /** For the kinds in this package. */
     PositivePair() {}

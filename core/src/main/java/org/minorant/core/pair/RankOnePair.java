@@ -76,7 +76,7 @@ final class RankOnePair extends PositivePair {
                 b.traceEnclosure(),
                 swapped,
                 diagonal ? Refinement.NONE : refinement,
-                n -> RankOneCopies.of(rankOne, b, swapped, n).orElseThrow(() -> illConditioned(n)));
+                n -> swapped ? PairStructure.power(b, rankOne, n) : PairStructure.power(rankOne, b, n));
     }
 
     /** The pair of a vector and an operator of which only the spectral measure is given, exactly. */
@@ -116,14 +116,6 @@ final class RankOnePair extends PositivePair {
                 false,
                 Refinement.NONE,
                 n -> RankOneCopies.of(spectral, w.size(), other, RankOneCopies.Errors.NONE, false, n));
-    }
-
-    private static InvalidInputException illConditioned(int n) {
-        return new InvalidInputException(
-                "PositivePair.copies",
-                n + " copies of an operator with nonzero eigenvalues over more than ten decades",
-                "at most ten decades where it is not diagonal",
-                "give the pair in the operator's eigenbasis, or its spectral measure");
     }
 
     private static Measure exact(PositiveOperator rankOne, PositiveOperator b) {

@@ -43,7 +43,10 @@ final class SpinBlocksPair extends PositivePair {
 
     /** n copies of two qubit operators; by types if they commute. */
     static PositivePair of(PositiveOperator a, PositiveOperator b, int n) {
-        QubitSpectra s = QubitSpectra.of(a, b);
+        return of(QubitSpectra.of(a, b), n);
+    }
+
+    static PositivePair of(QubitSpectra s, int n) {
         boolean commute = s.sin().hi() == 0 || s.cos().hi() == 0;
         if (commute && s.first().traceError() == 0 && s.second().traceError() == 0) {
             DoubleDouble[] x = {s.first().large(), s.first().small()};

@@ -5,7 +5,7 @@ package org.minorant.core.internal.kernel;
  *
  * <p>The rotations of one sweep act on neighbouring columns of the vectors; these are held as rows, so that each rotation is a
  * vectorised loop. An off-diagonal entry is dropped once it is below a unit in the last place of its neighbours, or 2^-70 of a matrix of
- * order one.
+ * order one. Strongly graded matrices can turn noise far below 2^-53 about without end: where a value has not converged after 120 sweeps, entries below 2^-53 are dropped, which is the error of the iteration anyway.
  *
  * <p>Source: Bowdler, Martin, Reinsch and Wilkinson, Numer. Math. 11, 293 (1968), from memory.
  */
@@ -13,7 +13,8 @@ final class TridiagonalQl {
 
     private static final double EPS = 0x1p-53;
     private static final double NOTHING = 0x1p-70;
-    private static final int MOST_SWEEPS = 60;
+    private static final int PATIENT_SWEEPS = 60;
+    private static final int MOST_SWEEPS = 2 * PATIENT_SWEEPS;
 
     private final double[] d;
     private final double[] e;
@@ -36,13 +37,13 @@ final class TridiagonalQl {
      * @param e the subdiagonal, as long as d, its last entry unused; destroyed
      * @param z the transposed vectors so far, one row each (the identity for vectors of the matrix itself); becomes those of the
      *     eigenvalues; no rows if only values are wanted
-     * @throws ArithmeticException if an eigenvalue has not converged after 60 sweeps
+     * @throws ArithmeticException if an eigenvalue has not converged after 120 sweeps
      */
     static void diagonalise(double[] d, double[] e, double[][] z) {
         TridiagonalQl q = new TridiagonalQl(d, e, z);
         for (int l = 0; l < d.length; l++) {
             int sweeps = 0;
-            for (int m = q.end(l); m != l; m = q.end(l)) {
+            for (int m = q.end(l, NOTHING); m != l; m = q.end(l, sweeps < PATIENT_SWEEPS ? NOTHING : EPS)) {
                 if (++sweeps > MOST_SWEEPS) {
                     throw new ArithmeticException("the eigenvalue iteration did not converge at dimension " + d.length
                             + ": value " + l + " after " + MOST_SWEEPS + " sweeps");
@@ -53,10 +54,10 @@ final class TridiagonalQl {
     }
 
     /** The end of the unreduced block that starts at l. */
-    private int end(int l) {
+    private int end(int l, double nothing) {
         int m = l;
         while (m < d.length - 1) {
-            double small = Math.max(EPS * (Math.abs(d[m]) + Math.abs(d[m + 1])), NOTHING);
+            double small = Math.max(EPS * (Math.abs(d[m]) + Math.abs(d[m + 1])), nothing);
             // a NaN must not end the search as if it were small
             if (Math.abs(e[m]) <= small) {
                 break;
