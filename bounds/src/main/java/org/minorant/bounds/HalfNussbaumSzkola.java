@@ -37,7 +37,7 @@ final class HalfNussbaumSzkola implements TestingBound {
         }
         try {
             return Optional.of(PairLetters.of(problem.spectra())
-                    .traceMinimum(problem.copies(), problem.prior(), problem.otherPrior())
+                    .traceMinimum(problem.copies(), Enclosure.exact(problem.prior()), problem.otherPrior())
                     .times(0.5));
         } catch (InvalidInputException tooManyTypes) {
             return Optional.empty();

@@ -95,6 +95,11 @@ public final class HypothesisPair {
         return new HypothesisPair(curve, Optional.empty(), Optional.empty(), Effort.DEFAULT);
     }
 
+    /** The pair of two operators whose traces may be a little off one, for enclosures from both sides. */
+    static HypothesisPair ofAnyCurve(PositivePair curve) {
+        return new HypothesisPair(curve, Optional.empty(), Optional.empty(), Effort.DEFAULT);
+    }
+
     /**
      * Returns the pair of n copies: the system is n times in the first state, or n times in the second, ρ^⊗n against σ^⊗n. Its curve is exact, in whatever form
      * the structure of one copy allows ({@link PositivePair#copies}); a matrix of dimension d^n is never formed, so explicit tests cannot be asked for.
