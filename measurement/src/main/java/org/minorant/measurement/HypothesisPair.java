@@ -19,6 +19,7 @@ import org.minorant.core.curve.SupportLines;
 import org.minorant.core.curve.Supremum;
 import org.minorant.core.pair.Effort;
 import org.minorant.core.pair.PositivePair;
+import org.minorant.core.pair.Work;
 import org.minorant.core.pair.WorkListener;
 
 /**
@@ -235,6 +236,30 @@ public final class HypothesisPair {
         Enclosure value = curve.traceMinimum(prior, rest);
         // Tr[pρ ∧ (1+x)qσ] lies between (1 ∓ |x|) times Tr[pρ ∧ qσ]: it does not decrease, and is at most homogeneous
         return lost == 0 ? value : value.times(Enclosure.ONE.widen(Math.abs(lost) / rest * (1 + 0x1p-50)));
+    }
+
+    /**
+     * Returns the test that attains the minimum error as a source of simulated outcomes, block by block for many copies.
+     *
+     * @param prior p, the prior of the first state, strictly between 0 and 1
+     * @return the test
+     * @throws InvalidInputException if the prior is not strictly between 0 and 1
+     */
+    public CollectiveTest collectiveTest(double prior) {
+        Checks.inRange("HypothesisPair.collectiveTest", "the prior", prior, Double.MIN_NORMAL, Math.nextDown(1.0));
+        return new CollectiveTest(curve.blockTests(WideDouble.of(prior), WideDouble.of(1 - prior)));
+    }
+
+    /**
+     * Returns how much work the minimum error is, before it is done.
+     *
+     * @param prior p, the prior of the first state, strictly between 0 and 1
+     * @return the number of blocks, the largest rank and the memory
+     * @throws InvalidInputException if the prior is not strictly between 0 and 1
+     */
+    public Work work(double prior) {
+        Checks.inRange("HypothesisPair.work", "the prior", prior, Double.MIN_NORMAL, Math.nextDown(1.0));
+        return curve.work(WideDouble.of(prior), WideDouble.of(1 - prior));
     }
 
     /**

@@ -4,12 +4,15 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.util.SplittableRandom;
 import java.util.concurrent.CancellationException;
 import java.util.concurrent.atomic.AtomicLong;
 import org.junit.jupiter.api.Test;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
+import org.minorant.core.pair.BlockTest;
+import org.minorant.core.pair.Work;
 import org.minorant.core.pair.WorkListener;
 
 class CopiesTest {
@@ -110,5 +113,55 @@ class CopiesTest {
         assertTrue(fine.relativeWidth() <= 1e-12, () -> "" + fine.relativeWidth());
         assertTrue(rough.upperWide().compareTo(fine.lowerWide()) >= 0);
         assertTrue(rough.lowerWide().compareTo(fine.upperWide()) <= 0);
+    }
+
+    /** Frequencies of 20 000 draws lie within five standard deviations of the certified error. */
+    @Test
+    void simulatedErrorsAreThoseOfTheOptimalTest() {
+        HypothesisPair many = PAIR.copies(12);
+        CollectiveTest test = many.collectiveTest(0.3);
+        SplittableRandom random = new SplittableRandom(5);
+        int draws = 20_000;
+        int missed = 0;
+        int wrong = 0;
+        for (int i = 0; i < draws; i++) {
+            missed += test.draw(CollectiveTest.Truth.FIRST, random).answer() == CollectiveTest.Truth.SECOND ? 1 : 0;
+            wrong += test.draw(CollectiveTest.Truth.SECOND, random).answer() == CollectiveTest.Truth.FIRST ? 1 : 0;
+        }
+        double error = (0.3 * missed + 0.7 * wrong) / draws;
+        double exact = many.minimumError(0.3).midpoint();
+        assertEquals(exact, error, 5 * Math.sqrt(exact / draws));
+    }
+
+    @Test
+    void theTestOfManyCopiesHasTheMinimumErrorBlockByBlock() {
+        HypothesisPair many = PAIR.copies(50);
+        double sum = 0;
+        double first = 0;
+        for (BlockTest b : many.collectiveTest(0.5).blocks()) {
+            first += b.firstTrace().toDoubleDown();
+            sum += 0.5 * b.firstTrace().toDoubleDown() * (1 - b.firstAccepted());
+            sum += 0.5 * b.secondTrace().toDoubleDown() * b.secondAccepted();
+        }
+        double exact = many.minimumError(0.5).midpoint();
+        assertEquals(1, first, 1e-12);
+        assertEquals(exact, sum, 1e-7 * exact);
+    }
+
+    @Test
+    void oneCopyIsOneBlock() {
+        assertEquals(1, PAIR.collectiveTest(0.5).blocks().size());
+        BlockTest b = PAIR.collectiveTest(0.5).blocks().get(0);
+        assertEquals(PAIR.helstromTest(0.5).typeOneError().midpoint(), 1 - b.firstAccepted(), 1e-7);
+        assertEquals(PAIR.helstromTest(0.5).typeTwoError().midpoint(), b.secondAccepted(), 1e-7);
+    }
+
+    @Test
+    void workIsKnownBefore() {
+        Work w = PAIR.copies(1000).work(0.5);
+        assertTrue(w.parts() > 50 && w.parts() < 501, () -> "" + w);
+        assertTrue(w.largestRank() > 50 && w.largestRank() < 400, () -> "" + w);
+        assertTrue(w.bytes() < 1L << 30, () -> "" + w);
+        assertEquals(1, PAIR.work(0.5).parts());
     }
 }

@@ -223,6 +223,45 @@ public abstract sealed class PositivePair
         return this;
     }
 
+    /**
+     * Returns how much work Tr[aA ∧ bB] is, without doing it.
+     *
+     * @param a the weight on A, at least 0 and finite
+     * @param b the weight on B, at least 0 and finite
+     * @return the parts, the largest rank and the memory; one part and no memory to speak of, except for many copies
+     */
+    public Work work(WideDouble a, WideDouble b) {
+        return new Work(1, 0, 0);
+    }
+
+    /**
+     * Returns what the optimal test between aA and bB does, block by block where the pair is made of many copies: enough to simulate its outcomes. Probabilities are estimates, to about 1e-8.
+     *
+     * @param a the weight on A, above 0 and finite
+     * @param b the weight on B, above 0 and finite
+     * @return one entry for each block; a single one for other pairs
+     * @throws InvalidInputException if a weight is not positive and finite
+     */
+    public List<BlockTest> blockTests(WideDouble a, WideDouble b) {
+        if (a.signum() <= 0 || b.signum() <= 0 || a.isInfinite() || b.isInfinite()) {
+            throw new InvalidInputException(
+                    "PositivePair.blockTests",
+                    "the weights are " + a + " and " + b,
+                    "above 0 and finite",
+                    "give weights in that range");
+        }
+        WideDouble first = firstTrace().lowerWide();
+        WideDouble second = secondTrace().lowerWide();
+        WideDouble[] f = {
+            traceMinimumEstimate(a.timesDown(WideDouble.of(1 - BlockTest.STEP)), b)
+                    .wide(),
+            traceMinimumEstimate(a, b).wide(),
+            traceMinimumEstimate(a.timesDown(WideDouble.of(1 + BlockTest.STEP)), b)
+                    .wide()
+        };
+        return List.of(BlockTest.fromSlope(0, first, second, f, first.timesDown(a), second.timesDown(b)));
+    }
+
     /** Tr[aA ∧ bB] for positive finite weights; ends below 0 or above the traces are cut by the caller. */
     abstract Enclosure value(WideDouble a, WideDouble b);
 

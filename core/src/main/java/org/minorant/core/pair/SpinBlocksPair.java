@@ -1,5 +1,8 @@
 package org.minorant.core.pair;
 
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
 import org.minorant.core.PositiveOperator;
@@ -90,6 +93,49 @@ final class SpinBlocksPair extends PositivePair {
     @Override
     public boolean hasCheapEstimate() {
         return true;
+    }
+
+    @Override
+    public Work work(WideDouble a, WideDouble b) {
+        return plan(a, b).work();
+    }
+
+    private SpinBlocksPlan plan(WideDouble a, WideDouble b) {
+        return SpinBlocksPlan.of(spectra, n, a, b, ChernoffGuess.log2(spectra, n, a, b), effort.tolerance());
+    }
+
+    @Override
+    public List<BlockTest> blockTests(WideDouble a, WideDouble b) {
+        if (a.signum() <= 0 || b.signum() <= 0 || a.isInfinite() || b.isInfinite()) {
+            return super.blockTests(a, b);
+        }
+        SpinBlocksPlan plan = plan(a, b);
+        Map<Integer, WideDouble[]> values = new HashMap<>();
+        for (int i = 0; i < 3; i++) {
+            double factor = 1 + (i - 1) * BlockTest.STEP;
+            List<SpinBlocksPlan.Block> changed =
+                    plan.blocks().stream().map(x -> x.withFirst(factor)).toList();
+            List<Enclosure> shares =
+                    new SpinBlocksRun(spectra, new SpinBlocksPlan(changed, plan.dropped()), effort, false).shares();
+            for (int j = 0; j < changed.size(); j++) {
+                values.computeIfAbsent(changed.get(j).order(), k -> new WideDouble[3])[i] =
+                        shares.get(j).lowerWide();
+            }
+        }
+        return SpinBlocksPlan.traces(spectra, n).stream()
+                .map(t -> blockTest(t, values.get(t.order()), a, b))
+                .toList();
+    }
+
+    private static BlockTest blockTest(SpinBlocksPlan.Traces t, WideDouble[] f, WideDouble a, WideDouble b) {
+        WideDouble x = t.first().timesDown(a);
+        WideDouble y = t.second().timesDown(b);
+        if (f != null) {
+            return BlockTest.fromSlope(t.order(), t.first(), t.second(), f, x, y);
+        }
+        // too light to be planned for: whichever is heavier is accepted
+        double accepted = x.compareTo(y) >= 0 ? 1 : 0;
+        return new BlockTest(t.order(), t.first(), t.second(), accepted, accepted);
     }
 
     private Enclosure run(WideDouble wa, WideDouble wb, boolean proven) {

@@ -37,7 +37,13 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             WideDoubleDouble weightA,
             WideDoubleDouble weightB,
             WideDouble most,
-            WideDouble allowance) {}
+            WideDouble allowance) {
+
+        /** The same with the weight on A changed by a factor near one. */
+        Block withFirst(double factor) {
+            return new Block(order, first, second, weightA.times(factor), weightB, most, allowance);
+        }
+    }
 
     /** One operator in all blocks: log2 of the weight of block q, and the geometric spectrum in it. */
     private record Side(WideDoubleDouble[] weight, double[] log2Weight, double log2Ratio, double gap) {
@@ -69,6 +75,14 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             }
             double terms = Math.min(k + 1.0 - i, 1 / gap);
             return log2Weight[q] + (i == 0 ? 0 : i * log2Ratio) + Math.log(terms) / LN2;
+        }
+
+        /** The trace in block q, nearly: w(1 − r^(k+1))/(1 − r). */
+        WideDouble trace(int q, int k) {
+            double last = Math.exp((k + 1) * log2Ratio * LN2);
+            double sum = gap * (k + 1) < 1e-6 ? k + 1 : (1 - last) / gap;
+            WideDoubleDouble t = weight[q].times(sum);
+            return WideDouble.of(t.significand().hi(), t.exponent());
         }
 
         /** How many columns leave a tail of at most 2^budget. */
@@ -127,6 +141,28 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         return new SpinBlocksPlan(List.copyOf(blocks), dropped);
     }
 
+    /**
+     * The traces of both operators in a block, multiplicity included, nearly.
+     *
+     * @param order k
+     * @param first that of A
+     * @param second that of B
+     */
+    record Traces(int order, WideDouble first, WideDouble second) {}
+
+    /** The traces in all blocks, from the largest order down. */
+    static List<Traces> traces(QubitSpectra s, int n) {
+        WideDoubleDouble[] multiplicity = multiplicities(n);
+        Side a = Side.of(s.first(), n, WideDouble.ONE, multiplicity);
+        Side b = Side.of(s.second(), n, WideDouble.ONE, multiplicity);
+        List<Traces> all = new ArrayList<>();
+        for (int q = 0; q < multiplicity.length; q++) {
+            int k = n - 2 * q;
+            all.add(new Traces(k, a.trace(q, k), b.trace(q, k)));
+        }
+        return all;
+    }
+
     /** An upper end of 2^x. */
     private static WideDouble power(double x) {
         if (x == Double.NEGATIVE_INFINITY) {
@@ -148,6 +184,17 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
             m[q] = binomial.times(n - 2 * q + 1.0).dividedBy(n - q + 1.0);
         }
         return m;
+    }
+
+    /** What evaluating this plan takes: the windows that are waiting or being walked through, and about 40 matrices of enclosures on every thread. */
+    Work work() {
+        int threads = Math.min(Runtime.getRuntime().availableProcessors(), Math.max(1, blocks.size()));
+        long window = 3L * Double.BYTES * mostFirst() * mostSecond();
+        long rank = blocks.stream()
+                .mapToLong(b -> b.first() + (long) b.second())
+                .max()
+                .orElse(0);
+        return new Work(blocks.size(), (int) rank, (2L + 2L * threads) * window + 40L * threads * 24 * rank * rank / 4);
     }
 
     /** The most columns of A that any block keeps. */

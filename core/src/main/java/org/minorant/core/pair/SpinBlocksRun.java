@@ -30,13 +30,23 @@ final class SpinBlocksRun {
 
     /** The sum over the blocks, without what the plan drops. */
     Enclosure sum() {
+        Enclosure s = Enclosure.ZERO;
+        for (Enclosure part : shares()) {
+            s = s.plus(part);
+        }
+        return s;
+    }
+
+    /** The share of every block of the plan. */
+    List<Enclosure> shares() {
         List<SpinBlocksPlan.Block> blocks = plan.blocks();
         if (blocks.isEmpty()) {
-            return Enclosure.ZERO;
+            return List.of();
         }
+        plan.work().requireRoom();
         SpinOverlaps overlaps = new SpinOverlaps(spectra.cos(), spectra.sin(), plan.mostFirst(), plan.mostSecond());
         AtomicLong done = new AtomicLong();
-        List<Enclosure> parts = Parallel.inOrder(effort, blocks, block -> {
+        return Parallel.inOrder(effort, blocks, block -> {
             while (overlaps.order() < block.order()) {
                 overlaps.step();
                 effort.checkpoint();
@@ -48,11 +58,6 @@ final class SpinBlocksRun {
                 return f;
             };
         });
-        Enclosure s = Enclosure.ZERO;
-        for (Enclosure part : parts) {
-            s = s.plus(part);
-        }
-        return s;
     }
 
     private Enclosure value(SpinBlocksPlan.Block block, SpinOverlaps.Window window, Runnable stop) {
