@@ -120,6 +120,21 @@ public final class HypothesisPair {
     }
 
     /**
+     * Returns the pair of products of powers: n₁ copies of the first pair's qubits together with n₂ of the second's, and so on, all in their first states or all in their second states.
+     *
+     * @param pairs pairs of qubit states, one copy each
+     * @param copies n₁, n₂, …, as many, each at least 1
+     * @return the pair ρ₁^⊗n₁ ⊗ ρ₂^⊗n₂ ⊗ … against σ₁^⊗n₁ ⊗ σ₂^⊗n₂ ⊗ …
+     * @throws InvalidInputException if the numbers do not match or are below 1, a pair has no states of dimension 2, or there are too many products of blocks
+     */
+    public static HypothesisPair ofProducts(List<HypothesisPair> pairs, int... copies) {
+        return ofCurve(PositivePair.ofPowers(
+                pairs.stream().map(HypothesisPair::first).toList(),
+                pairs.stream().map(HypothesisPair::second).toList(),
+                copies));
+    }
+
+    /**
      * Returns the number of copies.
      *
      * @return n, 1 for a pair that was not made by {@link #copies}

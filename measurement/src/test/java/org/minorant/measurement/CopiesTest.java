@@ -4,6 +4,7 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.util.List;
 import java.util.SplittableRandom;
 import java.util.concurrent.CancellationException;
 import java.util.concurrent.atomic.AtomicLong;
@@ -163,5 +164,15 @@ class CopiesTest {
         assertTrue(w.largestRank() > 50 && w.largestRank() < 400, () -> "" + w);
         assertTrue(w.bytes() < 1L << 30, () -> "" + w);
         assertEquals(1, PAIR.work(0.5).parts());
+    }
+
+    @Test
+    void productsOfPowers() {
+        HypothesisPair other =
+                HypothesisPair.of(DensityOperator.ofBloch(0.3, 0, 0), DensityOperator.ofBloch(0, 0.8, 0));
+        Enclosure mixed = HypothesisPair.ofProducts(List.of(PAIR, other), 3, 2).minimumError(0.5);
+        // more copies tell more
+        assertTrue(mixed.isCertainlyBelow(PAIR.copies(3).minimumError(0.5)));
+        assertTrue(mixed.isCertainlyBelow(other.copies(2).minimumError(0.5)));
     }
 }

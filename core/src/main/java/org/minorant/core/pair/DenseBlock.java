@@ -19,19 +19,19 @@ final class DenseBlock {
 
     private DenseBlock() {}
 
-    /** Whether one of the two operators is held whole in the block of this order. */
-    static boolean fits(int order, GeometricColumns x, GeometricColumns y) {
-        return x.held() == order + 1 || y.held() == order + 1;
+    /** Whether one of the two operators is held whole in a block of this dimension. */
+    static boolean fits(int dimension, ColumnWeights x, ColumnWeights y) {
+        return x.held() == dimension || y.held() == dimension;
     }
 
     /** Encloses Tr[A ∧ B] in the units of the weights. */
-    static Enclosure enclose(GeometricColumns x, GeometricColumns y, SpinOverlaps.Window window, Runnable checkpoint) {
+    static Enclosure enclose(ColumnWeights x, ColumnWeights y, SpinOverlaps.Window window, Runnable checkpoint) {
         SpinOverlaps.Window c = window.leading(x.held(), y.held());
         int k = c.high().length;
         int l = c.high()[0].length;
         boolean whole = k >= l;
-        GeometricColumns diagonal = whole ? x : y;
-        GeometricColumns other = whole ? y : x;
+        ColumnWeights diagonal = whole ? x : y;
+        ColumnWeights other = whole ? y : x;
         double[][] vh = whole ? c.high() : transposed(c.high());
         double[][] vl = whole ? c.low() : transposed(c.low());
         int d = Math.max(k, l);

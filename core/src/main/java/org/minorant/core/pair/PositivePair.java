@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.ArrayList;
 import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
@@ -33,6 +34,7 @@ public abstract sealed class PositivePair
                 RankOneCopies,
                 RankOnePair,
                 SpinBlocksPair,
+                SpinProductsPair,
                 UnitaryBlocksPair {
 
     /** For the kinds in this package. */
@@ -67,6 +69,40 @@ public abstract sealed class PositivePair
      */
     public static PositivePair directSum(List<? extends PositivePair> pairs, double[] weights) {
         return DirectSumPair.of(pairs, weights);
+    }
+
+    /**
+     * Returns the pair A₁^⊗n₁ ⊗ A₂^⊗n₂ ⊗ … against B₁^⊗n₁ ⊗ B₂^⊗n₂ ⊗ … of qubit operators: n₁ copies of one pair with n₂ of another, and so on. The order of the factors makes no difference.
+     *
+     * @param first A₁, A₂, …, each of dimension 2
+     * @param second B₁, B₂, …, as many
+     * @param copies n₁, n₂, …, as many, each at least 1
+     * @return the pair
+     * @throws InvalidInputException if the lists differ in length or are empty, a dimension is not 2, a number is below 1, or there are too many products of blocks
+     */
+    public static PositivePair ofPowers(
+            List<? extends PositiveOperator> first, List<? extends PositiveOperator> second, int... copies) {
+        String asked = "PositivePair.ofPowers";
+        if (first.isEmpty() || first.size() != second.size() || first.size() != copies.length) {
+            throw new InvalidInputException(
+                    asked,
+                    first.size() + " and " + second.size() + " operators with " + copies.length + " numbers of copies",
+                    "as many of each, at least 1",
+                    "give two operators and a number of copies for every factor");
+        }
+        List<QubitPower> powers = new ArrayList<>();
+        for (int i = 0; i < copies.length; i++) {
+            if (first.get(i).dimension() != 2 || second.get(i).dimension() != 2 || copies[i] < 1) {
+                throw new InvalidInputException(
+                        asked,
+                        "factor " + i + " has dimensions " + first.get(i).dimension() + " and "
+                                + second.get(i).dimension() + " and " + copies[i] + " copies",
+                        "dimension 2 and at least 1 copy",
+                        "products of powers are for qubits");
+            }
+            powers.add(new QubitPower(QubitSpectra.of(first.get(i), second.get(i)), copies[i]));
+        }
+        return SpinProductsPair.of(powers);
     }
 
     /**

@@ -24,7 +24,7 @@ final class SpinBlock {
      * @param y the weights of B
      * @param window overlaps: a row for each column of A, a column for each of B, or more
      */
-    static ColumnPair columns(GeometricColumns x, GeometricColumns y, SpinOverlaps.Window window) {
+    static ColumnPair columns(ColumnWeights x, ColumnWeights y, SpinOverlaps.Window window) {
         int k = x.held();
         int l = y.held();
         SpinOverlaps.Window c = window.leading(k, l);
@@ -46,7 +46,7 @@ final class SpinBlock {
         return new ColumnPair(axes(x, k, l), guides(y, ch, cl, k, l), x.gram(k), y.gram(l), cross.build());
     }
 
-    private static EnclosedMatrix axes(GeometricColumns x, int k, int l) {
+    private static EnclosedMatrix axes(ColumnWeights x, int k, int l) {
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, k);
         for (int a = 0; a < k; a++) {
             m.set(a, a, x.root(a).hi(), 0, 0, 0, 0);
@@ -54,7 +54,7 @@ final class SpinBlock {
         return m.build();
     }
 
-    private static EnclosedMatrix guides(GeometricColumns y, double[][] ch, double[][] cl, int k, int l) {
+    private static EnclosedMatrix guides(ColumnWeights y, double[][] ch, double[][] cl, int k, int l) {
         double[][] r = triangle(ch, cl, l);
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, l);
         for (int b = 0; b < l; b++) {

@@ -8,7 +8,6 @@ import org.minorant.core.Estimate;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
-import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
  * n copies of two positive operators on a qubit, through the blocks of total spin:
@@ -26,9 +25,6 @@ import org.minorant.core.internal.number.WideDoubleDouble;
  * <p>The decomposition is that of addition of angular momenta (Schur and Weyl); for pairs of qubit states see K. M. R. Audenaert et al., Commun. Math. Phys. 279, 251 (2008), from memory.
  */
 final class SpinBlocksPair extends PositivePair {
-
-    private static final double WEIGHT_ERROR = 0x1p-50;
-    private static final int MOST_ROUNDS = 5;
 
     private final QubitSpectra spectra;
     private final int n;
@@ -60,13 +56,8 @@ final class SpinBlocksPair extends PositivePair {
             double error = Math.max(s.first().relativeError(), s.second().relativeError()) + 0x1p-100;
             return CommutingCopies.of(x, y, error, n);
         }
-        return new SpinBlocksPair(s, n, Effort.DEFAULT, trace(s.first(), n), trace(s.second(), n));
-    }
-
-    private static Enclosure trace(QubitSpectra.Spectrum s, int n) {
-        WideDoubleDouble t = WideDoubleDouble.of(s.large().plus(s.small())).power(n);
-        Enclosure power = new BlockWeight(t).enclosure();
-        return errors(s, n).apply(power, power).max(Enclosure.ZERO);
+        return new SpinBlocksPair(
+                s, n, Effort.DEFAULT, CopiedErrors.trace(s.first(), n), CopiedErrors.trace(s.second(), n));
     }
 
     @Override
@@ -77,8 +68,8 @@ final class SpinBlocksPair extends PositivePair {
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
         Enclosure f = run(wa, wb, true);
-        Enclosure x = errors(spectra.first(), n).apply(f, traceA.times(Enclosure.of(wa, wa)));
-        return errors(spectra.second(), n).apply(x, traceB.times(Enclosure.of(wb, wb)));
+        Enclosure x = CopiedErrors.of(spectra.first(), n).apply(f, traceA.times(Enclosure.of(wa, wa)));
+        return CopiedErrors.of(spectra.second(), n).apply(x, traceB.times(Enclosure.of(wb, wb)));
     }
 
     @Override
@@ -139,52 +130,11 @@ final class SpinBlocksPair extends PositivePair {
     }
 
     private Enclosure run(WideDouble wa, WideDouble wb, boolean proven) {
-        double log2Guess = ChernoffGuess.log2(spectra, n, wa, wb);
-        Enclosure best = Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);
-        for (int round = 0; round < MOST_ROUNDS; round++) {
-            SpinBlocksPlan plan = SpinBlocksPlan.of(spectra, n, wa, wb, log2Guess, effort.tolerance());
-            SpinBlocksRun run = new SpinBlocksRun(spectra, plan, effort, proven);
-            Enclosure kept = run.sum();
-            Enclosure all = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(plan.dropped()));
-            best = best.intersect(all);
-            double seen = log2(kept.lowerWide());
-            boolean fine =
-                    plan.dropped().compareTo(kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 2))) <= 0;
-            if (fine || seen >= log2Guess || seen == Double.NEGATIVE_INFINITY && round > 1) {
-                return best;
-            }
-            log2Guess = seen == Double.NEGATIVE_INFINITY ? log2Guess * 1.5 - 60 : seen - 0.5;
-        }
-        return best;
-    }
-
-    private static double log2(WideDouble x) {
-        return x.signum() <= 0 ? Double.NEGATIVE_INFINITY : x.exponent() + Math.log(x.significand()) / Math.log(2);
-    }
-
-    /** What the errors of one operator's data do to f at n copies. */
-    private record CopiedErrors(double relative, double absolute) {
-
-        Enclosure apply(Enclosure f, Enclosure weightedTrace) {
-            Enclosure x = relative == 0 ? f : f.times(Enclosure.of(1 - relative, 1 + relative));
-            if (absolute == 0) {
-                return x;
-            }
-            Enclosure e = weightedTrace.times(absolute);
-            return Enclosure.of(
-                    x.lowerWide().plusDown(e.upperWide().negate()),
-                    x.upperWide().plusUp(e.upperWide()));
-        }
-    }
-
-    private static CopiedErrors errors(QubitSpectra.Spectrum s, int n) {
-        // eigenvalues to 2^-103, their powers to n·2^-101; (1+x)^n − 1 ≤ 1.1 n x for n x ≤ 0.1
-        double each = s.relativeError() + 0x1p-99;
-        double relative = n * each <= 0.1 ? 1.1 * n * each : 1;
-        double total = s.large().hi() + s.small().hi();
-        double share = total == 0 ? 0 : s.traceError() / total;
-        double absolute = n * share <= 0.1 ? 1.2 * n * share : Double.POSITIVE_INFINITY;
-        return new CopiedErrors(relative + WEIGHT_ERROR, absolute);
+        double guess = ChernoffGuess.log2(spectra, n, wa, wb);
+        return TruncatedSum.enclose(guess, effort.tolerance(), target -> {
+            SpinBlocksPlan plan = SpinBlocksPlan.of(spectra, n, wa, wb, target, effort.tolerance());
+            return new TruncatedSum.Parts(new SpinBlocksRun(spectra, plan, effort, proven).sum(), plan.dropped());
+        });
     }
 
     @Override

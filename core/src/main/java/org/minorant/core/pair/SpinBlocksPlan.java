@@ -164,7 +164,7 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
     }
 
     /** An upper end of 2^x. */
-    private static WideDouble power(double x) {
+    static WideDouble power(double x) {
         if (x == Double.NEGATIVE_INFINITY) {
             return WideDouble.ZERO;
         }
@@ -174,7 +174,7 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
     }
 
     /** m_q = C(n,q)(k+1)/(n−q+1) = C(n,q) − C(n,q−1), from C(n,q) by exact ratios. */
-    private static WideDoubleDouble[] multiplicities(int n) {
+    static WideDoubleDouble[] multiplicities(int n) {
         WideDoubleDouble[] m = new WideDoubleDouble[n / 2 + 1];
         WideDoubleDouble binomial = WideDoubleDouble.ONE;
         for (int q = 0; q < m.length; q++) {

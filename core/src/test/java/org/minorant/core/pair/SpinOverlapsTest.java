@@ -10,12 +10,12 @@ import org.junit.jupiter.params.provider.CsvSource;
 import org.minorant.core.internal.number.DoubleDouble;
 
 /**
- * The recursion against Wigner's sum over binomials (E. P. Wigner, Group Theory, 1959, eq. 15.27, from memory), evaluated with 400 digits:
+ * The recursion against Wigner's sum over binomials (E. P. Wigner, Group Theory, 1959, eq. 15.27, from memory), evaluated with 150 digits:
  * C_ab = √(C(k,a)/C(k,b)) Σ_i C(a,i) C(k−a,b−i) (−1)^i c^(k−a−b+2i) s^(a+b−2i), up to the sign convention fixed by C^(1) = [[c, s], [s, −c]].
  */
 class SpinOverlapsTest {
 
-    private static final MathContext DIGITS = new MathContext(400);
+    private static final MathContext DIGITS = new MathContext(150);
 
     @ParameterizedTest
     @CsvSource({

@@ -5,9 +5,10 @@ import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
- * The weights w, wr, wr², … of one operator's columns in a spin block, 0 ≤ r ≤ 1, in units of 2^shift, and their square roots: relative errors below (i + 4) · 2^-101 beside that of w. Weights below 2^-1000 of the unit are left out.
+ * The weights of one operator's columns in a spin block, not increasing, in units of 2^shift, and their square roots: relative errors below (i + 4) · 2^-101 beside that of the first. Weights below 2^-1000 of the unit
+ * are left out.
  */
-final class GeometricColumns {
+final class ColumnWeights {
 
     private static final int LEAST = -1000;
 
@@ -15,20 +16,29 @@ final class GeometricColumns {
     private final DoubleDouble[] root;
     private final int held;
 
-    GeometricColumns(WideDoubleDouble weight, DoubleDouble ratio, int count, long shift) {
-        power = new DoubleDouble[count];
-        root = new DoubleDouble[count];
-        WideDoubleDouble r = WideDoubleDouble.of(ratio);
-        WideDoubleDouble p = weight;
+    ColumnWeights(WideDoubleDouble[] weights, long shift) {
+        power = new DoubleDouble[weights.length];
+        root = new DoubleDouble[weights.length];
         int n = 0;
-        while (n < count && p.significand().hi() != 0 && p.exponent() - shift >= LEAST) {
-            power[n] = p.toDoubleDouble(shift);
-            WideDoubleDouble unit = new WideDoubleDouble(p.significand(), p.exponent() - shift);
+        while (n < weights.length && weights[n].significand().hi() != 0 && weights[n].exponent() - shift >= LEAST) {
+            power[n] = weights[n].toDoubleDouble(shift);
+            WideDoubleDouble unit = new WideDoubleDouble(weights[n].significand(), weights[n].exponent() - shift);
             root[n] = unit.sqrt().toDoubleDouble(0);
-            p = p.times(r);
             n++;
         }
         held = n;
+    }
+
+    /** w, wr, wr², … for 0 ≤ r ≤ 1. */
+    static WideDoubleDouble[] geometric(WideDoubleDouble weight, DoubleDouble ratio, int count) {
+        WideDoubleDouble[] w = new WideDoubleDouble[count];
+        WideDoubleDouble r = WideDoubleDouble.of(ratio);
+        WideDoubleDouble p = weight;
+        for (int i = 0; i < count; i++) {
+            w[i] = p;
+            p = p.times(r);
+        }
+        return w;
     }
 
     /** How many columns are heavy enough to be held. */

@@ -1,0 +1,74 @@
+package org.minorant.core.pair;
+
+import org.minorant.core.Enclosure;
+import org.minorant.core.WideDouble;
+import org.minorant.core.internal.number.WideDoubleDouble;
+
+/**
+ * The value of one spin block, or of a product of spin blocks: by one eigendecomposition if an operator fills the block and the answer is not much smaller than the traces, else by rotations.
+ *
+ * @param dimension the dimension of the block
+ * @param most an upper end of the block's share, by its traces
+ * @param allowance a width of the share that cannot be seen in the sum
+ * @param tolerance the relative width asked for
+ */
+record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, double tolerance) {
+
+    /** log2 of the heaviest weight; its square and the products of a few such weights stay in range. */
+    private static final long TOP = 450;
+
+    /** The relative error of a weight is below 4n · 2^-102, n at most 2^27 or so. */
+    private static final double ROUNDING = 0x1p-70;
+
+    /** A block this narrow needs no rotations. */
+    private static final double ENOUGH = 0x1p-45;
+
+    /**
+     * The share of the block in the sum.
+     *
+     * @param a weights of the columns of A, not increasing
+     * @param b weights of the columns of B
+     * @param window overlaps of the columns
+     * @param proven whether to enclose; the estimate is both ends otherwise
+     * @param stop passed many times a second
+     */
+    Enclosure of(
+            WideDoubleDouble[] a, WideDoubleDouble[] b, SpinOverlaps.Window window, boolean proven, Runnable stop) {
+        // one unit for both operators; the heavier one's first column is near the top of what squares without overflow
+        long shift = Math.max(a[0].exponent(), b[0].exponent()) - TOP;
+        ColumnWeights x = new ColumnWeights(a, shift);
+        ColumnWeights y = new ColumnWeights(b, shift);
+        if (x.held() == 0 || y.held() == 0) {
+            return Enclosure.of(WideDouble.ZERO, most);
+        }
+        WideDouble leftOut = WideDouble.of(x.leftOut()).plusUp(WideDouble.of(y.leftOut()));
+        if (!DenseBlock.fits(dimension, x, y)) {
+            return share(byRotations(SpinBlock.columns(x, y, window), proven, stop), leftOut, shift);
+        }
+        Enclosure dense = share(DenseBlock.enclose(x, y, window, stop), leftOut, shift);
+        WideDouble width = dense.upperWide().plusUp(dense.lowerWide().negate());
+        if (width.compareTo(allowance) <= 0 || dense.relativeWidth() <= Math.max(ENOUGH, tolerance / 4)) {
+            return dense;
+        }
+        Enclosure rotated = share(byRotations(SpinBlock.columns(x, y, window), proven, stop), leftOut, shift);
+        return proven ? dense.intersect(rotated) : rotated;
+    }
+
+    private static Enclosure byRotations(ColumnPair columns, boolean proven, Runnable stop) {
+        if (proven) {
+            return columns.enclose(1, 1, stop);
+        }
+        WideDouble e = columns.estimate(1, 1, stop);
+        return Enclosure.of(e, e);
+    }
+
+    /** The share from a value in units of 2^shift; it is no more than the traces allow. */
+    private Enclosure share(Enclosure unit, WideDouble leftOut, long shift) {
+        Enclosure f = unit.times(Enclosure.of(1 - ROUNDING, 1 + ROUNDING));
+        WideDouble upper = f.upperWide().isInfinite()
+                ? most
+                : f.upperWide().plusUp(leftOut).timesPowerOfTwo(shift).min(most);
+        WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesPowerOfTwo(shift);
+        return Enclosure.of(lower.min(upper), upper);
+    }
+}
