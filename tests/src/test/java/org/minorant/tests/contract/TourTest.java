@@ -3,6 +3,7 @@ package org.minorant.tests.contract;
 import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.math.BigDecimal;
 import java.util.List;
 import org.junit.jupiter.api.Test;
 import org.minorant.bounds.Capacity;
@@ -14,10 +15,13 @@ import org.minorant.bounds.TestingBounds;
 import org.minorant.core.Complex;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
+import org.minorant.core.Estimate;
 import org.minorant.core.Information;
 import org.minorant.core.state.LightStates;
 import org.minorant.core.state.TruncatedState;
 import org.minorant.core.state.Truncation;
+import org.minorant.measurement.CollectiveTest;
+import org.minorant.measurement.CopiesNeeded;
 import org.minorant.measurement.Ensemble;
 import org.minorant.measurement.HypothesisPair;
 import org.minorant.measurement.PrettyGoodMeasurement;
@@ -64,6 +68,31 @@ class TourTest {
         // the decimal 1e-30 is a double within 1e-46, so the overlap squared over four is 2.5e-61 to 15 digits
         assertEquals(2.5e-61, tiny.midpoint(), 1e-75);
         assertTrue(width < 1e-9, tiny::toString);
+    }
+
+    @Test
+    void manyCopies() {
+        DensityOperator rho = DensityOperator.ofBloch(0.0, 0.0, 0.9);
+        DensityOperator sigma = DensityOperator.ofBloch(0.6, 0.0, 0.5);
+        HypothesisPair pair = HypothesisPair.of(rho, sigma);
+
+        // snippet many-copies
+        HypothesisPair many = pair.copies(200); // 2^200 dimensions, none of them formed
+        Enclosure collective = many.minimumError(0.5); // 3.938023188890e-10
+        Estimate quick = many.minimumErrorEstimate(0.5); // the same without proof
+        Information divergence = many.hypothesisTestingDivergence(1e-3); // -ln of the least type-II error
+        CopiesNeeded needed = pair.copiesFor(0.5, 1e-9); // the least number of copies, certified from both sides
+        CollectiveTest test = many.collectiveTest(0.5); // draws outcomes of the optimal test, for simulations
+        HypothesisPair rough = many.withTolerance(1e-6).withProgress((done, total) -> {});
+        // end snippet
+
+        // check value, computed with 100-digit arithmetic by another program
+        assertTrue(collective.contains(new BigDecimal("3.938023188890161638e-10")), collective::toString);
+        assertEquals(collective.midpoint(), quick.value(), 1e-11 * quick.value());
+        assertTrue(divergence.nats().relativeWidth() < 1e-9);
+        assertTrue(needed.isLeast() && needed.errorAt().upper() <= 1e-9);
+        assertEquals(101, test.blocks().size());
+        assertTrue(rough.minimumError(0.5).relativeWidth() < 1e-6);
     }
 
     @Test
