@@ -135,7 +135,7 @@ final class UnitaryBlocksRun {
     }
 
     private static WideDouble shifted(WideDoubleDouble weight, long by) {
-        return new BlockWeight(weight).wide().timesPowerOfTwo(by);
+        return WideDouble.of(weight.significand().hi(), weight.exponent()).timesPowerOfTwo(by);
     }
 
     private Enclosure byRotations(
