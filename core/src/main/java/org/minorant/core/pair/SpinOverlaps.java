@@ -38,7 +38,7 @@ final class SpinOverlaps {
     private double[][] nextHi;
     private double[][] nextLo;
     private double[][] nextRadius;
-    /** Column coefficients cα_b, sβ_b, sα_b, cβ_b of the step in hand. */
+    /** Column coefficients cα_b, sβ_b, sα_b, −cβ_b of the step in hand. */
     private final double[][] coefficients;
     /** The two halves of a row: t and u of this row, u of the row before, in high and low words; sums of moduli and radii. */
     private final double[][] half;
@@ -153,7 +153,7 @@ final class SpinOverlaps {
             put(0, b, cos.times(alpha));
             put(2, b, sin.times(beta));
             put(4, b, sin.times(alpha));
-            put(6, b, cos.times(beta));
+            put(6, b, cos.times(beta).negate());
         }
     }
 
@@ -176,7 +176,7 @@ final class SpinOverlaps {
         ph[0] = 0;
         pl[0] = 0;
         mix(h, l, coefficients[0], coefficients[1], ph, pl, coefficients[2], coefficients[3], half[2], half[3]);
-        mixMinus(h, l, coefficients[4], coefficients[5], ph, pl, coefficients[6], coefficients[7], half[4], half[5]);
+        mix(h, l, coefficients[4], coefficients[5], ph, pl, coefficients[6], coefficients[7], half[4], half[5]);
         moduli(h, ph, coefficients[0], coefficients[2], half[8]);
         moduli(r, pr, coefficients[0], coefficients[2], half[9]);
         moduli(h, ph, coefficients[4], coefficients[6], half[10]);
@@ -185,7 +185,7 @@ final class SpinOverlaps {
 
     private static void moduli(double[] x, double[] y, double[] p, double[] q, double[] out) {
         for (int b = 0; b < out.length; b++) {
-            out[b] = Math.abs(x[b]) * p[b] + Math.abs(y[b]) * q[b];
+            out[b] = Math.abs(x[b] * p[b]) + Math.abs(y[b] * q[b]);
         }
     }
 
@@ -206,31 +206,6 @@ final class SpinOverlaps {
             double me = ProductError.of(xh[b], ph[b], m) + (xh[b] * pl[b] + xl[b] * ph[b]);
             double n = yh[b] * qh[b];
             double ne = ProductError.of(yh[b], qh[b], n) + (yh[b] * ql[b] + yl[b] * qh[b]);
-            double s = m + n;
-            double t = s - m;
-            double e = ((m - (s - t)) + (n - t)) + (me + ne);
-            double v = s + e;
-            outH[b] = v;
-            outL[b] = e - (v - s);
-        }
-    }
-
-    private static void mixMinus(
-            double[] xh,
-            double[] xl,
-            double[] ph,
-            double[] pl,
-            double[] yh,
-            double[] yl,
-            double[] qh,
-            double[] ql,
-            double[] outH,
-            double[] outL) {
-        for (int b = 0; b < outH.length; b++) {
-            double m = xh[b] * ph[b];
-            double me = ProductError.of(xh[b], ph[b], m) + (xh[b] * pl[b] + xl[b] * ph[b]);
-            double n = -yh[b] * qh[b];
-            double ne = ProductError.of(-yh[b], qh[b], n) - (yh[b] * ql[b] + yl[b] * qh[b]);
             double s = m + n;
             double t = s - m;
             double e = ((m - (s - t)) + (n - t)) + (me + ne);
