@@ -39,10 +39,12 @@ class SpinOverlapsTest {
         while (overlaps.order() < k) {
             overlaps.step();
         }
+        BigDecimal[] powersOfC = powers(c, k);
+        BigDecimal[] powersOfS = powers(s, k);
         SpinOverlaps.Window w = overlaps.window(rows, columns);
         for (int a = 0; a < Math.min(rows, k + 1); a++) {
             for (int b = 0; b < Math.min(columns, k + 1); b++) {
-                BigDecimal exact = wigner(k, a, b, c, s);
+                BigDecimal exact = wigner(k, a, b, powersOfC, powersOfS);
                 BigDecimal found = new DoubleDouble(w.high()[a][b], w.low()[a][b]).toBigDecimal();
                 double error = found.subtract(exact).abs().doubleValue();
                 String where = "(" + a + ", " + b + ") " + exact.round(new MathContext(20)) + " but " + found;
@@ -62,10 +64,12 @@ class SpinOverlapsTest {
         while (overlaps.order() < k) {
             overlaps.step();
         }
+        BigDecimal[] powersOfC = powers(c, k);
+        BigDecimal[] powersOfS = powers(s, k);
         SpinOverlaps.Window w = overlaps.window(8, 8);
         for (int a = 0; a < 8; a++) {
             for (int b = 0; b < 8; b++) {
-                BigDecimal exact = wigner(k, a, b, c, s);
+                BigDecimal exact = wigner(k, a, b, powersOfC, powersOfS);
                 BigDecimal found = new DoubleDouble(w.high()[a][b], w.low()[a][b]).toBigDecimal();
                 double error = found.subtract(exact).abs().doubleValue();
                 assertTrue(error <= w.radius()[a][b], a + ", " + b);
@@ -74,12 +78,21 @@ class SpinOverlapsTest {
         }
     }
 
-    private static BigDecimal wigner(int k, int a, int b, BigDecimal c, BigDecimal s) {
+    private static BigDecimal[] powers(BigDecimal x, int k) {
+        BigDecimal[] p = new BigDecimal[k + 1];
+        p[0] = BigDecimal.ONE;
+        for (int i = 1; i <= k; i++) {
+            p[i] = p[i - 1].multiply(x, DIGITS);
+        }
+        return p;
+    }
+
+    private static BigDecimal wigner(int k, int a, int b, BigDecimal[] c, BigDecimal[] s) {
         BigDecimal sum = BigDecimal.ZERO;
         for (int i = Math.max(0, a + b - k); i <= Math.min(a, b); i++) {
             BigDecimal term = new BigDecimal(binomial(a, i).multiply(binomial(k - a, b - i)))
-                    .multiply(c.pow(k - a - b + 2 * i, DIGITS), DIGITS)
-                    .multiply(s.pow(a + b - 2 * i, DIGITS), DIGITS);
+                    .multiply(c[k - a - b + 2 * i], DIGITS)
+                    .multiply(s[a + b - 2 * i], DIGITS);
             sum = i % 2 == 0 ? sum.add(term) : sum.subtract(term);
         }
         BigDecimal ratio = new BigDecimal(binomial(k, a)).divide(new BigDecimal(binomial(k, b)), DIGITS);
