@@ -9,6 +9,8 @@ import java.util.concurrent.Executors;
 import java.util.concurrent.Future;
 import java.util.concurrent.Semaphore;
 import java.util.concurrent.ThreadFactory;
+import java.util.concurrent.TimeUnit;
+import java.util.concurrent.TimeoutException;
 import java.util.concurrent.atomic.AtomicBoolean;
 import java.util.concurrent.atomic.AtomicReference;
 import java.util.function.Function;
@@ -23,6 +25,9 @@ final class Parallel {
         t.setDaemon(true);
         return t;
     };
+
+    /** How often the calling thread asks whether to stop, in milliseconds; it does not wait for the others to notice. */
+    private static final long POLL = 20;
 
     private Parallel() {}
 
@@ -63,7 +68,9 @@ final class Parallel {
             List<Future<R>> futures = new ArrayList<>();
             for (T item : items) {
                 Part<R> part = prepare.apply(item);
-                room.acquire();
+                while (!room.tryAcquire(POLL, TimeUnit.MILLISECONDS)) {
+                    effort.checkpoint();
+                }
                 effort.checkpoint();
                 futures.add(pool.submit(() -> {
                     try {
@@ -79,7 +86,7 @@ final class Parallel {
             }
             List<R> results = new ArrayList<>();
             for (Future<R> f : futures) {
-                results.add(f.get());
+                results.add(await(f, effort));
             }
             return results;
         } catch (InterruptedException e) {
@@ -95,6 +102,16 @@ final class Parallel {
         } finally {
             stopped.set(true);
             pool.shutdownNow();
+        }
+    }
+
+    private static <R> R await(Future<R> f, Effort effort) throws InterruptedException, ExecutionException {
+        while (true) {
+            try {
+                return f.get(POLL, TimeUnit.MILLISECONDS);
+            } catch (TimeoutException e) {
+                effort.checkpoint();
+            }
         }
     }
 }
