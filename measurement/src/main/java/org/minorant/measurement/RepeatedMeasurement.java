@@ -104,7 +104,7 @@ public final class RepeatedMeasurement {
      * @return P, one enclosure for each outcome
      */
     public List<Enclosure> firstOutcomes() {
-        return first;
+        return List.copyOf(first);
     }
 
     /**
@@ -113,7 +113,7 @@ public final class RepeatedMeasurement {
      * @return Q, one enclosure for each outcome
      */
     public List<Enclosure> secondOutcomes() {
-        return second;
+        return List.copyOf(second);
     }
 
     /**

@@ -26,6 +26,12 @@ final class Charts {
     /** Orange of the same palette. */
     static final Color ORANGE = new Color(0xE69F00);
 
+    /** Sky blue of the same palette. */
+    static final Color SKY = new Color(0x56B4E9);
+
+    /** Reddish purple of the same palette. */
+    static final Color PURPLE = new Color(0xCC79A7);
+
     private static final Color GRID = new Color(0xDDDDDD);
 
     private static final int LONGEST_TITLE = 84;

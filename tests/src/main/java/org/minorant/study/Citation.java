@@ -36,6 +36,10 @@ record Citation(String method, String source, List<String> checked) {
 
     static final Citation CHOICE = of("input found with the capacity", "this run; a choice, not a bound");
 
+    static final Citation FOUND = of(
+            "best projective measurement found, repeated",
+            "this run; the error of a measurement that was found, at least the minimum error");
+
     Citation {
         checked = List.copyOf(checked);
     }

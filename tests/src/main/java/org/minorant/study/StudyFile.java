@@ -10,6 +10,7 @@ import java.util.List;
  * @param title the title, or the file's name if it gives none
  * @param states the states, in the order of the file
  * @param pairs the pairs of states to tell apart
+ * @param copies the pairs to tell apart by many copies
  * @param ensembles the ensembles to tell apart
  * @param channels the channels to code for
  * @param errors error levels in increasing order
@@ -21,6 +22,7 @@ record StudyFile(
         String title,
         List<StateLine> states,
         List<PairLine> pairs,
+        List<CopiesLine> copies,
         List<EnsembleLine> ensembles,
         List<ChannelLine> channels,
         List<Double> errors,
@@ -30,6 +32,7 @@ record StudyFile(
     StudyFile {
         states = List.copyOf(states);
         pairs = List.copyOf(pairs);
+        copies = List.copyOf(copies);
         ensembles = List.copyOf(ensembles);
         channels = List.copyOf(channels);
         errors = List.copyOf(errors);
@@ -49,6 +52,18 @@ record StudyFile(
 
     /** Two states to tell apart; the prior probability is that of the first. */
     record PairLine(int line, String name, String first, String second, double prior) {}
+
+    /** A pair that was named above, and numbers of copies in increasing order. */
+    record CopiesLine(int line, String pair, List<Integer> copies) {
+        CopiesLine {
+            copies = List.copyOf(copies);
+        }
+    }
+
+    /** The pair of a name. */
+    PairLine pair(String name) {
+        return pairs.stream().filter(p -> p.name().equals(name)).findFirst().orElseThrow();
+    }
 
     /** States with prior probabilities. */
     record EnsembleLine(int line, String name, List<String> states, List<Double> priors) {

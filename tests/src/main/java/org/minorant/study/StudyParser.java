@@ -9,6 +9,7 @@ import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import org.minorant.study.StudyFile.ChannelLine;
+import org.minorant.study.StudyFile.CopiesLine;
 import org.minorant.study.StudyFile.EnsembleLine;
 import org.minorant.study.StudyFile.PairLine;
 import org.minorant.study.StudyFile.Repair;
@@ -20,7 +21,7 @@ import org.minorant.study.StudyFile.StateLine;
  */
 final class StudyParser {
 
-    static final String KEYWORDS = "title, state, nearest, pair, ensemble, channel, errors, messages, output";
+    static final String KEYWORDS = "title, state, nearest, pair, copies, ensemble, channel, errors, messages, output";
 
     private static final List<Double> DEFAULT_ERRORS = List.of(0.001, 0.01, 0.1);
 
@@ -32,6 +33,7 @@ final class StudyParser {
     private final Map<String, Integer> lineOfSetting = new HashMap<>();
     private final List<StateLine> states = new ArrayList<>();
     private final List<PairLine> pairs = new ArrayList<>();
+    private final List<CopiesLine> copies = new ArrayList<>();
     private final List<EnsembleLine> ensembles = new ArrayList<>();
     private final List<ChannelLine> channels = new ArrayList<>();
     private String title;
@@ -69,7 +71,7 @@ final class StudyParser {
         if (pairs.isEmpty() && ensembles.isEmpty() && channels.isEmpty()) {
             throw BadInputException.in(path, "asks for nothing; add a pair, an ensemble or a channel line");
         }
-        return new StudyFile(path, title, states, pairs, ensembles, channels, errors, messages, output);
+        return new StudyFile(path, title, states, pairs, copies, ensembles, channels, errors, messages, output);
     }
 
     private void line(int number, String text) {
@@ -83,6 +85,7 @@ final class StudyParser {
             case "state" -> state(words, Repair.NONE);
             case "nearest" -> state(words, Repair.NEAREST);
             case "pair" -> pair(words);
+            case "copies" -> copies(words);
             case "ensemble" -> ensemble(words);
             case "channel" -> channel(words);
             case "errors" -> errors(words);
@@ -117,6 +120,21 @@ final class StudyParser {
         double prior = words.probability(words.next("the prior probability of " + first));
         words.end();
         pairs.add(new PairLine(words.line(), name, first, second, prior));
+    }
+
+    private void copies(StudyWords words) {
+        String name = words.next("the name of a pair");
+        if (pairs.stream().noneMatch(p -> p.name().equals(name))) {
+            throw words.fault(
+                    "no pair " + OneLine.quote(name) + " is named above this line; add a pair line before it");
+        }
+        for (CopiesLine c : copies) {
+            if (c.pair().equals(name)) {
+                throw words.fault("copies of " + name + " were already asked for in line " + c.line()
+                        + "; give all numbers in one line");
+            }
+        }
+        copies.add(new CopiesLine(words.line(), name, words.increasing("a number of copies", words::copies)));
     }
 
     private void ensemble(StudyWords words) {

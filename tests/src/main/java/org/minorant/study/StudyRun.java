@@ -7,6 +7,7 @@ import java.util.List;
 import java.util.function.Supplier;
 import org.minorant.core.InvalidInputException;
 import org.minorant.study.StudyFile.ChannelLine;
+import org.minorant.study.StudyFile.CopiesLine;
 import org.minorant.study.StudyFile.EnsembleLine;
 import org.minorant.study.StudyFile.PairLine;
 
@@ -34,7 +35,8 @@ final class StudyRun {
     void report(PrintStream out) {
         int analyses =
                 file.pairs().size() + file.ensembles().size() + file.channels().size();
-        progress.expect(file.states().size() + analyses + 1);
+        int copies = file.copies().stream().mapToInt(l -> l.copies().size()).sum();
+        progress.expect(file.states().size() + analyses + copies + 1);
         States states = States.read(file, progress);
         check(states);
         // a place that cannot be written to must not cost the user the computation
@@ -74,6 +76,22 @@ final class StudyRun {
                             Charts.title(file.title(), "bounds on the minimum error of " + line.name()),
                             "minimum error (probability, logarithmic axis)",
                             Bars.ofPair(pair.section()))));
+        }
+        for (CopiesLine line : file.copies()) {
+            CopiesSection many = at(
+                    line.line(),
+                    () -> CopiesSection.of(
+                            line,
+                            file.pair(line.pair()),
+                            states,
+                            n -> progress.step("pair " + line.pair() + ", copies: " + n)));
+            sections.add(many.section());
+            drawings.add(new Drawing(
+                    "copies-" + line.pair() + ".svg",
+                    () -> CopiesChart.errors(file.title(), line.pair(), many.plot())));
+            drawings.add(new Drawing(
+                    "exponents-" + line.pair() + ".svg",
+                    () -> CopiesChart.exponents(file.title(), line.pair(), many.plot())));
         }
         for (EnsembleLine line : file.ensembles()) {
             progress.step("ensemble " + line.name());

@@ -18,6 +18,9 @@ final class StudyWords {
     /** For each prior; what the library allows an ensemble, since decimals seldom sum to one exactly as doubles. */
     private static final double PRIOR_ROUNDING = 0x1p-50;
 
+    /** What the library takes where it is cheapest. */
+    private static final int MOST_COPIES = 1_000_000;
+
     private final Path path;
     private final int line;
     private final String keyword;
@@ -116,6 +119,14 @@ final class StudyWords {
             throw fault(OneLine.quote(word) + " is not a number of messages; give a whole number from 2 to 10^18");
         }
         return Long.parseLong(word);
+    }
+
+    int copies(String word) {
+        if (!WHOLE.matcher(word).matches() || Long.parseLong(word) < 1 || Long.parseLong(word) > MOST_COPIES) {
+            throw fault(
+                    OneLine.quote(word) + " is not a number of copies; give a whole number from 1 to " + MOST_COPIES);
+        }
+        return Integer.parseInt(word);
     }
 
     void sumToOne(List<Double> priors) {

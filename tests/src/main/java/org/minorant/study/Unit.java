@@ -9,7 +9,9 @@ enum Unit {
     /** A quotient of two like numbers. */
     RATIO("ratio"),
     /** Information, logarithm to base 2. */
-    BITS("bit");
+    BITS("bit"),
+    /** Information for each copy. */
+    BITS_PER_COPY("bit per copy");
 
     private final String text;
 

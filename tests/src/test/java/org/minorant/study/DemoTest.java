@@ -140,6 +140,20 @@ class DemoTest {
     }
 
     @Test
+    void aThousandCopiesOfThePolarisedPairHaveTheirKnownError() {
+        // computed with 100 digits by an independent program; entries of the files are rounded to 1e-16, times a
+        // thousand copies
+        double known = 5.773837507929116670888e-43;
+        List<String> r = rows.stream()
+                .filter(x -> x.get(2).equals(CopiesSection.minimumError(1000))
+                        && x.get(4).equals("exact"))
+                .findFirst()
+                .orElseThrow();
+        assertEquals(1, Double.parseDouble(r.get(5)) / known, 1e-11);
+        assertEquals(1, Double.parseDouble(r.get(6)) / known, 1e-11);
+    }
+
+    @Test
     void theNumbersOfAPairAreThoseOfTheLibrary() throws IOException {
         HypothesisPair pair = HypothesisPair.of(state("clear.mtx"), state("hazy.npy"));
         assertHolds(pair.minimumError(0.5), "polarised", "minimum error", "", "Holevo-Helstrom");
@@ -193,6 +207,18 @@ class DemoTest {
             assertTrue(curve.shapes("230,159,0") >= 2 && curve.shapes("0,114,178") >= 2);
             Svg bounds = Svg.parse(DemoRun.get().result("bounds-" + pair + ".svg"));
             assertTrue(bounds.shapes("0,114,178") >= 3 && bounds.shapes("213,94,0") >= 5);
+        }
+        for (String name : List.of("copies", "exponents")) {
+            Svg many = Svg.parse(DemoRun.get().result(name + "-polarised.svg"));
+            // two lower bounds, the value, two upper bounds and the measurement found, each a line with its markers
+            assertTrue(
+                    many.title()
+                            .endsWith(
+                                    name.equals("copies")
+                                            ? "errors against copies of polarised"
+                                            : "exponents against copies of polarised"),
+                    many.title());
+            assertTrue(many.shapes("0,114,178") > 5 && many.shapes("213,94,0") > 5 && many.shapes("230,159,0") > 5);
         }
         Svg messages = Svg.parse(DemoRun.get().result("bounds-helm.svg"));
         assertTrue(messages.title().endsWith("messages that one use of helm carries"), messages.title());

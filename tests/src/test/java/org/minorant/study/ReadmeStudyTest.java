@@ -21,10 +21,12 @@ class ReadmeStudyTest {
         return Files.readString(ROOT.resolve("README.md"));
     }
 
-    private static String block(String language) throws IOException {
-        Matcher m = Pattern.compile("(?ms)^```" + language + "\\R(.*?)^```$").matcher(readme());
-        assertTrue(m.find(), language);
-        return m.group(1);
+    private static List<String> blocks(String language) throws IOException {
+        return Pattern.compile("(?ms)^```" + language + "\\R(.*?)^```$")
+                .matcher(readme())
+                .results()
+                .map(r -> r.group(1))
+                .toList();
     }
 
     private static List<String> statements(String study) {
@@ -33,13 +35,18 @@ class ReadmeStudyTest {
 
     @Test
     void theExampleStudyIsTheDemo() throws IOException {
-        assertEquals(statements(Files.readString(Path.of("studies", "demo.study"))), statements(block("study")));
+        assertEquals(
+                statements(Files.readString(Path.of("studies", "demo.study"))),
+                statements(blocks("study").get(0)));
     }
 
     @Test
     void theExcerptIsFromTheDemosReportAndEveryMethodIsInTheTable() throws IOException {
         String report = DemoRun.get().result("report.txt");
-        assertTrue(report.contains(block("text")), "README's excerpt is not in the demo's report:\n" + report);
+        assertEquals(2, blocks("text").size());
+        for (String excerpt : blocks("text")) {
+            assertTrue(report.contains(excerpt), "an excerpt of README is not in the demo's report:\n" + report);
+        }
         String readme = readme();
         List<List<String>> rows = DemoRun.get().rows();
         for (List<String> r : rows.subList(1, rows.size())) {

@@ -58,7 +58,8 @@ class StudyParserTest {
                 "channel c a b a",
                 "errors 1e-3 0.25",
                 "messages 2 1000000000000",
-                "output ../out dir"));
+                "output ../out dir",
+                "copies p 1 10 1000000"));
         assertEquals("Lamp signals,  two spaces kept", s.title());
         assertEquals(
                 List.of(
@@ -66,6 +67,7 @@ class StudyParserTest {
                         new StateLine(5, "b", directory.resolve("b#1.npy"), Repair.NEAREST)),
                 s.states());
         assertEquals(List.of(new PairLine(6, "p", "a", "b", 0.25)), s.pairs());
+        assertEquals(List.of(new StudyFile.CopiesLine(12, "p", List.of(1, 10, 1_000_000))), s.copies());
         assertEquals(
                 List.of(new EnsembleLine(7, "e", List.of("a", "b", "a"), List.of(0.5, 0.25, 0.25))), s.ensembles());
         assertEquals(List.of(new ChannelLine(8, "c", List.of("a", "b", "a"))), s.channels());
@@ -105,6 +107,13 @@ class StudyParserTest {
     }
 
     @Test
+    void copiesOfAPairAreAskedForOnce() throws IOException {
+        assertEquals(
+                ":5: copies of p were already asked for in line 4; give all numbers in one line",
+                refusal(TWO_STATES + "pair p a b prior 0.5\ncopies p 2\ncopies p 3"));
+    }
+
+    @Test
     void absolutePathsStay() throws IOException {
         Path absolute = directory.resolve("elsewhere").resolve("a.mtx");
         assertEquals(
@@ -120,9 +129,9 @@ class StudyParserTest {
             delimiter = '|',
             quoteCharacter = '`',
             value = {
-                "stat a a.mtx | unknown word 'stat'; a line begins with one of title, state, nearest, pair, ensemble, channel, errors,"
+                "stat a a.mtx | unknown word 'stat'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, errors,"
                         + " messages, output",
-                "STATE c c.mtx | unknown word 'STATE'; a line begins with one of title, state, nearest, pair, ensemble, channel, errors,"
+                "STATE c c.mtx | unknown word 'STATE'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, errors,"
                         + " messages, output",
                 "title | the line ends where a title should stand",
                 "state | the line ends where a name should stand",
@@ -146,6 +155,13 @@ class StudyParserTest {
                 "pair p A b prior 0.5 | no state 'A' is named above this line; add a state line before it",
                 "pair q a b prior 0.5 | the name 'q' was already given in line 3 (upper and lower case count as the same); choose another",
                 "channel Q a b | the name 'Q' was already given in line 3 (upper and lower case count as the same); choose another",
+                "copies | the line ends where the name of a pair should stand",
+                "copies x 1 2 | no pair 'x' is named above this line; add a pair line before it",
+                "copies q | the line ends where a number of copies should stand",
+                "copies q 0 | '0' is not a number of copies; give a whole number from 1 to 1000000",
+                "copies q 1000001 | '1000001' is not a number of copies; give a whole number from 1 to 1000000",
+                "copies q 1.5 | '1.5' is not a number of copies; give a whole number from 1 to 1000000",
+                "copies q 5 5 | '5' does not exceed the value before it; give them in increasing order",
                 "ensemble e | an ensemble needs at least two states, this has 0",
                 "ensemble e a:1 | an ensemble needs at least two states, this has 1",
                 "ensemble e a b:1 | only 1 of 2 states have a prior; give STATE:PRIOR for all, or none for equal priors",

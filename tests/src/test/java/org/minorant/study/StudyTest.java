@@ -131,6 +131,48 @@ class StudyTest {
         }
     }
 
+    /** Three copies of the two states of the check values: .3197... for one copy, .2574... for two, of 100 digits by an independent program. */
+    @Test
+    void copiesHaveTheirTableTheirChartsAndTheirFit() throws IOException {
+        SmallStudy.Outcome o =
+                small.run("state a a.mtx", "state b b.npy", "pair p a b prior 0.5", "copies p 1 2 10", "output out");
+        assertEquals(Exit.DONE, o.exit(), o.err());
+        List<List<String>> rows = Csv.parse(result("numbers.csv")).stream()
+                .filter(r -> r.get(0).equals("copies"))
+                .toList();
+        double[] known = {0.3197224362268005353, 0.2574710914690333083, 0.07994611919654871755};
+        List<List<String>> exact = rows.stream()
+                .filter(r -> r.get(2).startsWith("minimum error") && r.get(4).equals("exact"))
+                .toList();
+        List<List<String>> alone =
+                rows.stream().filter(r -> r.get(3).endsWith("its error")).toList();
+        List<List<String>> ratios = rows.stream()
+                .filter(r -> r.get(3).endsWith("over minimum error"))
+                .toList();
+        for (int i = 0; i < 3; i++) {
+            // entries of the files are rounded to 1e-16, times ten copies
+            assertEquals(known[i], Double.parseDouble(exact.get(i).get(5)), 1e-13);
+            assertEquals(
+                    Double.parseDouble(ratios.get(i).get(6)),
+                    Double.parseDouble(alone.get(i).get(6)) / known[i],
+                    1e-10);
+        }
+        assertTrue(Double.parseDouble(ratios.get(2).get(5)) > 1.2, ratios::toString);
+        assertEquals("minimum error, 1 copy", exact.get(0).get(2));
+        assertTrue(o.out().contains("Estimated from the last 3: -log2 error = n C + 0."), o.out());
+        for (String name : List.of("copies-p.svg", "exponents-p.svg")) {
+            assertTrue(result(name).contains("copies of p</title>"), name);
+        }
+    }
+
+    @Test
+    void copiesWithoutErrorOrWithoutInformationAreAnsweredToo() throws IOException {
+        for (String pair : List.of("pair p a b prior 1", "pair p a a prior 0.5")) {
+            SmallStudy.Outcome o = small.run("state a a.mtx", "state b b.npy", pair, "copies p 1 4", "output out");
+            assertEquals(Exit.DONE, o.exit(), o.err());
+        }
+    }
+
     @Test
     void oneStateTwiceIsAnsweredToo() throws IOException {
         SmallStudy.Outcome o = small.run(

@@ -25,6 +25,7 @@ import org.minorant.measurement.CopiesNeeded;
 import org.minorant.measurement.Ensemble;
 import org.minorant.measurement.HypothesisPair;
 import org.minorant.measurement.PrettyGoodMeasurement;
+import org.minorant.measurement.RepeatedMeasurement;
 import org.minorant.measurement.TradeOffCurve;
 
 /** The tour of README, block by block, and that its comments are true. */
@@ -54,6 +55,23 @@ class TourTest {
                 .findFirst()
                 .orElseThrow()
                 .matches("side +value +theorem +.*source.*"));
+    }
+
+    @Test
+    void boundsOfCopies() {
+        HypothesisPair pair =
+                HypothesisPair.of(DensityOperator.ofBloch(0.0, 0.0, 0.9), DensityOperator.ofBloch(0.6, 0.0, 0.5));
+        HypothesisPair many = pair.copies(200);
+        // snippet bounds-of-copies
+        Ledger bounds = TestingBounds.of(many, 0.5); // the exact error beside bounds from one copy, which hold at any n
+        RepeatedMeasurement alone = RepeatedMeasurement.bestFound(pair, 200, 0.5); // one measurement, on each copy
+        Enclosure worth = alone.ratio(200, 0.5); // its error is 52 times the least one
+        // end snippet
+
+        assertEquals(
+                3.938023188890161638e-10, bounds.exact().orElseThrow().value().midpoint(), 1e-20);
+        assertTrue(bounds.bestLower().isPresent() && bounds.bestUpper().isPresent());
+        assertEquals(52, worth.midpoint(), 0.05);
     }
 
     @Test
