@@ -16,7 +16,7 @@ import org.minorant.core.InvalidInputException;
 final class IrrepTree {
 
     /** Windows up to this size are made whole, as columns in the whole space guide rotations best. */
-    private static final int WHOLE = 1000;
+    static final int WHOLE = 1000;
 
     private static final int MOST_PATTERNS = 6000;
     private static final double MOST_CELLS = 1e7;

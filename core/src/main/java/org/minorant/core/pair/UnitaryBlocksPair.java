@@ -87,13 +87,7 @@ final class UnitaryBlocksPair extends PositivePair {
         if (spectra.first().rank() == 0 || spectra.second().rank() == 0) {
             return Enclosure.ZERO;
         }
-        double log2Guess = ChernoffGuess.log2(
-                doubles(spectra.first()),
-                doubles(spectra.second()),
-                spectra.overlaps().squares(),
-                n,
-                wa,
-                wb);
+        double log2Guess = guess(wa, wb);
         Enclosure best = Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);
         for (int round = 0; round < MOST_ROUNDS; round++) {
             UnitaryBlocksPlan plan = UnitaryBlocksPlan.of(spectra, n, wa, wb, log2Guess, effort.tolerance());
@@ -109,6 +103,29 @@ final class UnitaryBlocksPair extends PositivePair {
             log2Guess = seen == Double.NEGATIVE_INFINITY ? log2Guess * 1.5 - 60 : seen - 0.5;
         }
         return best;
+    }
+
+    private double guess(WideDouble wa, WideDouble wb) {
+        return ChernoffGuess.log2(
+                doubles(spectra.first()),
+                doubles(spectra.second()),
+                spectra.overlaps().squares(),
+                n,
+                wa,
+                wb);
+    }
+
+    @Override
+    public Work work(WideDouble a, WideDouble b) {
+        if (onPlane.isPresent()) {
+            return onPlane.get().work(a, b);
+        }
+        boolean nothing = a.signum() <= 0 || b.signum() <= 0 || a.isInfinite() || b.isInfinite();
+        if (nothing || spectra.first().rank() == 0 || spectra.second().rank() == 0) {
+            return super.work(a, b);
+        }
+        return UnitaryBlocksPlan.of(spectra, n, a, b, guess(a, b), effort.tolerance())
+                .work(spectra.overlaps().isReal());
     }
 
     private static double log2(WideDouble x) {

@@ -206,4 +206,22 @@ record UnitaryBlocksPlan(List<Block> blocks, WideDouble dropped) {
         double whole = Math.floor(up);
         return WideDouble.of(Math.exp((up - whole) * LN2) * (1 + 1e-12), (long) whole);
     }
+
+    /**
+     * What evaluating this plan takes on every thread: about 16 matrices of enclosures of the largest space, or of the columns' rotations where that is larger; and overlaps that wait.
+     *
+     * @param real whether the overlaps are real
+     */
+    Work work(boolean real) {
+        int threads = Math.min(Runtime.getRuntime().availableProcessors(), Math.max(1, blocks.size()));
+        long entry = (real ? 3L : 5L) * Double.BYTES;
+        double space = 0;
+        long rank = 0;
+        for (Block b : blocks) {
+            space = Math.max(space, Math.min(Partitions.dimension(b.shape()).doubleValue(), IrrepTree.WHOLE));
+            rank = Math.max(rank, b.first().size() + (long) b.second().size());
+        }
+        double cells = Math.max(space * space, rank * (double) rank / 4);
+        return new Work(blocks.size(), (int) rank, (long) ((2.0 + 18.0 * threads) * cells * entry));
+    }
 }

@@ -42,6 +42,7 @@ final class UnitaryBlocksRun {
         if (plan.blocks().isEmpty()) {
             return Enclosure.ZERO;
         }
+        plan.work(spectra.overlaps().isReal()).requireRoom();
         IrrepTree tree = new IrrepTree(
                 spectra.overlaps(),
                 UnitaryBlocksPlan.Logs.of(spectra.first(), WideDouble.ONE),
