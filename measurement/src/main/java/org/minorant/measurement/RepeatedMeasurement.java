@@ -30,8 +30,8 @@ public final class RepeatedMeasurement {
     private RepeatedMeasurement(Povm povm, HypothesisPair pair, Enclosure norm) {
         this.povm = povm;
         this.pair = pair;
-        this.first = probabilities(povm, pair.first(), norm);
-        this.second = probabilities(povm, pair.second(), norm);
+        this.first = List.copyOf(probabilities(povm, pair.first(), norm));
+        this.second = List.copyOf(probabilities(povm, pair.second(), norm));
         this.outcomes = EnclosedSpectra.of(first, second);
     }
 
