@@ -16,8 +16,8 @@ record GuessedPeak(double lnT, double left, double right, double gap) {
 
     private static final int MOST = 60;
 
-    /** t falls by 2^-1, 2^-3, 2^-7, … down to 2^-2047 in search of a bracket. */
-    private static final int MOST_LEAPS = 11;
+    /** t falls by 2^-1, 2^-3, 2^-7, … down to 2^-262143 in search of a bracket. */
+    private static final int MOST_LEAPS = 18;
 
     /** How much further the next node is taken where the last have climbed in one direction. */
     private static final double FURTHER = 4;

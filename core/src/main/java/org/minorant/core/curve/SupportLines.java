@@ -31,8 +31,8 @@ public final class SupportLines {
     /** A relative gap worth that effort. */
     private static final double POOR = 0x1p-40;
 
-    /** t falls by 2^-1, 2^-3, 2^-7, … down to 2^-2047 while nothing above zero is found. */
-    private static final int MOST_LEAPS = 11;
+    /** t falls by 2^-1, 2^-3, 2^-7, … down to 2^-262143 while nothing above zero is found. */
+    private static final int MOST_LEAPS = 18;
 
     /** Samples in vain before chords are crossed instead. */
     private static final int IN_VAIN = 3;

@@ -103,7 +103,7 @@ final class SupportLinesTest {
             Curves.Counted counted = new Curves.Counted(c);
             Enclosure zero = supremum(counted, 0.75, FULL);
             assertTrue(zero.lower() == 0 && zero.lnUpper() < -1000, zero::toString);
-            int most = c.guess().isPresent() ? 1 : 11;
+            int most = c.guess().isPresent() ? 1 : 18;
             assertTrue(counted.values() <= most, () -> counted.values() + " values");
         }
     }
