@@ -59,4 +59,34 @@ interface ChannelOutputs {
      * @return the curves, in the order of the letters
      */
     LetterCurves againstMixture(int[] letters, double[] q);
+
+    /**
+     * Finds the mean of the curves of words against their mixture, for words drawn letter by letter.
+     *
+     * @param p the distribution of letters
+     * @param n the length of words
+     * @return one pair that stands for all words
+     * @throws org.minorant.core.InvalidInputException if there is none
+     */
+    WordCurves words(double[] p, int n);
+
+    /**
+     * Finds the curves of all words against n copies of a state.
+     *
+     * @param sigma the state
+     * @param n the length of words
+     * @return one pair that stands for all words
+     * @throws org.minorant.core.InvalidInputException if there is none
+     */
+    WordCurves wordsAgainst(DensityOperator sigma, int n);
+
+    /**
+     * Finds the curves of all words against n copies of the mixture Σ q_x W_x, exactly.
+     *
+     * @param q a distribution over all letters
+     * @param n the length of words
+     * @return one pair that stands for all words
+     * @throws org.minorant.core.InvalidInputException if there is none
+     */
+    WordCurves wordsAgainstMixture(double[] q, int n);
 }

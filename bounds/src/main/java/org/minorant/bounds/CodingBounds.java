@@ -13,7 +13,7 @@ import org.minorant.core.WideDouble;
 import org.minorant.core.curve.Curve;
 
 /**
- * What codes for one use of a classical-quantum channel can and cannot do, certified from both sides.
+ * What codes for one use of a classical-quantum channel, or for n uses ({@link #uses}), can and cannot do, certified from both sides.
  *
  * <p>A code of M messages is a letter x(m) for each message and a measurement {T_m}; its average error is 1 − (1/M) Σ_m Tr[W_x(m) T_m]. All
  * bounds here are on the <em>average</em> error probability. A converse for the average error holds for the largest error, too; an
@@ -33,15 +33,23 @@ import org.minorant.core.curve.Curve;
  */
 public final class CodingBounds {
 
+    /** A relative width of M that is small enough in many uses, where values may be costly. */
+    private static final double ENOUGH_FOR_WORDS = 0x1p-28;
+
     private final ClassicalQuantumChannel channel;
     private final Optional<double[]> chosenInput;
     private final Optional<DensityOperator> chosenOutput;
+    private final int uses;
     private final Lazy<Curve> mean;
     private final Lazy<LetterCurves> letters;
 
     private CodingBounds(
-            ClassicalQuantumChannel channel, Optional<double[]> chosenInput, Optional<DensityOperator> chosenOutput) {
+            ClassicalQuantumChannel channel,
+            Optional<double[]> chosenInput,
+            Optional<DensityOperator> chosenOutput,
+            int uses) {
         this.channel = channel;
+        this.uses = uses;
         this.chosenInput = chosenInput;
         this.chosenOutput = chosenOutput;
         this.mean = new Lazy<>(this::makeMean);
@@ -55,7 +63,7 @@ public final class CodingBounds {
      * @return the bounds
      */
     public static CodingBounds of(ClassicalQuantumChannel channel) {
-        return new CodingBounds(channel, Optional.empty(), Optional.empty());
+        return new CodingBounds(channel, Optional.empty(), Optional.empty(), 1);
     }
 
     /**
@@ -67,7 +75,7 @@ public final class CodingBounds {
      */
     public CodingBounds withInput(double... input) {
         double[] p = ChannelChecks.input("CodingBounds.withInput", input, channel.letters());
-        return new CodingBounds(channel, Optional.of(p), chosenOutput);
+        return new CodingBounds(channel, Optional.of(p), chosenOutput, uses);
     }
 
     /**
@@ -85,21 +93,77 @@ public final class CodingBounds {
                     channel.dimension() + ", as the outputs",
                     "give a state of the output system");
         }
-        return new CodingBounds(channel, chosenInput, Optional.of(sigma));
+        return new CodingBounds(channel, chosenInput, Optional.of(sigma), uses);
+    }
+
+    /**
+     * Returns the same bounds for n uses of the channel: codewords are words of n letters, drawn letter by letter from the input P for the achievability bounds, and the output state
+     * of the converse is σ^⊗n.
+     *
+     * <p><b>What is covered.</b> The words' curves must be one curve that copies of one pair give:
+     *
+     * <ul>
+     *   <li>two equiprobable kets, of any dimension;
+     *   <li>classical channels; for the converse only those where all letters have the same probabilities against the output state, up to their order, as symmetric channels have;
+     *   <li>letters on a qubit, mixed or pure, of the same Bloch length and the same angle to the Bloch vector of the output state, or of the same length if that is maximally mixed.
+     * </ul>
+     *
+     * Other channels are refused, when a bound is asked for that needs what they have not.
+     *
+     * <p><b>Accuracy.</b> Letters alike only up to rounding are taken for alike, and the enclosures widened for it. What the conditions on normalisation leave open grows like n roundings.
+     *
+     * @param n the number of uses, at least 1; it replaces an earlier one
+     * @return the bounds for n uses
+     * @throws InvalidInputException if n is below 1
+     */
+    public CodingBounds uses(int n) {
+        if (n < 1) {
+            throw new InvalidInputException(
+                    "CodingBounds.uses",
+                    "the number of uses is " + n,
+                    "at least 1",
+                    "give the length of the codewords");
+        }
+        return new CodingBounds(channel, chosenInput, chosenOutput, n);
     }
 
     private Curve makeMean() {
         double[] p = input();
+        if (uses > 1) {
+            return channel.structure().words(p, uses).curves().mean(saturation());
+        }
         int[] used = IntStream.range(0, p.length).filter(x -> p[x] > 0).toArray();
         double[] weights = Arrays.stream(used).mapToDouble(x -> p[x]).toArray();
         return channel.structure().againstMixture(used, p).mean(weights);
     }
 
+    /** As W_x ≤ ρ/P(x), the curve is its largest value from here on, in n uses from the n-th power. */
+    private WideDouble saturation() {
+        WideDouble one = LetterCurves.saturation(input()).max(WideDouble.of(2));
+        return WordCurves.power(Enclosure.of(one, one), uses).upperWide();
+    }
+
     private LetterCurves makeLetters() {
+        if (uses > 1) {
+            return (chosenOutput.isPresent()
+                            ? channel.structure().wordsAgainst(chosenOutput.get(), uses)
+                            : channel.structure()
+                                    .wordsAgainstMixture(channel.capacity().input(), uses))
+                    .curves();
+        }
         int[] all = IntStream.range(0, channel.letters()).toArray();
         return chosenOutput.isPresent()
                 ? channel.structure().against(all, chosenOutput.get())
                 : channel.structure().againstMixture(all, channel.capacity().input());
+    }
+
+    /**
+     * Returns the number of uses.
+     *
+     * @return n; 1 unless chosen with {@link #uses(int)}
+     */
+    public int uses() {
+        return uses;
     }
 
     /**
@@ -174,8 +238,7 @@ public final class CodingBounds {
     }
 
     private Enclosure others(double epsilon) {
-        WideDouble saturation = LetterCurves.saturation(input()).max(WideDouble.of(2));
-        return RandomCoding.others(mean.get(), epsilon, saturation);
+        return RandomCoding.others(mean.get(), epsilon, saturation(), uses == 1 ? 0 : ENOUGH_FOR_WORDS);
     }
 
     /**
@@ -253,11 +316,13 @@ public final class CodingBounds {
      */
     public Information converse(double epsilon) {
         ChannelChecks.error("CodingBounds.converse", epsilon);
-        return TraceMinimumConverse.messages(letters.get(), epsilon);
+        return uses == 1
+                ? TraceMinimumConverse.messages(letters.get(), epsilon)
+                : TraceMinimumConverse.messagesOfWords(letters.get(), epsilon);
     }
 
     /**
-     * Returns the weak converse ln M ≤ (C + h(ε))/(1 − ε) from Fano's and Holevo's inequalities.
+     * Returns the weak converse ln M ≤ (nC + h(ε))/(1 − ε) from Fano's and Holevo's inequalities.
      *
      * @param epsilon the average error allowed, between 0 and 1, both excluded
      * @return the bound
@@ -265,11 +330,28 @@ public final class CodingBounds {
      */
     public Information weakConverse(double epsilon) {
         ChannelChecks.error("CodingBounds.weakConverse", epsilon);
-        return FanoHolevo.messages(channel.capacity().value(), epsilon);
+        return FanoHolevo.messages(
+                Information.ofNats(channel.capacity().value().nats().times(uses)), epsilon);
     }
 
     /**
-     * Returns every bound on ln of the largest whole number of messages that one use carries with average error at most ε.
+     * Returns the normal approximation ln M ≈ nC − √(nV) Q⁻¹(ε), without a term of order ln n: no bound, and nothing is promised at any n.
+     *
+     * <p>C is the capacity, V = Σ P(x) V(W_x‖σ) the dispersion at the capacity input P that was found; where others attain the capacity, too, theirs may differ. Chosen inputs and output states
+     * do not enter. It is given for every channel.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the approximation
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Approximation normalApproximation(double epsilon) {
+        ChannelChecks.error("CodingBounds.normalApproximation", epsilon);
+        return NormalApproximation.of(channel, uses, epsilon);
+    }
+
+    /**
+     * Returns every bound on ln of the largest whole number of messages that the uses carry with average error at most ε. The bound of Hayashi and Nagaoka, never the best one, is
+     * listed for one use only: in many it takes long.
      *
      * @param epsilon the average error allowed, between 0 and 1, both excluded
      * @return the bounds in order, with their sources
@@ -278,18 +360,20 @@ public final class CodingBounds {
     public Ledger ledger(double epsilon) {
         ChannelChecks.error("CodingBounds.ledger", epsilon);
         Enclosure root = others(epsilon);
-        Enclosure older = HayashiNagaoka.others(mean.get(), epsilon, root);
         List<String> whole = List.of("whole messages");
         List<Bound> bounds = new ArrayList<>();
-        bounds.add(Bound.of(Side.LOWER, MessageCount.whole(older), HayashiNagaoka.THEOREM, whole));
+        if (uses == 1) {
+            Enclosure older = HayashiNagaoka.others(mean.get(), epsilon, root);
+            bounds.add(Bound.of(Side.LOWER, MessageCount.whole(older), HayashiNagaoka.THEOREM, whole));
+        }
         bounds.add(Bound.of(Side.LOWER, MessageCount.whole(root), RandomCoding.THEOREM, whole));
         bounds.add(Bound.of(Side.UPPER, converse(epsilon), TraceMinimumConverse.THEOREM, List.of()));
         bounds.add(Bound.of(Side.UPPER, weakConverse(epsilon), FanoHolevo.THEOREM, List.of()));
-        return Ledger.of("logarithm of the largest number of messages at average error " + epsilon, bounds);
+        return Ledger.of("logarithm of the largest number of messages at average error " + epsilon + inUses(), bounds);
     }
 
     /**
-     * Returns every bound on the least average error of a code of M messages in one use.
+     * Returns every bound on the least average error of a code of M messages. That of Hayashi and Nagaoka is listed for one use only.
      *
      * @param messages M, at least 1
      * @return the bounds in order, with their sources
@@ -299,7 +383,13 @@ public final class CodingBounds {
         List<Bound> bounds = new ArrayList<>();
         bounds.add(Bound.of(Side.LOWER, converseError(messages), TraceMinimumConverse.THEOREM, List.of()));
         bounds.add(Bound.of(Side.UPPER, achievableError(messages), RandomCoding.THEOREM, List.of()));
-        bounds.add(Bound.of(Side.UPPER, hayashiNagaokaError(messages), HayashiNagaoka.THEOREM, List.of()));
-        return Ledger.of("least average error of a code of " + messages + " messages", bounds);
+        if (uses == 1) {
+            bounds.add(Bound.of(Side.UPPER, hayashiNagaokaError(messages), HayashiNagaoka.THEOREM, List.of()));
+        }
+        return Ledger.of("least average error of a code of " + messages + " messages" + inUses(), bounds);
+    }
+
+    private String inUses() {
+        return uses == 1 ? "" : " in " + uses + " uses";
     }
 }

@@ -191,9 +191,36 @@ final class DiagonalOutputs implements ChannelOutputs {
         for (int x : letters) {
             pairs.add(PositivePair.ofSpectra(rows[x], s));
         }
-        // a sum of n positive products, each rounded, is within n + 1 roundings of the exact one
+        return new LetterCurves(pairs, traces, traceOfMixture(q));
+    }
+
+    /** A sum of n positive products, each rounded, is within n + 1 roundings of the exact one. */
+    private Enclosure traceOfMixture(double[] q) {
         double rounding = (rows.length + 4) * 0x1p-53;
         Enclosure relative = Enclosure.of(1 - rounding, 1 + rounding);
-        return new LetterCurves(pairs, traces, Traces.sum(q).times(traces).times(relative));
+        return Traces.sum(q).times(traces).times(relative);
+    }
+
+    @Override
+    public WordCurves words(double[] p, int n) {
+        if (!isShallow(p)) {
+            throw WordCurves.notCovered("products of probabilities of letters and outcomes below " + SHALLOW);
+        }
+        return new CommutingWords(rows, traces, n).mean(p, mixture(p));
+    }
+
+    @Override
+    public WordCurves wordsAgainst(DensityOperator sigma, int n) {
+        if (!isDiagonal(sigma)) {
+            throw WordCurves.notCovered("an output state that does not commute with the letters");
+        }
+        return new CommutingWords(rows, traces, n).against(diagonal(sigma), Traces.of(sigma));
+    }
+
+    @Override
+    public WordCurves wordsAgainstMixture(double[] q, int n) {
+        return isShallow(q)
+                ? new CommutingWords(rows, traces, n).against(mixture(q), traceOfMixture(q))
+                : wordsAgainst(DensityOperator.mixture(states(), q), n);
     }
 }

@@ -20,6 +20,7 @@ final class LetterCurves {
     private final List<PositivePair> pairs;
     private final Enclosure traces;
     private final Enclosure factor;
+    private final WideDouble off;
 
     /**
      * Collects the curves.
@@ -35,6 +36,32 @@ final class LetterCurves {
                 .dividedBy(traces)
                 .hull(Enclosure.ONE.dividedBy(trace))
                 .hull(Enclosure.ONE);
+        this.off = WideDouble.ZERO;
+    }
+
+    private LetterCurves(WordCurves words) {
+        this.pairs = List.of(words.pair());
+        this.traces = words.traces();
+        this.factor = words.factor();
+        this.off = words.off();
+    }
+
+    /** The curves of words that are all alike, taken as letters. */
+    static LetterCurves ofWords(WordCurves words) {
+        return new LetterCurves(words);
+    }
+
+    /**
+     * The common curve of words that are all alike, or the mean of all words in place of it.
+     *
+     * @param saturation a point from which on the curve is the words' trace
+     * @return t ↦ Tr[W ∧ tρ]
+     */
+    Curve mean(WideDouble saturation) {
+        Enclosure most = traces.hull(Enclosure.ONE);
+        return guessed(
+                t -> t.compareTo(saturation) >= 0 ? most : least(WideDouble.ONE, t),
+                (pair, t) -> lnEstimate(pair, 0, t));
     }
 
     /**
@@ -82,6 +109,16 @@ final class LetterCurves {
         return guessed(s -> least(WideDouble.ONE, s), (pair, s) -> lnEstimate(pair, 0, s));
     }
 
+    /**
+     * t ↦ min over x of Tr[tW_x ∧ weight · σ].
+     *
+     * @param weight a positive number
+     */
+    Curve least(WideDouble weight) {
+        double ln = weight.lnDown();
+        return guessed(t -> least(t, weight), (pair, t) -> lnEstimate(pair, t, ln));
+    }
+
     private Curve guessed(Curve values, ToDoubleBiFunction<PositivePair, Double> estimate) {
         Guess least = t -> pairs.stream()
                 .mapToDouble(pair -> estimate.applyAsDouble(pair, t))
@@ -97,7 +134,7 @@ final class LetterCurves {
             most = most.max(pair.firstTrace().upperWide())
                     .max(pair.secondTrace().upperWide());
         }
-        return most.timesUp(factor.upperWide());
+        return most.timesUp(factor.upperWide()).plusUp(off);
     }
 
     private Enclosure least(WideDouble a, WideDouble b) {
@@ -105,6 +142,11 @@ final class LetterCurves {
         for (PositivePair pair : pairs) {
             least = least.min(pair.traceMinimum(a, b));
         }
-        return least.times(factor);
+        Enclosure value = least.times(factor);
+        if (off.signum() == 0) {
+            return value;
+        }
+        WideDouble d = off.timesUp(a);
+        return value.plus(Enclosure.of(d.negate(), d)).max(Enclosure.ZERO);
     }
 }

@@ -1,7 +1,9 @@
 package org.minorant.bounds;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
+import java.util.stream.IntStream;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.EnclosedSpectrum;
@@ -164,5 +166,32 @@ final class MatrixOutputs implements ChannelOutputs {
             pairs.add(PositivePair.of(outputs.get(x), mixture));
         }
         return new LetterCurves(pairs, traces, Traces.sum(q).times(traces));
+    }
+
+    @Override
+    public WordCurves words(double[] p, int n) {
+        int[] used = IntStream.range(0, p.length).filter(x -> p[x] > 0).toArray();
+        List<DensityOperator> letters =
+                Arrays.stream(used).mapToObj(outputs::get).toList();
+        List<LetterFactor> columns = Arrays.stream(used).mapToObj(factors::get).toList();
+        SymmetricWords words = new SymmetricWords(letters, columns, traces, n);
+        DensityOperator mixture = mixtureState(p);
+        return words.areTwoKets() && p[used[0]] == p[used[1]]
+                ? words.ofTwoKets(mixture, Traces.sum(p))
+                : words.against(mixture, Traces.sum(p).times(traces));
+    }
+
+    @Override
+    public WordCurves wordsAgainst(DensityOperator sigma, int n) {
+        return new SymmetricWords(outputs, factors, traces, n).against(sigma, Traces.of(sigma));
+    }
+
+    @Override
+    public WordCurves wordsAgainstMixture(double[] q, int n) {
+        SymmetricWords words = new SymmetricWords(outputs, factors, traces, n);
+        DensityOperator mixture = mixtureState(q);
+        return words.areTwoKets() && q[0] == q[1]
+                ? words.ofTwoKets(mixture, Traces.sum(q))
+                : words.against(mixture, Traces.sum(q).times(traces));
     }
 }

@@ -19,6 +19,9 @@ final class RandomCoding {
             "one-shot random coding, f(M-1)",
             "H.-C. Cheng, PRX Quantum 4, 040330 (2023), one-shot achievability (theorem number from memory)");
 
+    /** Brackets of more binary digits are halved first. */
+    private static final long LONG = 64;
+
     private RandomCoding() {}
 
     /** The bound on the error with M − 1 other messages. */
@@ -32,9 +35,15 @@ final class RandomCoding {
      * @param f the curve of the channel and its input
      * @param epsilon the error allowed
      * @param saturation a point where f is 1: W_x ≤ ρ_B/P(x), so the inverse of the least positive probability
+     * @param relativeGap a relative width that is small enough
      */
-    static Enclosure others(Curve f, double epsilon, WideDouble saturation) {
-        Enclosure root = CurveRoot.of(f, WideDouble.of(epsilon), WideDouble.ONE, saturation, 0);
+    static Enclosure others(Curve f, double epsilon, WideDouble saturation, double relativeGap) {
+        WideDouble level = WideDouble.of(epsilon);
+        WideDouble[] bracket = {WideDouble.ONE, saturation};
+        if (f.guess().isEmpty() && saturation.exponent() > LONG) {
+            bracket = ErrorWeight.halved(f, level, bracket[0], bracket[1]);
+        }
+        Enclosure root = CurveRoot.of(f, level, bracket[0], bracket[1], relativeGap);
         // an end at 1 is one where f exceeds the level
         return root.upperWide().compareTo(WideDouble.ONE) > 0
                 ? root

@@ -1,5 +1,6 @@
 package org.minorant.bounds;
 
+import java.util.Optional;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Information;
 import org.minorant.core.WideDouble;
@@ -25,6 +26,9 @@ final class TraceMinimumConverse {
     /** A relative gap that is always enough. */
     private static final double ENOUGH = 0x1p-46;
 
+    /** The same for words, in nats: certified values may be costly, and this is far below the gap between the two sides. */
+    private static final double ENOUGH_FOR_WORDS = 0x1p-28;
+
     private TraceMinimumConverse() {}
 
     /**
@@ -35,7 +39,39 @@ final class TraceMinimumConverse {
      */
     static Information messages(LetterCurves letters, double epsilon) {
         Enclosure sup = supremum(letters.least(), letters.most(), Enclosure.exact(epsilon));
-        return Information.ofNats(sup.ln().negate().max(Enclosure.ZERO)).withSource(THEOREM.toString());
+        return messages(sup.ln().negate());
+    }
+
+    private static Information messages(Enclosure nats) {
+        return Information.ofNats(nats.max(Enclosure.ZERO)).withSource(THEOREM.toString());
+    }
+
+    /**
+     * −ln S for letters that are words of many uses, where S lies hundreds of decades down. With a weight s on σ at which F(1) ≤ ε for
+     *
+     * <pre>F(t) = min over x of Tr[tW_x ∧ sσ],   sS = sup over t of F(t) − tε,</pre>
+     *
+     * only t ≤ 1 matter: F(t) ≤ tF(1) ≤ tε beyond, as F is concave. So F is replaced by F(1) there, which keeps it concave and nondecreasing, and the search is a short one.
+     *
+     * @param words the curves of all words against a σ of trace one
+     * @param epsilon the average error
+     */
+    static Information messagesOfWords(LetterCurves words, double epsilon) {
+        Optional<WideDouble> weight = ErrorWeight.of(words.leastAgainst(), epsilon);
+        if (weight.isEmpty()) {
+            return messages(words, epsilon);
+        }
+        WideDouble s = weight.get();
+        Curve f = words.least(s);
+        Enclosure last = f.at(WideDouble.ONE);
+        Curve values = t -> t.compareTo(WideDouble.ONE) >= 0 ? last : f.at(t);
+        Curve cut = f.guess()
+                .map(g -> values.withGuess(t -> g.lnValue(Math.min(t, 0))))
+                .orElse(values);
+        Enclosure sup = new SupportLines(cut, words.most(), last.upperWide())
+                .at(Enclosure.exact(epsilon), ENOUGH_FOR_WORDS, 0)
+                .value();
+        return messages(Enclosure.of(s, s).ln().minus(sup.ln()));
     }
 
     /**

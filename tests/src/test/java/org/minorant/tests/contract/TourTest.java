@@ -6,6 +6,7 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 import java.math.BigDecimal;
 import java.util.List;
 import org.junit.jupiter.api.Test;
+import org.minorant.bounds.Approximation;
 import org.minorant.bounds.Capacity;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.bounds.CodingBounds;
@@ -150,11 +151,20 @@ class TourTest {
         CodingBounds once = CodingBounds.of(channel);
         Enclosure reached = once.achievableError(2); // some code of two messages has at most this average error
         Information limit = once.converse(0.25); // ln M that no code with average error 0.25 exceeds
+        CodingBounds many = once.uses(1000); // words of a thousand letters
+        Information sure = many.achievable(1e-3); // some code has as many messages: about 990.0 bits
+        Information most = many.converse(1e-3); // no code has more: about 1000.0 bits
+        Approximation about = many.normalApproximation(1e-3); // nC − √(nV) Q⁻¹(ε): a type of its own, no bound
         // end snippet
 
         // three kets in a plane whose average is the maximally mixed state: one bit
         assertEquals(1, capacity.value().bits().midpoint(), 1e-9);
         assertTrue(reached.upper() < 1);
         assertTrue(limit.nats().lower() > 0 && limit.nats().upper() < Double.POSITIVE_INFINITY);
+        // against the maximally mixed state of 1000 qubits, f(t) is t/2^1000, so M − 1 is 2^1000 · ε and M at most
+        // 2^1000/(1 − ε)
+        assertEquals(1000 + Math.log(1e-3) / Math.log(2), sure.bits().midpoint(), 1e-6);
+        assertEquals(1000 - Math.log1p(-1e-3) / Math.log(2), most.bits().midpoint(), 1e-6);
+        assertEquals(1000, about.bits(), 1e-4);
     }
 }

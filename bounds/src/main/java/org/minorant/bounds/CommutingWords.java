@@ -1,0 +1,80 @@
+package org.minorant.bounds;
+
+import org.minorant.core.Enclosure;
+import org.minorant.core.pair.PositivePair;
+
+/**
+ * n uses of a classical channel. Over words drawn letter by letter from P the mean of the curves is one curve, that of n copies of the commuting pair
+ *
+ * <pre>A = (P(x) W(y|x)),   B = (P(x) Q(y)),   Q = Σ_x P(x) W_x.</pre>
+ *
+ * <p>Against an output state alone, the curve of a word depends on its letters only through the pairs (W(y|x), Q(y)), in whatever order of y. Where these are the
+ * same for all letters, as for symmetric channels, so are the curves of all words.
+ */
+final class CommutingWords {
+
+    /** Letters whose sorted eigenvalues differ by more than this, relatively, are not alike. */
+    private static final double ALIKE = 0x1p-44;
+
+    private static final double U = 0x1p-53;
+
+    private final double[][] rows;
+    private final Enclosure traces;
+    private final int n;
+
+    CommutingWords(double[][] rows, Enclosure traces, int n) {
+        this.rows = rows;
+        this.traces = traces;
+        this.n = n;
+    }
+
+    /**
+     * The mean over all words.
+     *
+     * @param p the distribution of letters
+     * @param q its output, as rounded
+     */
+    WordCurves mean(double[] p, double[] q) {
+        int outcomes = q.length;
+        double[] a = new double[rows.length * outcomes];
+        double[] b = new double[a.length];
+        for (int x = 0; x < rows.length; x++) {
+            for (int y = 0; y < outcomes; y++) {
+                a[x * outcomes + y] = p[x] * rows[x][y];
+                b[x * outcomes + y] = p[x] * q[y];
+            }
+        }
+        MergedSpectra merged = MergedSpectra.of(a, b);
+        Enclosure sum = Traces.sum(p);
+        Enclosure one = Enclosure.ONE;
+        Enclosure scaleA = one.dividedBy(sum.times(traces));
+        Enclosure slack = scaleA.hull(scaleA.dividedBy(sum)).hull(one);
+        double error = merged.error() + (rows.length + 8) * U;
+        return WordCurves.of(merged.copies(n), sum.times(traces), slack, error, 0, n);
+    }
+
+    /**
+     * All words against an output state.
+     *
+     * @param s its eigenvalues
+     * @param trace what holds their sum, over its true value
+     */
+    WordCurves against(double[] s, Enclosure trace) {
+        MergedSpectra first = MergedSpectra.of(rows[0], s);
+        double error = first.error();
+        for (int x = 1; x < rows.length; x++) {
+            MergedSpectra other = MergedSpectra.of(rows[x], s);
+            double distance = first.distance(other);
+            if (!(distance <= ALIKE)) {
+                throw WordCurves.notCovered(
+                        "the rows of letters 0 and " + x
+                                + " against the output state are not alike, and the converse for such channels needs the types of words");
+            }
+            error = Math.max(error, first.error() + other.error() + 2 * distance);
+        }
+        PositivePair pair = first.copies(n);
+        Enclosure one = Enclosure.ONE;
+        Enclosure slack = one.dividedBy(traces).hull(one.dividedBy(trace)).hull(one);
+        return WordCurves.of(pair, traces, slack, error, 0, n);
+    }
+}
