@@ -277,4 +277,30 @@ public final class Draw {
     public static double logUniform(RandomGenerator random, double leastPower, double mostPower) {
         return StrictMath.pow(10, leastPower + (mostPower - leastPower) * random.nextDouble());
     }
+
+    /**
+     * The n-th tensor power; every entry is a product of n entries, rounded after each factor.
+     *
+     * @param m a matrix
+     * @param n the number of factors, at least 1
+     * @return m ⊗ … ⊗ m
+     */
+    public static Matrix power(Matrix m, int n) {
+        Matrix p = m;
+        for (int f = 1; f < n; f++) {
+            Matrix t = new Matrix(p.rows() * m.rows(), p.columns() * m.columns());
+            for (int i = 0; i < t.rows(); i++) {
+                for (int j = 0; j < t.columns(); j++) {
+                    double a = p.re[i / m.rows()][j / m.columns()];
+                    double b = p.im[i / m.rows()][j / m.columns()];
+                    double c = m.re[i % m.rows()][j % m.columns()];
+                    double d = m.im[i % m.rows()][j % m.columns()];
+                    t.re[i][j] = a * c - b * d;
+                    t.im[i][j] = a * d + b * c;
+                }
+            }
+            p = t;
+        }
+        return p;
+    }
 }

@@ -88,11 +88,18 @@ record ColumnPair(EnclosedMatrix x, EnclosedMatrix y, EnclosedMatrix gx, Enclose
                 .orElse(Enclosure.ZERO);
     }
 
-    /** Tr[wa XX* ∧ wb YY*] as the rotations find it, without proof. */
-    WideDouble estimate(double wa, double wb, Runnable checkpoint) {
-        return weighted(wa, wb)
-                .map(w -> WideDouble.of(w.sweep(checkpoint).total(), 2L * w.exponent()))
-                .orElse(WideDouble.ZERO);
+    /** Tr[wa XX* ∧ wb YY*] as the rotations find it, without proof; an enclosure if they found it hard. */
+    Enclosure estimate(double wa, double wb, Runnable checkpoint) {
+        return weighted(wa, wb).map(w -> estimate(w, checkpoint)).orElse(Enclosure.ZERO);
+    }
+
+    private static Enclosure estimate(WeightedColumns w, Runnable checkpoint) {
+        HyperbolicSweeps s = w.sweep(checkpoint);
+        if (s.isDoubtful()) {
+            return RotationCertificate.enclose(w, s, checkpoint);
+        }
+        WideDouble total = WideDouble.of(s.total(), 2L * w.exponent());
+        return Enclosure.of(total, total);
     }
 
     private Optional<WeightedColumns> weighted(double wa, double wb) {

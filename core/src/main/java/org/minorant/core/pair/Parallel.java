@@ -46,7 +46,12 @@ final class Parallel {
      * @return the results in order
      */
     static <T, R> List<R> inOrder(Effort effort, List<T> items, Function<T, Part<R>> prepare) {
-        int threads = Math.min(Runtime.getRuntime().availableProcessors(), items.size());
+        return inOrder(effort, items, prepare, Runtime.getRuntime().availableProcessors());
+    }
+
+    /** The same on at most so many threads. */
+    static <T, R> List<R> inOrder(Effort effort, List<T> items, Function<T, Part<R>> prepare, int most) {
+        int threads = Math.min(most, items.size());
         if (threads <= 1) {
             List<R> results = new ArrayList<>();
             for (T item : items) {

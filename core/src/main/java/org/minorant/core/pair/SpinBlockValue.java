@@ -29,7 +29,7 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
      * @param a weights of the columns of A, not increasing
      * @param b weights of the columns of B
      * @param window overlaps of the columns
-     * @param proven whether to enclose; the estimate is both ends otherwise
+     * @param proven whether to enclose; otherwise the ends are those of an estimate
      * @param stop passed many times a second
      */
     Enclosure of(
@@ -51,15 +51,14 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
             return dense;
         }
         Enclosure rotated = share(byRotations(SpinBlock.columns(x, y, window), proven, stop), leftOut, shift);
-        return proven ? dense.intersect(rotated) : rotated;
+        if (proven) {
+            return dense.intersect(rotated);
+        }
+        return rotated.relativeWidth() <= dense.relativeWidth() ? rotated : dense;
     }
 
     private static Enclosure byRotations(ColumnPair columns, boolean proven, Runnable stop) {
-        if (proven) {
-            return columns.enclose(1, 1, stop);
-        }
-        WideDouble e = columns.estimate(1, 1, stop);
-        return Enclosure.of(e, e);
+        return proven ? columns.enclose(1, 1, stop) : columns.estimate(1, 1, stop);
     }
 
     /** The share from a value in units of 2^shift; it is no more than the traces allow. */

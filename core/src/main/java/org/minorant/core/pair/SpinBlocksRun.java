@@ -30,6 +30,11 @@ final class SpinBlocksRun {
 
     /** The share of every block of the plan. */
     List<Enclosure> shares() {
+        return shares(Runtime.getRuntime().availableProcessors());
+    }
+
+    /** The same on at most so many threads. */
+    List<Enclosure> shares(int threads) {
         List<SpinBlocksPlan.Block> blocks = plan.blocks();
         if (blocks.isEmpty()) {
             return List.of();
@@ -37,18 +42,22 @@ final class SpinBlocksRun {
         plan.work().requireRoom();
         SpinOverlaps overlaps = new SpinOverlaps(spectra.cos(), spectra.sin(), plan.mostFirst(), plan.mostSecond());
         AtomicLong done = new AtomicLong();
-        return Parallel.inOrder(effort, blocks, block -> {
-            while (overlaps.order() < block.order()) {
-                overlaps.step();
-                effort.checkpoint();
-            }
-            SpinOverlaps.Window window = overlaps.window(block.first(), block.second());
-            return stop -> {
-                Enclosure f = value(block, window, stop);
-                effort.listener().onProgress(done.incrementAndGet(), blocks.size());
-                return f;
-            };
-        });
+        return Parallel.inOrder(
+                effort,
+                blocks,
+                block -> {
+                    while (overlaps.order() < block.order()) {
+                        overlaps.step();
+                        effort.checkpoint();
+                    }
+                    SpinOverlaps.Window window = overlaps.window(block.first(), block.second());
+                    return stop -> {
+                        Enclosure f = value(block, window, stop);
+                        effort.listener().onProgress(done.incrementAndGet(), blocks.size());
+                        return f;
+                    };
+                },
+                threads);
     }
 
     private Enclosure value(SpinBlocksPlan.Block block, SpinOverlaps.Window window, Runnable stop) {

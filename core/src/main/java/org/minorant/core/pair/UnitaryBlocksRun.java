@@ -151,8 +151,10 @@ final class UnitaryBlocksRun {
         double x = far ? edge(wa, wb) : wa.toDoubleDown();
         double y = far ? edge(wb, wa) : wb.toDoubleDown();
         if (!proven) {
-            WideDouble e = columns.estimate(x, y, stop).timesDown(factor).timesPowerOfTwo(shift);
-            return Enclosure.of(e, e);
+            Enclosure e = columns.estimate(x, y, stop);
+            WideDouble upper =
+                    e.upperWide().isInfinite() ? e.upperWide() : e.upperWide().timesUp(factor);
+            return bounded(block, Enclosure.of(e.lowerWide().timesDown(factor), upper), shift);
         }
         Enclosure f = columns.enclose(x, y, stop);
         WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesDown(factor);

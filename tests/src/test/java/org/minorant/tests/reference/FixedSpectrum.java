@@ -7,8 +7,8 @@ import java.math.BigInteger;
  * then QR steps with Wilkinson's shift (G. H. Golub and C. F. Van Loan, Matrix Computations, 4th ed., 8.3; from memory).
  *
  * <p><b>Error.</b> All transformations are unitary up to rounding, because what they are made from is scaled to full length first. One
- * transformation of n × n numbers below 2 makes errors of at most 40 n · 2^-bits in norm; there are fewer than 8 n² of them, and with n ≤ 32 the
- * sum stays below 2^22 · 2^-bits, together with what deflation drops. {@link #GUARD} leaves another 2^18.
+ * transformation of n × n numbers below 2 makes errors of at most 40 n · 2^-bits in norm; there are fewer than 8 n² of them, and the
+ * sum, together with what deflation drops, stays below 2^24 · 2^-bits for n ≤ 32 and below 2^35 · 2^-bits for n ≤ 400. {@link #GUARD} leaves the rest.
  */
 final class FixedSpectrum {
 

@@ -183,4 +183,64 @@ class ReferenceTest {
         assertEquals(.385662480812, d.sandwiched(0.5).doubleValue(), 1e-12);
         assertEquals(1.484776555060, d.sandwiched(3).doubleValue(), 1e-12);
     }
+
+    /** Blocks from polynomials against one decomposition of the tensor power, whose entries are exact doubles: Bloch vectors are multiples of 2^-7, so that four factors take 32 digits. */
+    @Test
+    void copiesByBlocksAgreeWithTensorPowers() {
+        double[][][] pairs = {
+            {{0.25, -0.5, 0.375}, {0.5, 0.125, -0.25}},
+            {{0, 0, 0.90625}, {0.6015625, 0, 0.5}},
+            {{0.5, 0.25, 0.5}, {0.25, 0.5, -0.5}},
+            {{0, 1, 0}, {0.5, 0.5, 0.5}}
+        };
+        BigDecimal p = new BigDecimal("0.3");
+        BigDecimal q = new BigDecimal("0.7");
+        for (double[][] r : pairs) {
+            for (int n = 1; n <= 4; n++) {
+                Reference dense = ReferenceMinimum.of(p, power(r[0], n), q, power(r[1], n));
+                Reference blocks = ReferenceCopies.of(p, bloch(r[0]), q, bloch(r[1]), n);
+                BigDecimal most = dense.error().add(blocks.error());
+                assertTrue(dense.value().subtract(blocks.value()).abs().compareTo(most) <= 0, n + ": " + blocks);
+                assertTrue(blocks.isSharp(), n + ": " + blocks);
+            }
+        }
+    }
+
+    private static ReferenceOperator bloch(double... r) {
+        return ReferenceOperator.ofBloch(r[0], r[1], r[2]);
+    }
+
+    private static ReferenceOperator power(double[] r, int n) {
+        Matrix one =
+                new Matrix(new double[][] {{(1 + r[2]) / 2, r[0] / 2}, {r[0] / 2, (1 - r[2]) / 2}}, new double[][] {
+                    {0, -r[1] / 2}, {r[1] / 2, 0}
+                });
+        Matrix m = Draw.power(one, n);
+        return ReferenceOperator.ofEntries(m.re(), m.im());
+    }
+
+    /** Source: check values of n copies, computed with 100-digit arithmetic by an independent program for decimal 0.9 and 0.6. */
+    @Test
+    void copiesOfTheTwoBlochStates() {
+        BigDecimal half = new BigDecimal("0.5");
+        Reference f = ReferenceCopies.of(half, bloch(0, 0, 0.9), half, bloch(0.6, 0, 0.5), 40);
+        // each copy moves by 2^-53, seen through the smallest eigenvalue 0.05 at most
+        assertEquals(0.002728244188532257295161601, f.value().doubleValue(), 40 * 20 * 0x1p-53 * 0.0028);
+    }
+
+    @Test
+    void moreDigitsOfCopiesStayWithinTheStatedError() {
+        Random random = new Random(5);
+        for (int n : new int[] {2, 7, 16}) {
+            double[] p = {1 - 1e-9, 1e-9};
+            Matrix x = Draw.withSpectrum(Draw.unitary(random, 2), p).hermitian();
+            ReferenceOperator a = ReferenceOperator.ofEntries(x.re(), x.im());
+            ReferenceOperator b = bloch(0.3 * random.nextDouble(), 0.4, 0.5 * random.nextDouble());
+            BigDecimal t = new BigDecimal("0.01");
+            Reference rough = ReferenceCopies.at(192, ONE, a, t, b, n);
+            Reference fine = ReferenceCopies.at(400, ONE, a, t, b, n);
+            assertTrue(rough.value().subtract(fine.value()).abs().compareTo(rough.error()) <= 0, "n = " + n);
+            assertTrue(rough.error().compareTo(fine.error()) > 0);
+        }
+    }
 }
