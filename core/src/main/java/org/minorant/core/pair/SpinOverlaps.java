@@ -1,5 +1,7 @@
 package org.minorant.core.pair;
 
+import java.util.ArrayList;
+import java.util.List;
 import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.ProductError;
 
@@ -17,8 +19,8 @@ import org.minorant.core.internal.number.ProductError;
  * Frobenius norms of the rounding errors of all steps. Beside it every entry carries its own radius, propagated with absolute values; that grows where terms cancel, but keeps the
  * relative accuracy of entries deep in the corner, where none do. The smaller one holds.
  *
- * <p><b>Rounding of a step.</b> c, s, α, β carry relative errors below 2^-101 each; with the products and sums of the step, each at most 2^-102 of the terms, an entry errs by at most 2^-97 of the
- * sum of its four terms' moduli. Below 2^-1000 gradual underflow adds at most 2^-1060.
+ * <p><b>Rounding of a step.</b> c, s carry relative errors below 2^-103, α, β (a root, the quotient of a root, a product) below 2^-100; with the products and sums of the step, each at
+ * most 2^-102 of the terms, an entry errs by at most 2^-97 of the sum of its four terms' moduli. Below 2^-1000 gradual underflow adds at most 2^-1060.
  */
 final class SpinOverlaps {
 
@@ -30,6 +32,12 @@ final class SpinOverlaps {
     private final int columns;
     private final DoubleDouble cos;
     private final DoubleDouble sin;
+    /** √0, √1, √2, … as far as the order has come. */
+    private final List<DoubleDouble> roots = new ArrayList<>();
+
+    /** 1/√k. */
+    private DoubleDouble inverse = DoubleDouble.ONE;
+
     private int order;
     private double normError;
     private double[][] hi;
@@ -110,8 +118,8 @@ final class SpinOverlaps {
         java.util.Arrays.fill(half[12], 0);
         java.util.Arrays.fill(half[13], 0);
         for (int a = 0; a <= last; a++) {
-            DoubleDouble alpha = root(k - a, k);
-            DoubleDouble beta = root(a, k);
+            DoubleDouble alpha = root(k - a);
+            DoubleDouble beta = root(a);
             split(a);
             combine(a, alpha, beta);
             square += finish(a, alpha.hi(), beta.hi());
@@ -140,16 +148,19 @@ final class SpinOverlaps {
         half[j] = x;
     }
 
-    private static DoubleDouble root(int numerator, int k) {
-        return numerator <= 0
-                ? DoubleDouble.ZERO
-                : DoubleDouble.of(numerator).dividedBy(DoubleDouble.of(k)).sqrt();
+    /** √(i/k): the table's root times 1/√k. */
+    private DoubleDouble root(int i) {
+        return i <= 0 ? DoubleDouble.ZERO : roots.get(i).times(inverse);
     }
 
     private void prepare(int k) {
+        while (roots.size() <= k) {
+            roots.add(DoubleDouble.of(roots.size()).sqrt());
+        }
+        inverse = roots.get(k).dividedBy(DoubleDouble.of(k));
         for (int b = 0; b < columns; b++) {
-            DoubleDouble alpha = root(k - b, k);
-            DoubleDouble beta = root(Math.min(b, k), k);
+            DoubleDouble alpha = root(k - b);
+            DoubleDouble beta = root(Math.min(b, k));
             put(0, b, cos.times(alpha));
             put(2, b, sin.times(beta));
             put(4, b, sin.times(alpha));
