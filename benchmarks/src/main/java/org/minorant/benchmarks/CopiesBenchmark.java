@@ -24,7 +24,7 @@ import org.openjdk.jmh.annotations.Warmup;
 @State(Scope.Thread)
 @BenchmarkMode(Mode.SingleShotTime)
 @OutputTimeUnit(TimeUnit.MILLISECONDS)
-@Warmup(iterations = 3)
+@Warmup(iterations = 15)
 @Measurement(iterations = 5)
 @Fork(1)
 public class CopiesBenchmark {

@@ -50,6 +50,8 @@ final class SpinOverlaps {
     private final double[][] coefficients;
     /** The two halves of a row: t and u of this row, u of the row before, in high and low words; sums of moduli and radii. */
     private final double[][] half;
+    /** Radii of a row, moved by one column; the first stays zero. */
+    private final double[] shifted;
 
     SpinOverlaps(DoubleDouble cos, DoubleDouble sin, int rows, int columns) {
         this.cos = cos;
@@ -64,6 +66,7 @@ final class SpinOverlaps {
         nextRadius = new double[rows][columns];
         coefficients = new double[8][columns];
         half = new double[14][columns];
+        shifted = new double[columns];
         hi[0][0] = 1;
     }
 
@@ -180,7 +183,7 @@ final class SpinOverlaps {
         double[] r = radius[a];
         double[] ph = half[0];
         double[] pl = half[1];
-        double[] pr = new double[columns];
+        double[] pr = shifted;
         System.arraycopy(h, 0, ph, 1, columns - 1);
         System.arraycopy(l, 0, pl, 1, columns - 1);
         System.arraycopy(r, 0, pr, 1, columns - 1);
@@ -188,15 +191,22 @@ final class SpinOverlaps {
         pl[0] = 0;
         mix(h, l, coefficients[0], coefficients[1], ph, pl, coefficients[2], coefficients[3], half[2], half[3]);
         mix(h, l, coefficients[4], coefficients[5], ph, pl, coefficients[6], coefficients[7], half[4], half[5]);
-        moduli(h, ph, coefficients[0], coefficients[2], half[8]);
-        moduli(r, pr, coefficients[0], coefficients[2], half[9]);
-        moduli(h, ph, coefficients[4], coefficients[6], half[10]);
-        moduli(r, pr, coefficients[4], coefficients[6], half[11]);
+        moduli(h, ph, coefficients, half[8], half[10]);
+        moduli(r, pr, coefficients, half[9], half[11]);
     }
 
-    private static void moduli(double[] x, double[] y, double[] p, double[] q, double[] out) {
-        for (int b = 0; b < out.length; b++) {
-            out[b] = Math.abs(x[b] * p[b]) + Math.abs(y[b] * q[b]);
+    /** |x|cα + |y|sβ and |x|sα + |y|cβ. */
+    private static void moduli(double[] x, double[] y, double[][] c, double[] t, double[] u) {
+        double[] ca = c[0];
+        double[] sb = c[2];
+        double[] sa = c[4];
+        double[] cb = c[6];
+        for (int b = 0; b < t.length; b++) {
+            double p = Math.abs(x[b]);
+            double q = Math.abs(y[b]);
+            t[b] = p * ca[b] + q * sb[b];
+            // cβ is held with a minus sign
+            u[b] = p * sa[b] - q * cb[b];
         }
     }
 
