@@ -140,7 +140,7 @@ public final class CodingBounds {
     /** As W_x ≤ ρ/P(x), the curve is its largest value from here on, in n uses from the n-th power. */
     private WideDouble saturation() {
         WideDouble one = LetterCurves.saturation(input()).max(WideDouble.of(2));
-        return WordCurves.power(Enclosure.of(one, one), uses).upperWide();
+        return Enclosure.of(one, one).power(uses).upperWide();
     }
 
     private LetterCurves makeLetters() {

@@ -27,8 +27,8 @@ final class FidelityFromAbove implements TestingBound {
     static Enclosure fidelity(TestingProblem problem) {
         StatePair s = problem.spectra();
         int n = problem.copies();
-        Enclosure a = Powers.of(s.first().trace().toEnclosure(), n).times(problem.prior());
-        Enclosure b = Powers.of(s.second().trace().toEnclosure(), n).times(problem.otherPrior());
-        return a.times(b).sqrt().times(Powers.of(Fidelity.value(s), n));
+        Enclosure a = s.first().trace().toEnclosure().power(n).times(problem.prior());
+        Enclosure b = s.second().trace().toEnclosure().power(n).times(problem.otherPrior());
+        return a.times(b).sqrt().times(Fidelity.value(s).power(n));
     }
 }

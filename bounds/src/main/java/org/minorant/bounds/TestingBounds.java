@@ -1,8 +1,9 @@
 package org.minorant.bounds;
 
-import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
+import java.util.function.Function;
+import java.util.stream.Stream;
 import org.minorant.core.InvalidInputException;
 import org.minorant.measurement.HypothesisPair;
 
@@ -76,14 +77,7 @@ public final class TestingBounds {
     public static Ledger of(HypothesisPair pair, double prior, List<? extends TestingBound> more) {
         Checks.inRange("TestingBounds.of", "the prior", prior, 0, 1);
         TestingProblem problem = TestingProblem.of(pair, prior);
-        List<TestingBound> theorems = new ArrayList<>(KNOWN);
-        theorems.addAll(more);
-        return Ledger.of(
-                "minimum error",
-                theorems.stream()
-                        .map(t -> t.on(problem))
-                        .flatMap(Optional::stream)
-                        .toList());
+        return ledger("minimum error", KNOWN, more, t -> t.on(problem));
     }
 
     /**
@@ -122,13 +116,12 @@ public final class TestingBounds {
     public static Ledger typeTwo(HypothesisPair pair, double level, List<? extends TypeTwoBound> more) {
         Checks.inRange("TestingBounds.typeTwo", "the type-I level", level, 0, 1);
         TypeTwoProblem problem = TypeTwoProblem.of(pair, level);
-        List<TypeTwoBound> theorems = new ArrayList<>(KNOWN_TYPE_TWO);
-        theorems.addAll(more);
-        return Ledger.of(
-                "least type-II error",
-                theorems.stream()
-                        .map(t -> t.on(problem))
-                        .flatMap(Optional::stream)
-                        .toList());
+        return ledger("least type-II error", KNOWN_TYPE_TWO, more, t -> t.on(problem));
+    }
+
+    private static <T> Ledger ledger(
+            String quantity, List<? extends T> known, List<? extends T> more, Function<T, Optional<Bound>> apply) {
+        Stream<T> theorems = Stream.concat(known.stream(), more.stream());
+        return Ledger.of(quantity, theorems.map(apply).flatMap(Optional::stream).toList());
     }
 }

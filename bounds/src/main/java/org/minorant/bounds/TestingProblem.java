@@ -1,7 +1,5 @@
 package org.minorant.bounds;
 
-import java.util.Optional;
-import org.minorant.bounds.divergence.StatePair;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.measurement.HypothesisPair;
@@ -13,19 +11,13 @@ import org.minorant.measurement.HypothesisPair;
  * one copy, so that they can be had at any n. What several bounds need (spectra and their overlaps) is computed when the first of them asks.
  * Immutable and thread-safe.
  */
-public final class TestingProblem {
+public final class TestingProblem extends CopiesProblem {
 
     /** The hypothesis that {@link #hasTwoStates} checks, as it is printed. */
     static final String BOTH_POSSIBLE = "0 < p < 1";
 
-    private final HypothesisPair pair;
-    private final double prior;
-    /** Computed when first asked for; the same value whoever computes it. */
-    private volatile Optional<StatePair> spectra = Optional.empty();
-
     private TestingProblem(HypothesisPair pair, double prior) {
-        this.pair = pair;
-        this.prior = prior;
+        super(pair, prior);
     }
 
     /**
@@ -41,21 +33,12 @@ public final class TestingProblem {
     }
 
     /**
-     * Returns the hypotheses.
-     *
-     * @return ρ and σ
-     */
-    public HypothesisPair pair() {
-        return pair;
-    }
-
-    /**
      * Returns the prior of the first hypothesis.
      *
      * @return p
      */
     public double prior() {
-        return prior;
+        return number();
     }
 
     /**
@@ -64,43 +47,6 @@ public final class TestingProblem {
      * @return an enclosure of 1 − p, which is meant exactly
      */
     public Enclosure otherPrior() {
-        return Enclosure.exact(prior).complement();
-    }
-
-    /**
-     * Returns the number of copies n: the hypotheses are ρ^⊗n and σ^⊗n.
-     *
-     * @return n, 1 unless the pair was made by {@link HypothesisPair#copies}
-     */
-    public int copies() {
-        return pair.copyCount();
-    }
-
-    /**
-     * Returns the hypotheses about one copy.
-     *
-     * @return ρ and σ themselves
-     */
-    public HypothesisPair single() {
-        return pair.single();
-    }
-
-    /**
-     * Tells whether both hypotheses are possible and the two states of one copy at hand, which most bounds ask for.
-     *
-     * @return whether 0 &lt; p &lt; 1 and {@link #single()} has states
-     */
-    public boolean hasTwoStates() {
-        return prior > 0 && prior < 1 && single().hasStates();
-    }
-
-    /** The spectra of both states of one copy and their overlaps. */
-    StatePair spectra() {
-        Optional<StatePair> s = spectra;
-        if (s.isEmpty()) {
-            s = Optional.of(StatePair.of(single().first(), single().second()));
-            spectra = s;
-        }
-        return s.get();
+        return Enclosure.exact(number()).complement();
     }
 }

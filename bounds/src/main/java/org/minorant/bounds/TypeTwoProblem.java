@@ -1,9 +1,7 @@
 package org.minorant.bounds;
 
-import java.util.Optional;
 import org.minorant.bounds.divergence.Ball;
 import org.minorant.bounds.divergence.PetzCurve;
-import org.minorant.bounds.divergence.StatePair;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.measurement.HypothesisPair;
@@ -14,19 +12,13 @@ import org.minorant.measurement.HypothesisPair;
  * <p><b>Traces.</b> States are used as given, as {@link HypothesisPair#typeTwoError} does. With a = Tr ρ^⊗n and b = Tr σ^⊗n it is b times the error of the normalised
  * states at the level ε/a; divergences of normalised states serve so. Immutable and thread-safe.
  */
-public final class TypeTwoProblem {
+public final class TypeTwoProblem extends CopiesProblem {
 
     /** The hypothesis that {@link #hasTwoStates} checks, as it is printed. */
     static final String LEVEL_INSIDE = "0 < epsilon < 1";
 
-    private final HypothesisPair pair;
-    private final double level;
-    /** Computed when first asked for; the same value whoever computes it. */
-    private volatile Optional<StatePair> spectra = Optional.empty();
-
     private TypeTwoProblem(HypothesisPair pair, double level) {
-        this.pair = pair;
-        this.level = level;
+        super(pair, level);
     }
 
     /**
@@ -42,58 +34,12 @@ public final class TypeTwoProblem {
     }
 
     /**
-     * Returns the hypotheses.
-     *
-     * @return ρ^⊗n and σ^⊗n
-     */
-    public HypothesisPair pair() {
-        return pair;
-    }
-
-    /**
      * Returns the type-I level.
      *
      * @return ε
      */
     public double level() {
-        return level;
-    }
-
-    /**
-     * Returns the number of copies.
-     *
-     * @return n, 1 unless the pair was made by {@link HypothesisPair#copies}
-     */
-    public int copies() {
-        return pair.copyCount();
-    }
-
-    /**
-     * Returns the hypotheses about one copy.
-     *
-     * @return ρ and σ themselves
-     */
-    public HypothesisPair single() {
-        return pair.single();
-    }
-
-    /**
-     * Tells whether the level is neither 0 nor 1 and the two states of one copy at hand, which most bounds ask for.
-     *
-     * @return whether 0 &lt; ε &lt; 1 and {@link #single()} has states
-     */
-    public boolean hasTwoStates() {
-        return level > 0 && level < 1 && single().hasStates();
-    }
-
-    /** The spectra of both states of one copy and their overlaps. */
-    StatePair spectra() {
-        Optional<StatePair> s = spectra;
-        if (s.isEmpty()) {
-            s = Optional.of(StatePair.of(single().first(), single().second()));
-            spectra = s;
-        }
-        return s.get();
+        return number();
     }
 
     /** ψ(s) = ln Tr ρ^s σ^(1−s) of one copy, as given. */
@@ -104,11 +50,11 @@ public final class TypeTwoProblem {
 
     /** ε/a, the level for normalised states. */
     Enclosure normalisedLevel() {
-        return Enclosure.exact(level).dividedBy(pair.curve().firstTrace());
+        return Enclosure.exact(number()).dividedBy(pair().curve().firstTrace());
     }
 
     /** ln b. */
     Enclosure lnSecondTrace() {
-        return pair.curve().secondTrace().ln();
+        return pair().curve().secondTrace().ln();
     }
 }

@@ -32,23 +32,12 @@ record WordCurves(PositivePair pair, Enclosure traces, Enclosure factor, WideDou
         // traces of both
         WideDouble trace = traces.hull(one).widen(distance).upperWide();
         WideDouble off =
-                power(Enclosure.of(trace, trace), n).times(distance).times(n).upperWide();
-        return new WordCurves(pair, power(traces, n), power(slack.times(relative), n), off);
+                Enclosure.of(trace, trace).power(n).times(distance).times(n).upperWide();
+        return new WordCurves(pair, traces.power(n), slack.times(relative).power(n), off);
     }
 
     LetterCurves curves() {
         return LetterCurves.ofWords(this);
-    }
-
-    /** e^n for a positive e. */
-    static Enclosure power(Enclosure e, int n) {
-        Enclosure result = Enclosure.ONE;
-        Enclosure square = e;
-        for (int k = n; k > 0; k >>= 1) {
-            result = (k & 1) == 1 ? result.times(square) : result;
-            square = k > 1 ? square.times(square) : square;
-        }
-        return result;
     }
 
     /** The refusal of a channel that no one pair describes. */

@@ -383,6 +383,27 @@ public final class Enclosure {
     }
 
     /**
+     * Returns an enclosure of a power, by repeated squaring; a relative width w becomes about nw.
+     *
+     * @param n the exponent, at least 0
+     * @return this^n, 1 for n = 0
+     * @throws InvalidInputException if n is negative
+     */
+    public Enclosure power(int n) {
+        if (n < 0) {
+            throw new InvalidInputException(
+                    "Enclosure.power", "the exponent is " + n, "at least 0", "divide one by the positive power");
+        }
+        Enclosure result = ONE;
+        Enclosure square = this;
+        for (int k = n; k > 0; k >>= 1) {
+            result = (k & 1) == 1 ? result.times(square) : result;
+            square = k > 1 ? square.square() : square;
+        }
+        return result;
+    }
+
+    /**
      * Returns an enclosure of the square root. A negative lower end counts as 0, for quantities known not to be negative.
      *
      * @return √this

@@ -190,4 +190,16 @@ class EnclosureTest {
         assertThrows(InvalidInputException.class, () -> Enclosure.ofLogarithms(1, 0));
         assertThrows(InvalidInputException.class, () -> Enclosure.of(-2, -1).sqrt());
     }
+
+    @Test
+    void powersEncloseExactOnes() {
+        Enclosure tenth = Enclosure.exact(0.1);
+        java.math.BigDecimal exact = new java.math.BigDecimal(0.1).pow(700);
+        assertTrue(tenth.power(700).contains(exact));
+        assertTrue(tenth.power(700).relativeWidth() < 700 * 0x1p-50);
+        assertEquals(Enclosure.ONE, tenth.power(0));
+        assertEquals(tenth, tenth.power(1));
+        assertEquals(Enclosure.of(0, 4), Enclosure.of(-2, 1).power(2));
+        assertThrows(InvalidInputException.class, () -> tenth.power(-1));
+    }
 }

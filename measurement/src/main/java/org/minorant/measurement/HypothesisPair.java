@@ -1,12 +1,7 @@
 package org.minorant.measurement;
 
-import java.util.ArrayList;
-import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
-import java.util.OptionalDouble;
-import java.util.TreeMap;
-import java.util.stream.DoubleStream;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
@@ -14,7 +9,6 @@ import org.minorant.core.Information;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
 import org.minorant.core.curve.Curve;
-import org.minorant.core.curve.CurveSample;
 import org.minorant.core.curve.SupportLines;
 import org.minorant.core.curve.Supremum;
 import org.minorant.core.pair.Effort;
@@ -43,10 +37,6 @@ public final class HypothesisPair {
     private static final double RELATIVE_GAP = 0x1p-48;
 
     private static final double TRACE_ROUNDING = 0x1p-50;
-
-    private static final int MOST_LEVELS = 2000;
-
-    private static final double RESOLUTION = 0x1p-40;
 
     private final PositivePair curve;
     private final Optional<States> states;
@@ -113,10 +103,17 @@ public final class HypothesisPair {
         if (n == 1) {
             return this;
         }
-        int all = copied.map(c -> Math.multiplyExact(c.copies(), n)).orElse(n);
+        long all = (long) copyCount() * n;
+        if (all > Integer.MAX_VALUE) {
+            throw new InvalidInputException(
+                    "HypothesisPair.copies", n + " copies of " + copyCount(), "fewer than 2^31 in all", "take fewer");
+        }
         HypothesisPair one = single();
         return new HypothesisPair(
-                one.curve.copies(all).withEffort(effort), Optional.empty(), Optional.of(new Copied(one, all)), effort);
+                one.curve.copies((int) all).withEffort(effort),
+                Optional.empty(),
+                Optional.of(new Copied(one, (int) all)),
+                effort);
     }
 
     /**
@@ -439,22 +436,7 @@ public final class HypothesisPair {
     public TradeOffCurve tradeOffCurve(double tolerance) {
         String asked = "HypothesisPair.tradeOffCurve";
         Checks.inRange(asked, "the tolerance", tolerance, Double.MIN_NORMAL, 1);
-        Sketch sketch = new Sketch(asked, 0, tolerance / 8);
-        sketch.add(0);
-        sketch.add(1);
-        while (sketch.size() < MOST_LEVELS) {
-            TradeOffCurve c = sketch.curve();
-            OptionalDouble next = c.widths().stream()
-                    .filter(w -> w.gap() > tolerance)
-                    .sorted(Comparator.comparingDouble(TradeOffCurve.Width::gap).reversed())
-                    .flatMapToDouble(w -> sketch.newLevels(w.typeOneError()))
-                    .findFirst();
-            if (next.isEmpty()) {
-                break;
-            }
-            sketch.add(next.getAsDouble());
-        }
-        return sketch.curve();
+        return sketch(asked, 0, tolerance / 8).refined(tolerance);
     }
 
     /**
@@ -467,7 +449,7 @@ public final class HypothesisPair {
      */
     public TradeOffCurve tradeOffCurveAt(double... levels) {
         String asked = "HypothesisPair.tradeOffCurveAt";
-        Sketch sketch = new Sketch(asked, RELATIVE_GAP, 0);
+        TradeOffSketch sketch = sketch(asked, RELATIVE_GAP, 0);
         for (double l : levels) {
             sketch.add(Checks.inRange(asked, "the type-I level", l, 0, 1));
         }
@@ -476,63 +458,10 @@ public final class HypothesisPair {
         return sketch.curve();
     }
 
-    /** A trade-off curve in the making: the samples of f are shared between levels. */
-    private final class Sketch {
-
-        private final String asked;
-        private final double relativeGap;
-        private final double absoluteGap;
-        private final SupportLines lines = supportLines();
-        private final List<CurveSample> below = new ArrayList<>();
-        private final TreeMap<Double, WideDouble> above = new TreeMap<>();
-
-        Sketch(String asked, double relativeGap, double absoluteGap) {
-            this.asked = asked;
-            this.relativeGap = relativeGap;
-            this.absoluteGap = absoluteGap;
-        }
-
-        int size() {
-            return above.size();
-        }
-
-        /**
-         * Levels to add where the polygons are apart: there, or, if a level is too near, between that and its neighbours. Where β(0) is not known
-         * the gap beside it never closes.
-         */
-        DoubleStream newLevels(double level) {
-            DoubleStream.Builder out = DoubleStream.builder().add(level);
-            Double near = above.floorKey(Math.min(1, level + RESOLUTION));
-            if (near != null) {
-                Double left = above.lowerKey(near);
-                Double right = above.higherKey(near);
-                if (right != null) {
-                    out.add(near + (right - near) / 16);
-                }
-                if (left != null) {
-                    out.add(near - (near - left) / 16);
-                }
-            }
-            return out.build().filter(this::isNew);
-        }
-
-        private boolean isNew(double level) {
-            Double below = above.floorKey(level);
-            Double beyond = above.ceilingKey(level);
-            return (below == null || level - below > RESOLUTION) && (beyond == null || beyond - level > RESOLUTION);
-        }
-
-        void add(double level) {
-            Supremum s = typeTwo(asked, lines, level + 0.0, relativeGap, absoluteGap);
-            below.add(s.best());
-            above.put(level + 0.0, s.value().upperWide());
-        }
-
-        TradeOffCurve curve() {
-            List<TradeOffPoint> points = new ArrayList<>();
-            above.forEach((a, b) -> points.add(new TradeOffPoint(a, b)));
-            return TradeOffCurve.of(below, points);
-        }
+    /** A sketch whose samples of f are shared between levels. */
+    private TradeOffSketch sketch(String asked, double relativeGap, double absoluteGap) {
+        SupportLines lines = supportLines();
+        return new TradeOffSketch(level -> typeTwo(asked, lines, level, relativeGap, absoluteGap));
     }
 
     /** The kind of curve and the dimension. */

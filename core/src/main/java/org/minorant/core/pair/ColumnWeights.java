@@ -5,7 +5,7 @@ import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
- * The weights of one operator's columns in a spin block, not increasing, in units of 2^shift, and their square roots: relative errors below (i + 4) · 2^-101 beside that of the first. Weights below 2^-1000 of the unit
+ * The weights of one operator's columns in a spin block, not increasing, in units of 2^shift, and their square roots: relative errors below (steps + 4) · 2^-101 beside that of the first. Weights below 2^-1000 of the unit
  * are left out.
  */
 final class ColumnWeights {
@@ -14,9 +14,12 @@ final class ColumnWeights {
 
     private final DoubleDouble[] power;
     private final DoubleDouble[] root;
+    private final int[] steps;
     private final int held;
 
-    ColumnWeights(WideDoubleDouble[] weights, long shift) {
+    ColumnWeights(BlockColumns columns, long shift) {
+        WideDoubleDouble[] weights = columns.weights();
+        steps = columns.steps();
         power = new DoubleDouble[weights.length];
         root = new DoubleDouble[weights.length];
         int n = 0;
@@ -29,18 +32,6 @@ final class ColumnWeights {
         held = n;
     }
 
-    /** w, wr, wr², … for 0 ≤ r ≤ 1. */
-    static WideDoubleDouble[] geometric(WideDoubleDouble weight, DoubleDouble ratio, int count) {
-        WideDoubleDouble[] w = new WideDoubleDouble[count];
-        WideDoubleDouble r = WideDoubleDouble.of(ratio);
-        WideDoubleDouble p = weight;
-        for (int i = 0; i < count; i++) {
-            w[i] = p;
-            p = p.times(r);
-        }
-        return w;
-    }
-
     /** How many columns are heavy enough to be held. */
     int held() {
         return held;
@@ -51,6 +42,11 @@ final class ColumnWeights {
         return (power.length - held) * Math.scalb(1.0, LEAST + 1);
     }
 
+    /** How many steps column i is away from the first. */
+    int steps(int i) {
+        return steps[i];
+    }
+
     DoubleDouble root(int i) {
         return root[i];
     }
@@ -59,11 +55,20 @@ final class ColumnWeights {
         return power[i];
     }
 
-    /** The sum of the first weights, rounded once for each. */
-    double trace(int count) {
-        double s = 0;
+    /** A bound on the relative error of the weights up to i, beside that of the first. */
+    double weightError(int i) {
+        int most = 0;
+        for (int j = 0; j <= i; j++) {
+            most = Math.max(most, steps[j]);
+        }
+        return most == 0 ? 0 : (most + 4) * 0x1p-101;
+    }
+
+    /** The sum of the first weights. */
+    DoubleDouble trace(int count) {
+        DoubleDouble s = DoubleDouble.ZERO;
         for (int i = 0; i < count; i++) {
-            s += power[i].hi();
+            s = s.plus(power[i]);
         }
         return s;
     }
@@ -72,7 +77,7 @@ final class ColumnWeights {
     EnclosedMatrix gram(int count) {
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(count, count);
         for (int i = 0; i < count; i++) {
-            m.set(i, i, power[i].hi(), power[i].lo(), 0, 0, i == 0 ? 0 : power[i].hi() * (i + 4) * 0x1p-100);
+            m.set(i, i, power[i].hi(), power[i].lo(), 0, 0, i == 0 ? 0 : power[i].hi() * (steps[i] + 4) * 0x1p-100);
         }
         return m.build();
     }

@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
@@ -22,28 +23,64 @@ final class CopyErrors {
         return Enclosure.of(0, Double.POSITIVE_INFINITY);
     }
 
-    /** n ν ((1 + η)a + ν)^(n−1), rounded up. */
+    /**
+     * How much the traces that the factor's errors leave open can change f at n copies: n ν ((1 + η)a + 2ν)^(n−1), rounded up.
+     *
+     * <p>With X = XX* of trace a and (1 − η)X − N₁ ≤ A ≤ (1 + η)X + N₂: A^⊗n ≤ ((1 + η)X + N₂)^⊗n, and ((1 − η)X)^⊗n ≤ (A + N₁)^⊗n with Tr A ≤ (1 + η)a + ν; exchanging one factor after the other bounds
+     * what N₁ and N₂ add to the traces.
+     */
     static WideDouble trace(int n, Enclosure a, double nu, double eta) {
         if (nu == 0) {
             return WideDouble.ZERO;
         }
-        Enclosure most = a.times(Math.nextUp(1 + eta)).plus(Enclosure.exact(nu));
-        return power(most, n - 1).upperWide().timesUp(WideDouble.of(nu)).timesUp(WideDouble.of(n));
+        return most(a, nu, eta)
+                .power(n - 1)
+                .upperWide()
+                .timesUp(WideDouble.of(nu))
+                .timesUp(WideDouble.of(n));
     }
 
-    /** The n-th power of an enclosed number that is not negative. */
-    static Enclosure power(Enclosure a, int n) {
-        Enclosure result = Enclosure.ONE;
-        Enclosure square = a;
-        for (int k = n; k > 0; k >>= 1) {
-            if ((k & 1) == 1) {
-                result = result.times(square);
+    private static Enclosure most(Enclosure a, double nu, double eta) {
+        return a.times(Math.nextUp(1 + eta)).plus(Enclosure.exact(2 * nu));
+    }
+
+    /**
+     * One operator in a product of powers.
+     *
+     * @param trace the trace a of XX*
+     * @param eta η
+     * @param nu ν
+     * @param n how many copies
+     */
+    record Factor(Enclosure trace, double eta, double nu, int n) {}
+
+    /** f, known for the operators XX* of all factors, for those that they stand for; the weight is that on their product. */
+    static Enclosure apply(Enclosure f, List<Factor> factors, WideDouble weight) {
+        Enclosure x = f;
+        WideDouble off = WideDouble.ZERO;
+        for (int i = 0; i < factors.size(); i++) {
+            Factor p = factors.get(i);
+            x = x.times(relative(p.eta, p.n));
+            WideDouble e = trace(p.n, p.trace, p.nu, p.eta);
+            for (int j = 0; j < factors.size() && e.signum() > 0; j++) {
+                Factor q = factors.get(j);
+                e = j == i ? e : e.timesUp(most(q.trace, q.nu, q.eta).power(q.n).upperWide());
             }
-            if (k > 1) {
-                square = square.square();
-            }
+            off = off.plusUp(e);
         }
-        return result;
+        WideDouble e = off.timesUp(weight);
+        return e.signum() == 0
+                ? x
+                : Enclosure.of(x.lowerWide().plusDown(e.negate()), x.upperWide().plusUp(e));
+    }
+
+    /** The trace of the product. */
+    static Enclosure trace(List<Factor> factors) {
+        Enclosure t = Enclosure.ONE;
+        for (Factor p : factors) {
+            t = t.times(p.trace.power(p.n));
+        }
+        return apply(t, factors, WideDouble.ONE).max(Enclosure.ZERO);
     }
 
     /**

@@ -291,7 +291,7 @@ final class RankOneCopies extends PositivePair {
     }
 
     private Enclosure otherTrace() {
-        return CopyErrors.power(traceOther, n);
+        return traceOther.power(n);
     }
 
     @Override

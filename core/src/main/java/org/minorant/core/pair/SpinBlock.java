@@ -36,9 +36,9 @@ final class SpinBlock {
             for (int b = 0; b < l; b++) {
                 DoubleDouble scale = x.root(a).times(y.root(b));
                 DoubleDouble m = new DoubleDouble(ch[a][b], cl[a][b]).times(scale);
-                // the roots err by (a+4)·2^-102 and (b+4)·2^-102 beside their weights, the two products by 2^-102 each
+                // the roots err by (steps + 4)·2^-102 each beside their weights, the two products by 2^-102 each
                 double r = scale.hi() * radius[a][b] * (1 + 0x1p-50)
-                        + Math.abs(m.hi()) * (a + b + 16) * 0x1p-101
+                        + Math.abs(m.hi()) * (x.steps(a) + y.steps(b) + 16) * 0x1p-101
                         + 0x1p-1060;
                 cross.set(a, b, m.hi(), m.lo(), 0, 0, r);
             }

@@ -2,7 +2,6 @@ package org.minorant.core.pair;
 
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
-import org.minorant.core.internal.number.WideDoubleDouble;
 
 /**
  * The value of one spin block, or of a product of spin blocks: by one eigendecomposition if an operator fills the block and the answer is not much smaller than the traces, else by rotations.
@@ -26,16 +25,15 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
     /**
      * The share of the block in the sum.
      *
-     * @param a weights of the columns of A, not increasing
-     * @param b weights of the columns of B
+     * @param a the columns of A
+     * @param b the columns of B
      * @param window overlaps of the columns
      * @param proven whether to enclose; otherwise the ends are those of an estimate
      * @param stop passed many times a second
      */
-    Enclosure of(
-            WideDoubleDouble[] a, WideDoubleDouble[] b, SpinOverlaps.Window window, boolean proven, Runnable stop) {
+    Enclosure of(BlockColumns a, BlockColumns b, SpinOverlaps.Window window, boolean proven, Runnable stop) {
         // one unit for both operators; the heavier one's first column is near the top of what squares without overflow
-        long shift = Math.max(a[0].exponent(), b[0].exponent()) - TOP;
+        long shift = Math.max(a.weights()[0].exponent(), b.weights()[0].exponent()) - TOP;
         ColumnWeights x = new ColumnWeights(a, shift);
         ColumnWeights y = new ColumnWeights(b, shift);
         if (x.held() == 0 || y.held() == 0) {
@@ -61,13 +59,7 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
         return proven ? columns.enclose(1, 1, stop) : columns.estimate(1, 1, stop);
     }
 
-    /** The share from a value in units of 2^shift; it is no more than the traces allow. */
     private Enclosure share(Enclosure unit, WideDouble leftOut, long shift) {
-        Enclosure f = unit.times(Enclosure.of(1 - ROUNDING, 1 + ROUNDING));
-        WideDouble upper = f.upperWide().isInfinite()
-                ? most
-                : f.upperWide().plusUp(leftOut).timesPowerOfTwo(shift).min(most);
-        WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesPowerOfTwo(shift);
-        return Enclosure.of(lower.min(upper), upper);
+        return BlockShare.of(unit, ROUNDING, leftOut, shift, most);
     }
 }

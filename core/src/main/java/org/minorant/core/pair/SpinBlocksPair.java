@@ -29,15 +29,16 @@ final class SpinBlocksPair extends PositivePair {
     private final QubitSpectra spectra;
     private final int n;
     private final Effort effort;
-    private final Enclosure traceA;
-    private final Enclosure traceB;
+    private final List<CopyErrors.Factor> first;
+    private final List<CopyErrors.Factor> second;
 
-    private SpinBlocksPair(QubitSpectra spectra, int n, Effort effort, Enclosure traceA, Enclosure traceB) {
+    private SpinBlocksPair(QubitSpectra spectra, int n, Effort effort) {
         this.spectra = spectra;
         this.n = n;
         this.effort = effort;
-        this.traceA = traceA;
-        this.traceB = traceB;
+        QubitPower p = new QubitPower(spectra, n);
+        this.first = List.of(p.first());
+        this.second = List.of(p.second());
     }
 
     /** n copies of two qubit operators; by types if they commute. */
@@ -56,20 +57,23 @@ final class SpinBlocksPair extends PositivePair {
             double error = Math.max(s.first().relativeError(), s.second().relativeError()) + 0x1p-100;
             return CommutingCopies.of(x, y, error, n);
         }
-        return new SpinBlocksPair(
-                s, n, Effort.DEFAULT, CopiedErrors.trace(s.first(), n), CopiedErrors.trace(s.second(), n));
+        return new SpinBlocksPair(s, n, Effort.DEFAULT);
+    }
+
+    @Override
+    PositivePair power(int k) {
+        return new SpinBlocksPair(spectra, CopyCount.times(n, k), effort);
     }
 
     @Override
     public PositivePair withEffort(Effort e) {
-        return new SpinBlocksPair(spectra, n, e, traceA, traceB);
+        return new SpinBlocksPair(spectra, n, e);
     }
 
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
         Enclosure f = run(wa, wb, true);
-        Enclosure x = CopiedErrors.of(spectra.first(), n).apply(f, traceA.times(Enclosure.of(wa, wa)));
-        return CopiedErrors.of(spectra.second(), n).apply(x, traceB.times(Enclosure.of(wb, wb)));
+        return CopyErrors.apply(CopyErrors.apply(f, first, wa), second, wb);
     }
 
     @Override
@@ -139,18 +143,18 @@ final class SpinBlocksPair extends PositivePair {
 
     @Override
     public Enclosure firstTrace() {
-        return traceA;
+        return CopyErrors.trace(first);
     }
 
     @Override
     public Enclosure secondTrace() {
-        return traceB;
+        return CopyErrors.trace(second);
     }
 
     /** The dimension 2^n, or the largest int beyond n = 30. */
     @Override
     public int dimension() {
-        return n < 31 ? 1 << n : Integer.MAX_VALUE;
+        return CopyCount.dimension(2, n);
     }
 
     @Override

@@ -10,8 +10,6 @@ import org.minorant.core.internal.number.WideDoubleDouble;
 /**
  * Which spin blocks are evaluated, with how many columns, and an upper end of what is left out.
  *
- * <p>Planned with base-two logarithms in double. Their errors are below 1e-7 for up to 10^6 copies; the sum left out is taken up by more than that.
- *
  * @param blocks the blocks to evaluate, by increasing order k
  * @param dropped an upper end of what the others and the cut tails can contribute
  */
@@ -105,36 +103,29 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         WideDoubleDouble[] multiplicity = multiplicities(n);
         Side a = Side.of(s.first(), n, wa, multiplicity);
         Side b = Side.of(s.second(), n, wb, multiplicity);
-        int count = multiplicity.length;
-        double budget = log2Guess + Math.log(tolerance) / LN2 - 3;
-        double[] most = new double[count];
-        List<Integer> order = new ArrayList<>();
-        for (int q = 0; q < count; q++) {
-            int k = n - 2 * q;
-            most[q] = Math.min(a.tail(q, 0, k), b.tail(q, 0, k));
-            order.add(q);
+        double[] most = new double[multiplicity.length];
+        for (int q = 0; q < most.length; q++) {
+            most[q] = Math.min(a.tail(q, 0, n - 2 * q), b.tail(q, 0, n - 2 * q));
         }
-        order.sort(Comparator.comparingDouble(q -> most[q]));
-        WideDouble dropped = WideDouble.ZERO;
-        int skipped = 0;
-        WideDouble limit = power(budget);
-        while (skipped < count) {
-            WideDouble next = dropped.plusUp(power(most[order.get(skipped)]));
-            if (next.compareTo(limit) > 0) {
-                break;
-            }
-            dropped = next;
-            skipped++;
-        }
-        double share = budget - 1 - Math.log(Math.max(1, count - skipped)) / LN2;
+        BlockChoice choice = BlockChoice.of(most, log2Guess, tolerance);
+        double share = choice.share();
+        WideDouble dropped = choice.dropped();
         List<Block> blocks = new ArrayList<>();
-        for (int q : order.subList(skipped, count)) {
+        for (int q : choice.kept()) {
             int k = n - 2 * q;
             int first = a.columns(q, k, share);
             int second = b.columns(q, k, share);
-            dropped = dropped.plusUp(power(a.tail(q, first, k))).plusUp(power(b.tail(q, second, k)));
+            dropped = dropped.plusUp(BlockChoice.upper(a.tail(q, first, k)))
+                    .plusUp(BlockChoice.upper(b.tail(q, second, k)));
             if (first > 0 && second > 0) {
-                blocks.add(new Block(k, first, second, a.weight()[q], b.weight()[q], power(most[q]), power(share)));
+                blocks.add(new Block(
+                        k,
+                        first,
+                        second,
+                        a.weight()[q],
+                        b.weight()[q],
+                        BlockChoice.upper(most[q]),
+                        BlockChoice.upper(share)));
             }
         }
         blocks.sort(Comparator.comparingInt(Block::order));
@@ -163,16 +154,6 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         return all;
     }
 
-    /** An upper end of 2^x. */
-    static WideDouble power(double x) {
-        if (x == Double.NEGATIVE_INFINITY) {
-            return WideDouble.ZERO;
-        }
-        double up = x + 1e-7 + Math.abs(x) * 1e-12;
-        double whole = Math.floor(up);
-        return WideDouble.of(Math.exp((up - whole) * LN2) * (1 + 1e-12), (long) whole);
-    }
-
     /** m_q = C(n,q)(k+1)/(n−q+1) = C(n,q) − C(n,q−1), from C(n,q) by exact ratios. */
     static WideDoubleDouble[] multiplicities(int n) {
         WideDoubleDouble[] m = new WideDoubleDouble[n / 2 + 1];
@@ -186,15 +167,15 @@ record SpinBlocksPlan(List<Block> blocks, WideDouble dropped) {
         return m;
     }
 
-    /** What evaluating this plan takes: the windows that are waiting or being walked through, and about 40 matrices of enclosures on every thread. */
+    /** What evaluating this plan takes; windows of overlaps are walked through by one thread and wait for the others. */
     Work work() {
-        int threads = Math.min(Runtime.getRuntime().availableProcessors(), Math.max(1, blocks.size()));
-        long window = 3L * Double.BYTES * mostFirst() * mostSecond();
         long rank = blocks.stream()
                 .mapToLong(b -> b.first() + (long) b.second())
                 .max()
                 .orElse(0);
-        return new Work(blocks.size(), (int) rank, (2L + 2L * threads) * window + 40L * threads * 24 * rank * rank / 4);
+        long window = 3L * Double.BYTES * mostFirst() * mostSecond();
+        return Work.ofRotations(blocks.size(), rank)
+                .plus((2L + 2L * Runtime.getRuntime().availableProcessors()) * window);
     }
 
     /** The most columns of A that any block keeps. */

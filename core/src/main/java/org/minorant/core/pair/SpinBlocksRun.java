@@ -63,9 +63,8 @@ final class SpinBlocksRun {
     private Enclosure value(SpinBlocksPlan.Block block, SpinOverlaps.Window window, Runnable stop) {
         return new SpinBlockValue(block.order() + 1, block.most(), block.allowance(), effort.tolerance())
                 .of(
-                        ColumnWeights.geometric(block.weightA(), spectra.first().ratio(), block.first()),
-                        ColumnWeights.geometric(
-                                block.weightB(), spectra.second().ratio(), block.second()),
+                        BlockColumns.geometric(block.weightA(), spectra.first().ratio(), block.first()),
+                        BlockColumns.geometric(block.weightB(), spectra.second().ratio(), block.second()),
                         window,
                         proven,
                         stop);

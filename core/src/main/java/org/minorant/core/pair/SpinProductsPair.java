@@ -45,13 +45,32 @@ final class SpinProductsPair extends PositivePair {
     @Override
     Enclosure value(WideDouble wa, WideDouble wb) {
         Enclosure f = run(wa, wb, true);
-        for (QubitPower p : powers) {
-            f = CopiedErrors.of(p.spectra().first(), p.n())
-                    .apply(f, firstTrace().times(Enclosure.of(wa, wa)));
-            f = CopiedErrors.of(p.spectra().second(), p.n())
-                    .apply(f, secondTrace().times(Enclosure.of(wb, wb)));
-        }
-        return f;
+        return CopyErrors.apply(CopyErrors.apply(f, first(), wa), second(), wb);
+    }
+
+    private List<CopyErrors.Factor> first() {
+        return powers.stream().map(QubitPower::first).toList();
+    }
+
+    private List<CopyErrors.Factor> second() {
+        return powers.stream().map(QubitPower::second).toList();
+    }
+
+    @Override
+    PositivePair power(int k) {
+        return of(powers.stream()
+                        .map(p -> new QubitPower(p.spectra(), CopyCount.times(p.n(), k)))
+                        .toList())
+                .withEffort(effort);
+    }
+
+    @Override
+    public Work work(WideDouble a, WideDouble b) {
+        boolean nothing = a.signum() <= 0 || b.signum() <= 0 || a.isInfinite() || b.isInfinite();
+        return nothing
+                ? super.work(a, b)
+                : SpinProductsPlan.of(powers, a, b, guess(a, b), effort.tolerance())
+                        .work();
     }
 
     @Override
@@ -83,11 +102,12 @@ final class SpinProductsPair extends PositivePair {
         if (plan.blocks().isEmpty()) {
             return Enclosure.ZERO;
         }
+        plan.work().requireRoom();
         SpinOverlaps.Window[][] windows = windows(plan);
         AtomicLong done = new AtomicLong();
         List<Enclosure> parts = Parallel.inOrder(effort, plan.blocks(), block -> stop -> {
             Enclosure f = new SpinBlockValue(block.dimension(), block.most(), block.allowance(), effort.tolerance())
-                    .of(block.first().weights(), block.second().weights(), window(windows, block), proven, stop);
+                    .of(block.first().columns(), block.second().columns(), window(windows, block), proven, stop);
             effort.listener().onProgress(done.incrementAndGet(), plan.blocks().size());
             return f;
         });
@@ -157,26 +177,18 @@ final class SpinProductsPair extends PositivePair {
 
     @Override
     public Enclosure firstTrace() {
-        Enclosure t = Enclosure.ONE;
-        for (QubitPower p : powers) {
-            t = t.times(CopiedErrors.trace(p.spectra().first(), p.n()));
-        }
-        return t;
+        return CopyErrors.trace(first());
     }
 
     @Override
     public Enclosure secondTrace() {
-        Enclosure t = Enclosure.ONE;
-        for (QubitPower p : powers) {
-            t = t.times(CopiedErrors.trace(p.spectra().second(), p.n()));
-        }
-        return t;
+        return CopyErrors.trace(second());
     }
 
     /** The dimension 2^n of n copies in all, or the largest int beyond n = 30. */
     @Override
     public int dimension() {
-        return copies() < 31 ? 1 << copies() : Integer.MAX_VALUE;
+        return CopyCount.dimension(2, copies());
     }
 
     @Override

@@ -3,6 +3,7 @@ package org.minorant.core.pair;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
+import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
@@ -17,21 +18,29 @@ import org.minorant.core.internal.number.WideDoubleDouble;
 record SpinProductsPlan(List<Block> blocks, WideDouble dropped) {
 
     static final int MOST_BLOCKS = 1_000_000;
+
+    private static final int MOST_COLUMNS = 4000;
+
     private static final double LN2 = Math.log(2);
 
     /**
-     * Columns of one operator, by decreasing weight.
+     * Columns of one operator.
      *
-     * @param weights the weights, multiplicity included
+     * @param columns their weights
      * @param indices for each column its index in every factor
      */
-    record Columns(WideDoubleDouble[] weights, int[][] indices) {}
+    record Columns(BlockColumns columns, int[][] indices) {
+
+        int count() {
+            return indices.length;
+        }
+    }
 
     /**
      * A product of spin blocks.
      *
      * @param q the number of the block in every factor
-     * @param dimension the dimension of the product
+     * @param dimension the dimension of the product, or the largest int
      * @param first the columns of A
      * @param second the columns of B
      * @param most an upper end of the share, by the traces
@@ -77,42 +86,43 @@ record SpinProductsPlan(List<Block> blocks, WideDouble dropped) {
         WideDoubleDouble scaleA = WideDoubleDouble.of(DoubleDouble.of(wa.significand()), wa.exponent());
         WideDoubleDouble scaleB = WideDoubleDouble.of(DoubleDouble.of(wb.significand()), wb.exponent());
         List<int[]> all = choices(powers);
-        double budget = log2Guess + Math.log(tolerance) / LN2 - 3;
         double[] most = new double[all.size()];
-        List<Integer> order = new ArrayList<>();
         for (int i = 0; i < most.length; i++) {
             most[i] = Math.min(log2Trace(a, all.get(i), scaleA), log2Trace(b, all.get(i), scaleB));
-            order.add(i);
         }
-        order.sort(Comparator.comparingDouble(i -> most[i]));
-        WideDouble dropped = WideDouble.ZERO;
-        WideDouble limit = SpinBlocksPlan.power(budget);
-        int skipped = 0;
-        while (skipped < most.length) {
-            WideDouble next = dropped.plusUp(SpinBlocksPlan.power(most[order.get(skipped)]));
-            if (next.compareTo(limit) > 0) {
-                break;
-            }
-            dropped = next;
-            skipped++;
-        }
-        double share = budget - 1 - Math.log(Math.max(1, most.length - skipped)) / LN2;
+        BlockChoice choice = BlockChoice.of(most, log2Guess, tolerance);
+        double share = choice.share();
+        WideDouble dropped = choice.dropped();
         List<Block> blocks = new ArrayList<>();
-        for (int i : order.subList(skipped, most.length).stream().sorted().toList()) {
+        for (int i : choice.kept()) {
             int[] q = all.get(i);
-            int dimension = 1;
+            double dimension = 1;
             for (int j = 0; j < q.length; j++) {
                 dimension *= powers.get(j).n() - 2 * q[j] + 1;
             }
             Columns first = columns(a, q, scaleA, share - Math.log(dimension) / LN2);
             Columns second = columns(b, q, scaleB, share - Math.log(dimension) / LN2);
-            dropped = dropped.plusUp(SpinBlocksPlan.power(share)).plusUp(SpinBlocksPlan.power(share));
-            if (first.weights().length > 0 && second.weights().length > 0) {
+            dropped = dropped.plusUp(BlockChoice.upper(share)).plusUp(BlockChoice.upper(share));
+            if (first.count() > 0 && second.count() > 0) {
                 blocks.add(new Block(
-                        q, dimension, first, second, SpinBlocksPlan.power(most[i]), SpinBlocksPlan.power(share)));
+                        q,
+                        (int) Math.min(dimension, Integer.MAX_VALUE),
+                        first,
+                        second,
+                        BlockChoice.upper(most[i]),
+                        BlockChoice.upper(share)));
             }
         }
         return new SpinProductsPlan(List.copyOf(blocks), dropped);
+    }
+
+    /** What evaluating this plan takes, once the windows of the factors are made. */
+    Work work() {
+        long rank = blocks.stream()
+                .mapToLong(b -> b.first().count() + (long) b.second().count())
+                .max()
+                .orElse(0);
+        return Work.ofRotations(blocks.size(), rank);
     }
 
     /** Every choice of one block of each factor. */
@@ -157,6 +167,9 @@ record SpinProductsPlan(List<Block> blocks, WideDouble dropped) {
                 WideDoubleDouble v = weights.get(j);
                 // a little below the threshold, so that rounding of logarithms leaves out nothing that weighs more
                 for (int a = 0; a <= k && v.significand().hi() != 0 && v.log2() >= least - 1e-6; a++) {
+                    if (w.size() == MOST_COLUMNS) {
+                        throw tooManyColumns();
+                    }
                     int[] d = java.util.Arrays.copyOf(indices.get(j), i + 1);
                     d[i] = a;
                     w.add(v);
@@ -174,9 +187,20 @@ record SpinProductsPlan(List<Block> blocks, WideDouble dropped) {
         }
         order.sort(Comparator.comparingDouble(j -> -found.get(j).log2()));
         List<int[]> tuples = indices;
-        return new Columns(
+        BlockColumns columns = new BlockColumns(
                 order.stream().map(found::get).toArray(WideDoubleDouble[]::new),
-                order.stream().map(tuples::get).toArray(int[][]::new));
+                order.stream()
+                        .mapToInt(j -> java.util.Arrays.stream(tuples.get(j)).sum())
+                        .toArray());
+        return new Columns(columns, order.stream().map(tuples::get).toArray(int[][]::new));
+    }
+
+    private static InvalidInputException tooManyColumns() {
+        return new InvalidInputException(
+                "PositivePair.ofPowers",
+                "a product of spin blocks has more than " + MOST_COLUMNS + " columns that matter",
+                "at most " + MOST_COLUMNS,
+                "ask for a larger tolerance, fewer copies or fewer factors");
     }
 
     /** The largest index in factor i that any block keeps of A. */

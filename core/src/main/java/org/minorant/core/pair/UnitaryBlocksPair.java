@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import java.util.List;
 import java.util.Optional;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
@@ -19,12 +20,11 @@ import org.minorant.core.internal.number.WideDoubleDouble;
  *
  * <p><b>Truncation.</b> As in {@link SpinBlocksPair}: blocks and tails of spectra that are left out lower f by at most their traces, which are added to the upper end.
  *
- * <p><b>Errors.</b> (1 − η)A' − N ≤ A ≤ (1 + η)A' + N with Tr N ≤ ν makes (1 ± η)^n and at most n·2ν((1 + η)Tr A' + 2ν)^(n−1) in trace norm (on the lower side A^⊗n is compared with (A + N)^⊗n ≥ (1 − η)^n A'^⊗n, Tr A ≤ (1 + η) Tr A' + ν).
+ * <p><b>Errors.</b> (1 − η)A' − N ≤ A ≤ (1 + η)A' + N with Tr N ≤ ν is treated by {@link CopyErrors}.
  */
 final class UnitaryBlocksPair extends PositivePair {
 
     private static final double WEIGHT_ERROR = 0x1p-50;
-    private static final int MOST_ROUNDS = 5;
     /** Jacobi's method in many digits takes a second or so there. */
     private static final int MOST_DIMENSION = 12;
 
@@ -68,7 +68,7 @@ final class UnitaryBlocksPair extends PositivePair {
             return onPlane.get().traceMinimum(wa, wb);
         }
         Enclosure f = run(wa, wb, true);
-        return withErrors(spectra.second(), withErrors(spectra.first(), f, wa), wb);
+        return CopyErrors.apply(CopyErrors.apply(f, factor(spectra.first()), wa), factor(spectra.second()), wb);
     }
 
     @Override
@@ -87,22 +87,10 @@ final class UnitaryBlocksPair extends PositivePair {
         if (spectra.first().rank() == 0 || spectra.second().rank() == 0) {
             return Enclosure.ZERO;
         }
-        double log2Guess = guess(wa, wb);
-        Enclosure best = Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);
-        for (int round = 0; round < MOST_ROUNDS; round++) {
-            UnitaryBlocksPlan plan = UnitaryBlocksPlan.of(spectra, n, wa, wb, log2Guess, effort.tolerance());
-            Enclosure kept = new UnitaryBlocksRun(spectra, n, plan, effort, proven).sum();
-            Enclosure all = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(plan.dropped()));
-            best = best.intersect(all);
-            double seen = log2(kept.lowerWide());
-            boolean fine =
-                    plan.dropped().compareTo(kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 2))) <= 0;
-            if (fine || seen >= log2Guess || seen == Double.NEGATIVE_INFINITY && round > 1) {
-                return best;
-            }
-            log2Guess = seen == Double.NEGATIVE_INFINITY ? log2Guess * 1.5 - 60 : seen - 0.5;
-        }
-        return best;
+        return TruncatedSum.enclose(guess(wa, wb), effort.tolerance(), target -> {
+            UnitaryBlocksPlan plan = UnitaryBlocksPlan.of(spectra, n, wa, wb, target, effort.tolerance());
+            return new TruncatedSum.Parts(new UnitaryBlocksRun(spectra, n, plan, effort, proven).sum(), plan.dropped());
+        });
     }
 
     private double guess(WideDouble wa, WideDouble wb) {
@@ -128,10 +116,6 @@ final class UnitaryBlocksPair extends PositivePair {
                 .work(spectra.overlaps().isReal());
     }
 
-    private static double log2(WideDouble x) {
-        return x.signum() <= 0 ? Double.NEGATIVE_INFINITY : x.exponent() + Math.log(x.significand()) / Math.log(2);
-    }
-
     private static double[] doubles(QuditSpectra.Spectrum s) {
         double[] v = new double[s.values().length];
         for (int i = 0; i < v.length; i++) {
@@ -140,39 +124,27 @@ final class UnitaryBlocksPair extends PositivePair {
         return v;
     }
 
-    /** What the errors of one operator's data do to f. */
-    private Enclosure withErrors(QuditSpectra.Spectrum s, Enclosure f, WideDouble weight) {
-        Enclosure x = f.times(CopyErrors.relative(s.relativeError(), n))
-                .times(Enclosure.of(1 - WEIGHT_ERROR, 1 + WEIGHT_ERROR));
-        if (s.traceError().signum() == 0) {
-            return x;
-        }
-        double nu = 2 * s.traceError().toDoubleUp();
-        WideDouble e = CopyErrors.trace(n, trace(s), nu, s.relativeError()).timesUp(weight);
-        return Enclosure.of(x.lowerWide().plusDown(e.negate()), x.upperWide().plusUp(e));
-    }
-
-    /** Tr A', as rounded. */
-    private static Enclosure trace(QuditSpectra.Spectrum s) {
+    /** One operator with its errors, those of the blocks' weights among them. */
+    private List<CopyErrors.Factor> factor(QuditSpectra.Spectrum s) {
         WideDoubleDouble t = WideDoubleDouble.ZERO;
         for (WideDoubleDouble v : s.values()) {
             t = Letters.sum(t, v);
         }
-        return Letters.enclosure(t, s.values().length * DoubleDouble.EPS);
-    }
-
-    private Enclosure copiedTrace(QuditSpectra.Spectrum s) {
-        return withErrors(s, CopyErrors.power(trace(s), n), WideDouble.ONE).max(Enclosure.ZERO);
+        return List.of(new CopyErrors.Factor(
+                Letters.enclosure(t, s.values().length * DoubleDouble.EPS),
+                s.relativeError() + WEIGHT_ERROR / n,
+                s.traceError().toDoubleUp(),
+                n));
     }
 
     @Override
     public Enclosure firstTrace() {
-        return copiedTrace(spectra.first());
+        return CopyErrors.trace(factor(spectra.first()));
     }
 
     @Override
     public Enclosure secondTrace() {
-        return copiedTrace(spectra.second());
+        return CopyErrors.trace(factor(spectra.second()));
     }
 
     /** The dimension d^n, or the largest int beyond. */

@@ -90,29 +90,15 @@ record UnitaryBlocksPlan(List<Block> blocks, WideDouble dropped) {
             most[i] =
                     multiplicity[i] + dimension[i] + Math.min(a.largest(shapes.get(i), n), b.largest(shapes.get(i), n));
         }
-        double budget = log2Guess + Math.log(tolerance) / LN2 - 3;
-        List<Integer> order = IntStream.range(0, most.length)
-                .boxed()
-                .sorted(Comparator.comparingDouble(i -> most[i]))
-                .toList();
-        WideDouble dropped = WideDouble.ZERO;
-        WideDouble limit = power(budget);
-        int skipped = 0;
-        while (skipped < most.length) {
-            WideDouble next = dropped.plusUp(power(most[order.get(skipped)]));
-            if (next.compareTo(limit) > 0) {
-                break;
-            }
-            dropped = next;
-            skipped++;
-        }
-        double share = budget - 1 - Math.log(Math.max(1, most.length - skipped)) / LN2;
+        BlockChoice choice = BlockChoice.of(most, log2Guess, tolerance);
+        double share = choice.share();
+        WideDouble dropped = choice.dropped();
         List<Block> blocks = new ArrayList<>();
-        for (int i : order.subList(skipped, most.length)) {
+        for (int i : choice.kept()) {
             int[] shape = shapes.get(i);
             Kept first = kept(a, shape, n, multiplicity[i], dimension[i], share);
             Kept second = kept(b, shape, n, multiplicity[i], dimension[i], share);
-            dropped = dropped.plusUp(power(first.tail)).plusUp(power(second.tail));
+            dropped = dropped.plusUp(BlockChoice.upper(first.tail)).plusUp(BlockChoice.upper(second.tail));
             if (!first.patterns.isEmpty() && !second.patterns.isEmpty()) {
                 WideDoubleDouble m = wide(Partitions.multiplicity(shape));
                 blocks.add(new Block(
@@ -121,8 +107,8 @@ record UnitaryBlocksPlan(List<Block> blocks, WideDouble dropped) {
                         second.patterns,
                         m.times(wide(wa)),
                         m.times(wide(wb)),
-                        power(most[i]),
-                        power(share)));
+                        BlockChoice.upper(most[i]),
+                        BlockChoice.upper(share)));
             }
         }
         return new UnitaryBlocksPlan(List.copyOf(blocks), dropped);
@@ -195,16 +181,6 @@ record UnitaryBlocksPlan(List<Block> blocks, WideDouble dropped) {
 
     private static WideDoubleDouble wide(WideDouble w) {
         return WideDoubleDouble.of(DoubleDouble.of(w.significand()), w.exponent());
-    }
-
-    /** An upper end of 2^x. */
-    private static WideDouble power(double x) {
-        if (x == Double.NEGATIVE_INFINITY) {
-            return WideDouble.ZERO;
-        }
-        double up = x + 1e-7 + Math.abs(x) * 1e-12;
-        double whole = Math.floor(up);
-        return WideDouble.of(Math.exp((up - whole) * LN2) * (1 + 1e-12), (long) whole);
     }
 
     /**

@@ -119,14 +119,8 @@ final class UnitaryBlocksRun {
         return isFine(block, seen) ? seen : seen.intersect(bounded(block, space.inDoubleDouble(), scale));
     }
 
-    /** An enclosure for weights as rounded, in units of 2^shift, as one of the block's share. */
     private static Enclosure bounded(UnitaryBlocksPlan.Block block, Enclosure unit, long shift) {
-        Enclosure f = unit.times(Enclosure.of(1 - ROUNDING, 1 + ROUNDING));
-        WideDouble upper = f.upperWide().isInfinite()
-                ? block.most()
-                : f.upperWide().timesPowerOfTwo(shift).min(block.most());
-        WideDouble lower = f.lowerWide().max(WideDouble.ZERO).timesPowerOfTwo(shift);
-        return Enclosure.of(lower.min(upper), upper);
+        return BlockShare.of(unit, ROUNDING, WideDouble.ZERO, shift, block.most());
     }
 
     private static Monomials.Column[] columns(Monomials m, List<int[]> patterns, int[] shape, long unit) {

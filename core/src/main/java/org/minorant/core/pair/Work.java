@@ -14,6 +14,17 @@ public record Work(long parts, int largestRank, long bytes) {
     /** Beyond this part of the heap the work is not begun. */
     private static final double SHARE = 0.8;
 
+    /** Rotations and certificates of blocks of so many columns: about 40 matrices of enclosures on every thread. */
+    static Work ofRotations(int blocks, long rank) {
+        int threads = Math.min(Runtime.getRuntime().availableProcessors(), Math.max(1, blocks));
+        return new Work(blocks, (int) rank, 40L * threads * 24 * rank * rank / 4);
+    }
+
+    /** The same with more memory. */
+    Work plus(long more) {
+        return new Work(parts, largestRank, bytes + more);
+    }
+
     /** Refuses work that does not fit the heap. */
     void requireRoom() {
         long heap = Runtime.getRuntime().maxMemory();

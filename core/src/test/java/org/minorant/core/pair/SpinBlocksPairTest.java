@@ -118,7 +118,7 @@ class SpinBlocksPairTest {
 
     private static ColumnWeights weights(QubitSpectra.Spectrum s, int columns) {
         WideDoubleDouble large = WideDoubleDouble.of(s.large()).power(columns - 1);
-        return new ColumnWeights(ColumnWeights.geometric(large, s.ratio(), columns), 0);
+        return new ColumnWeights(BlockColumns.geometric(large, s.ratio(), columns), 0);
     }
 
     /**

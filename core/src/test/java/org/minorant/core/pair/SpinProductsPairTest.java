@@ -67,6 +67,43 @@ class SpinProductsPairTest {
     }
 
     @Test
+    void copiesOfCopiesMultiply() {
+        SplittableRandom random = new SplittableRandom(44);
+        DensityOperator a = state(random);
+        DensityOperator b = state(random);
+        PositivePair one = PositivePair.of(a, b);
+        assertEquals(one.copies(12).traceMinimum(0.6), one.copies(4).copies(3).traceMinimum(0.6));
+        PositivePair product = PositivePair.ofPowers(List.of(a, b), List.of(b, a), 2, 1);
+        PositivePair twice = PositivePair.ofPowers(List.of(a, b), List.of(b, a), 4, 2);
+        assertEquals(twice.traceMinimum(0.6), product.copies(2).traceMinimum(0.6));
+    }
+
+    /** A product with more dimensions than an int can count is planned all the same, or refused for its columns. */
+    @Test
+    void manyFactors() {
+        DensityOperator a = DensityOperator.ofBloch(0, 0, 0.999);
+        DensityOperator b = DensityOperator.ofBloch(0.999, 0, 0);
+        List<DensityOperator> first = java.util.Collections.nCopies(40, a);
+        List<DensityOperator> second = java.util.Collections.nCopies(40, b);
+        int[] ones = new int[40];
+        java.util.Arrays.fill(ones, 1);
+        PositivePair many = PositivePair.ofPowers(first, second, ones).withEffort(Effort.DEFAULT.withTolerance(0.5));
+        InvalidInputException e = assertThrows(InvalidInputException.class, () -> many.traceMinimum(1));
+        assertTrue(
+                e.getMessage().contains("columns that matter") && e.getMessage().contains("fewer copies"),
+                e.getMessage());
+    }
+
+    @Test
+    void theWorkIsSaidBefore() {
+        SplittableRandom random = new SplittableRandom(45);
+        PositivePair p = PositivePair.ofPowers(
+                List.of(state(random), state(random)), List.of(state(random), state(random)), 9, 7);
+        Work w = p.work(WideDouble.ONE, WideDouble.ONE);
+        assertTrue(w.parts() > 1 && w.parts() <= 20 && w.largestRank() > 10 && w.bytes() > 0, () -> "" + w);
+    }
+
+    @Test
     void theEstimateAgrees() {
         SplittableRandom random = new SplittableRandom(43);
         PositivePair p = PositivePair.ofPowers(

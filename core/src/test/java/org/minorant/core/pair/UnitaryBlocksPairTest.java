@@ -128,7 +128,7 @@ class UnitaryBlocksPairTest {
                 .copies(12);
         assertEquals(PairKind.UNITARY_BLOCKS, pair.kind());
         Enclosure qubits = SpinBlocksPair.of(a, b, 12).traceMinimum(1);
-        Enclosure nine = CopyErrors.power(Enclosure.exact(9), 12);
+        Enclosure nine = Enclosure.exact(9).power(12);
         meet(pair.traceMinimum(1), qubits.times(nine), "plane");
     }
 
