@@ -38,7 +38,11 @@ final class TraceMinimumConverse {
      * @param epsilon the average error
      */
     static Information messages(LetterCurves letters, double epsilon) {
-        Enclosure sup = supremum(letters.least(), letters.most(), Enclosure.exact(epsilon));
+        return messages(letters, Enclosure.exact(epsilon));
+    }
+
+    private static Information messages(LetterCurves letters, Enclosure epsilon) {
+        Enclosure sup = supremum(letters.least(), letters.most(), epsilon);
         return messages(sup.ln().negate());
     }
 
@@ -57,7 +61,12 @@ final class TraceMinimumConverse {
      * @param epsilon the average error
      */
     static Information messagesOfWords(LetterCurves words, double epsilon) {
-        Optional<WideDouble> weight = ErrorWeight.of(words.leastAgainst(), epsilon);
+        return messagesOfWords(words, Enclosure.exact(epsilon));
+    }
+
+    /** The same for each average error in an enclosure. */
+    static Information messagesOfWords(LetterCurves words, Enclosure epsilon) {
+        Optional<WideDouble> weight = ErrorWeight.of(words.leastAgainst(), epsilon.lower());
         if (weight.isEmpty()) {
             return messages(words, epsilon);
         }
@@ -69,7 +78,7 @@ final class TraceMinimumConverse {
                 .map(g -> values.withGuess(t -> g.lnValue(Math.min(t, 0))))
                 .orElse(values);
         Enclosure sup = new SupportLines(cut, words.most(), last.upperWide())
-                .at(Enclosure.exact(epsilon), ENOUGH_FOR_WORDS, 0)
+                .at(epsilon, ENOUGH_FOR_WORDS, 0)
                 .value();
         return messages(Enclosure.of(s, s).ln().minus(sup.ln()));
     }

@@ -7,6 +7,8 @@ import java.math.BigDecimal;
 import java.util.List;
 import org.junit.jupiter.api.Test;
 import org.minorant.bounds.Approximation;
+import org.minorant.bounds.AssistedCapacity;
+import org.minorant.bounds.AssistedCoding;
 import org.minorant.bounds.Capacity;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.bounds.CodingBounds;
@@ -18,6 +20,7 @@ import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
 import org.minorant.core.Information;
+import org.minorant.core.StandardChannels;
 import org.minorant.core.state.LightStates;
 import org.minorant.core.state.TruncatedState;
 import org.minorant.core.state.Truncation;
@@ -166,5 +169,19 @@ class TourTest {
         assertEquals(1000 + Math.log(1e-3) / Math.log(2), sure.bits().midpoint(), 1e-6);
         assertEquals(1000 - Math.log1p(-1e-3) / Math.log(2), most.bits().midpoint(), 1e-6);
         assertEquals(1000, about.bits(), 1e-4);
+    }
+
+    @Test
+    void sharedEntanglement() {
+        // snippet shared-entanglement
+        AssistedCoding shared = AssistedCoding.of(StandardChannels.depolarising(2, 0.1));
+        AssistedCapacity assisted = shared.capacity(); // 1.49681626832 bit, with the input, half of what is shared
+        Information surely = shared.uses(1000).achievable(1e-3); // 1355.28 bits
+        Information never = shared.uses(1000).converse(1e-3); // 1368.69 bits
+        // end snippet
+
+        assertEquals(1.49681626832, assisted.value().bits().midpoint(), 1e-11);
+        assertEquals(1355.28, surely.bits().midpoint(), 5.1e-3);
+        assertEquals(1368.69, never.bits().midpoint(), 5.1e-3);
     }
 }
