@@ -19,6 +19,13 @@ interface ChannelOutputs {
     }
 
     /**
+     * Prepares the optimal output states of Rényi's kind.
+     *
+     * @return the outputs in the same form
+     */
+    RenyiOutputs renyi();
+
+    /**
      * Mixes the outputs.
      *
      * @param p a distribution

@@ -24,12 +24,14 @@ public final class ClassicalQuantumChannel {
     private final int dimension;
     private final Lazy<ChannelOutputs> structure;
     private final Lazy<Capacity> capacity;
+    private final Lazy<RenyiOutputs> renyi;
 
     private ClassicalQuantumChannel(List<DensityOperator> outputs, int dimension, Lazy<ChannelOutputs> structure) {
         this.outputs = outputs;
         this.dimension = dimension;
         this.structure = structure;
         this.capacity = new Lazy<>(() -> CapacitySearch.of(outputs.size(), structure.get()));
+        this.renyi = new Lazy<>(() -> structure.get().renyi());
     }
 
     private static ClassicalQuantumChannel ofChecked(List<DensityOperator> outputs) {
@@ -161,6 +163,10 @@ public final class ClassicalQuantumChannel {
 
     ChannelOutputs structure() {
         return structure.get();
+    }
+
+    RenyiOutputs renyi() {
+        return renyi.get();
     }
 
     /** Letters and dimension. */

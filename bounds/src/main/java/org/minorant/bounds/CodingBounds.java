@@ -1,8 +1,6 @@
 package org.minorant.bounds;
 
-import java.util.ArrayList;
 import java.util.Arrays;
-import java.util.List;
 import java.util.Optional;
 import java.util.stream.IntStream;
 import org.minorant.core.DensityOperator;
@@ -335,6 +333,46 @@ public final class CodingBounds {
     }
 
     /**
+     * Returns ln M that some code of average error ε surely has, for every channel and any number of uses: with Q_s = Σ P(x) Tr W_x^(1−s) ρ_B^s at the chosen input,
+     *
+     * <pre>ln(M − 1) ≥ max over 0 &lt; s ≤ 1 of (ln ε − n ln Q_s)/s.</pre>
+     *
+     * <p>Never above {@link #achievable}, from which it follows by a bound on f; for where that is refused. The value at the s that a search found is enclosed to about n roundings.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold, with the reading of {@link #achievable}
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information chernoffAchievable(double epsilon) {
+        ChannelChecks.error("CodingBounds.chernoffAchievable", epsilon);
+        return MessageCount.threshold(relaxed().others(epsilon), ChernoffWords.THEOREM);
+    }
+
+    /**
+     * Returns ln M that no code of average error ε exceeds, for every channel and any number of uses: at any output state σ and α &gt; 1
+     *
+     * <pre>ln M ≤ n max_x D̃_α(W_x‖σ) + α/(α−1) ln 1/(1−ε).</pre>
+     *
+     * <p>Never below {@link #converse} at the same output state. The value at the α, and the σ where none was chosen, that a search found is enclosed to about n roundings.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the bound; infinite if a letter's support is not certain to lie in that of the chosen output state
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information strongConverse(double epsilon) {
+        ChannelChecks.error("CodingBounds.strongConverse", epsilon);
+        return strong().messages(epsilon);
+    }
+
+    private ChernoffWords relaxed() {
+        return new ChernoffWords(channel.renyi(), input(), uses);
+    }
+
+    private StrongConverseWords strong() {
+        return new StrongConverseWords(channel.renyi(), chosenOutput, input(), uses);
+    }
+
+    /**
      * Returns the normal approximation ln M ≈ nC − √(nV) Q⁻¹(ε), without a term of order ln n: no bound, and nothing is promised at any n.
      *
      * <p>C is the capacity, V = Σ P(x) V(W_x‖σ) the dispersion at the capacity input P that was found; where others attain the capacity, too, theirs may differ. Chosen inputs and output states
@@ -351,7 +389,7 @@ public final class CodingBounds {
 
     /**
      * Returns every bound on ln of the largest whole number of messages that the uses carry with average error at most ε. The bound of Hayashi and Nagaoka, never the best one, is
-     * listed for one use only: in many it takes long.
+     * listed for one use only: in many it takes long. A bound that {@link #uses} refuses for this channel is left out, which the name of the quantity says.
      *
      * @param epsilon the average error allowed, between 0 and 1, both excluded
      * @return the bounds in order, with their sources
@@ -359,37 +397,36 @@ public final class CodingBounds {
      */
     public Ledger ledger(double epsilon) {
         ChannelChecks.error("CodingBounds.ledger", epsilon);
-        Enclosure root = others(epsilon);
-        List<String> whole = List.of("whole messages");
-        List<Bound> bounds = new ArrayList<>();
+        UsesLedger ledger = new UsesLedger(uses);
         if (uses == 1) {
-            Enclosure older = HayashiNagaoka.others(mean.get(), epsilon, root);
-            bounds.add(Bound.of(Side.LOWER, MessageCount.whole(older), HayashiNagaoka.THEOREM, whole));
+            Enclosure older = HayashiNagaoka.others(mean.get(), epsilon, others(epsilon));
+            ledger.whole(() -> older, HayashiNagaoka.THEOREM);
         }
-        bounds.add(Bound.of(Side.LOWER, MessageCount.whole(root), RandomCoding.THEOREM, whole));
-        bounds.add(Bound.of(Side.UPPER, converse(epsilon), TraceMinimumConverse.THEOREM, List.of()));
-        bounds.add(Bound.of(Side.UPPER, weakConverse(epsilon), FanoHolevo.THEOREM, List.of()));
-        return Ledger.of("logarithm of the largest number of messages at average error " + epsilon + inUses(), bounds);
+        ledger.whole(() -> others(epsilon), RandomCoding.THEOREM);
+        ledger.whole(() -> relaxed().others(epsilon), ChernoffWords.THEOREM);
+        ledger.add(Side.UPPER, () -> converse(epsilon), TraceMinimumConverse.THEOREM);
+        ledger.add(Side.UPPER, () -> strongConverse(epsilon), StrongConverseWords.THEOREM);
+        ledger.add(Side.UPPER, () -> weakConverse(epsilon), FanoHolevo.THEOREM);
+        return ledger.of("logarithm of the largest number of messages at average error " + epsilon);
     }
 
     /**
-     * Returns every bound on the least average error of a code of M messages. That of Hayashi and Nagaoka is listed for one use only.
+     * Returns every bound on the least average error of a code of M messages. That of Hayashi and Nagaoka is listed for one use only; what {@link #uses} refuses is left out as in {@link #ledger}.
      *
      * @param messages M, at least 1
      * @return the bounds in order, with their sources
      * @throws InvalidInputException if M is below 1
      */
     public Ledger errorLedger(long messages) {
-        List<Bound> bounds = new ArrayList<>();
-        bounds.add(Bound.of(Side.LOWER, converseError(messages), TraceMinimumConverse.THEOREM, List.of()));
-        bounds.add(Bound.of(Side.UPPER, achievableError(messages), RandomCoding.THEOREM, List.of()));
+        Enclosure others = MessageCount.others("CodingBounds.errorLedger", messages);
+        UsesLedger ledger = new UsesLedger(uses);
+        ledger.plain(Side.LOWER, () -> converseError(messages), TraceMinimumConverse.THEOREM);
+        ledger.plain(Side.LOWER, () -> strong().error(others.plus(Enclosure.ONE)), StrongConverseWords.THEOREM);
+        ledger.plain(Side.UPPER, () -> achievableError(messages), RandomCoding.THEOREM);
+        ledger.plain(Side.UPPER, () -> relaxed().error(others), ChernoffWords.THEOREM);
         if (uses == 1) {
-            bounds.add(Bound.of(Side.UPPER, hayashiNagaokaError(messages), HayashiNagaoka.THEOREM, List.of()));
+            ledger.plain(Side.UPPER, () -> hayashiNagaokaError(messages), HayashiNagaoka.THEOREM);
         }
-        return Ledger.of("least average error of a code of " + messages + " messages" + inUses(), bounds);
-    }
-
-    private String inUses() {
-        return uses == 1 ? "" : " in " + uses + " uses";
+        return ledger.of("least average error of a code of " + messages + " messages");
     }
 }

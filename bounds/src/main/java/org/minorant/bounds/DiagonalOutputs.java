@@ -81,6 +81,11 @@ final class DiagonalOutputs implements ChannelOutputs {
     }
 
     @Override
+    public RenyiOutputs renyi() {
+        return new DiagonalRenyi(rows, () -> new MatrixRenyi(states()));
+    }
+
+    @Override
     public DensityOperator mixtureState(double[] p) {
         double[] s = mixture(p);
         double sum = 0;

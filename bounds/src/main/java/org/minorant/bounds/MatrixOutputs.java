@@ -53,6 +53,11 @@ final class MatrixOutputs implements ChannelOutputs {
     }
 
     @Override
+    public RenyiOutputs renyi() {
+        return new MatrixRenyi(outputs);
+    }
+
+    @Override
     public DensityOperator mixtureState(double[] p) {
         return DensityOperator.mixture(outputs, p);
     }

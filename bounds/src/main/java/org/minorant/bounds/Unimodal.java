@@ -12,13 +12,25 @@ final class Unimodal {
     private Unimodal() {}
 
     static double minimiser(DoubleUnaryOperator f, double from, double to) {
+        return minimiser(f, from, to, 1e-9 * (to - from));
+    }
+
+    /**
+     * Searches to a width.
+     *
+     * @param f the function
+     * @param from where the search begins
+     * @param to where it ends
+     * @param width a distance from the least value that is small enough
+     */
+    static double minimiser(DoubleUnaryOperator f, double from, double to, double width) {
         double low = from;
         double high = to;
         double x = high - GOLDEN * (high - low);
         double y = low + GOLDEN * (high - low);
         double fx = f.applyAsDouble(x);
         double fy = f.applyAsDouble(y);
-        for (int i = 0; i < STEPS && high - low > 1e-9 * (to - from); i++) {
+        for (int i = 0; i < STEPS && high - low > width; i++) {
             if (fx <= fy) {
                 high = y;
                 y = x;

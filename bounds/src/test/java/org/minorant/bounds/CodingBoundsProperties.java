@@ -65,7 +65,7 @@ final class CodingBoundsProperties {
         ClassicalQuantumChannel channel = Channels.random(random, 5, 6);
         double epsilon = epsilon(random);
         Ledger ledger = CodingBounds.of(channel).ledger(epsilon);
-        assertEquals(4, ledger.bounds().size());
+        assertEquals(6, ledger.bounds().size());
         assertTrue(channel.capacity().gap() < 1e-10, channel.capacity().toString());
     }
 

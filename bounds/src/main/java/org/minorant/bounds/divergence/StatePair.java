@@ -46,8 +46,19 @@ public final class StatePair {
      * @return the pair
      */
     public static StatePair of(PositiveOperator a, PositiveOperator b) {
-        SpectralState first = SpectralState.of(a);
-        SpectralState second = SpectralState.of(b);
+        return of(a, SpectralState.of(a), b, SpectralState.of(b));
+    }
+
+    /**
+     * Pairs two operators on the same space of which the spectra are known.
+     *
+     * @param a the first operator
+     * @param first its spectrum
+     * @param b the second operator, of the same dimension
+     * @param second its spectrum
+     * @return the pair
+     */
+    public static StatePair of(PositiveOperator a, SpectralState first, PositiveOperator b, SpectralState second) {
         EnclosedMatrix o = first.vectors().adjoint().times(second.vectors());
         boolean disjoint = !first.rows().intersects(second.rows());
         Ball[][] p = new Ball[first.rank()][second.rank()];
@@ -66,6 +77,15 @@ public final class StatePair {
             }
         }
         return new StatePair(a, b, first, second, o, p, isSame(a, b));
+    }
+
+    /**
+     * Returns the pair in the other order.
+     *
+     * @return B and A
+     */
+    public StatePair reversed() {
+        return of(b, second, a, first);
     }
 
     /** |midpoint|² with 2|midpoint|r + r² for the radius r of the entry, in either part. */
