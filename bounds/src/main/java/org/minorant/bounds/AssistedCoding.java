@@ -13,6 +13,7 @@ import org.minorant.core.KrausChannel;
 import org.minorant.core.PositiveOperator;
 import org.minorant.core.WideDouble;
 import org.minorant.core.curve.Curve;
+import org.minorant.core.curve.CurveRoot;
 import org.minorant.core.pair.PositivePair;
 
 /**
@@ -56,6 +57,9 @@ public final class AssistedCoding {
 
     /** A relative width of M that is small enough. */
     private static final double ENOUGH = 0x1p-28;
+
+    /** From here on a search begins at the normal approximation. */
+    private static final int FEW = 1000;
 
     /** The part of 1/d that makes an input of full rank for the converse. */
     private static final double PART = 1e-6;
@@ -260,7 +264,26 @@ public final class AssistedCoding {
     }
 
     private Enclosure others(double epsilon) {
+        if (commutes() && uses > FEW) {
+            Optional<Enclosure> root = near(mean(), epsilon);
+            if (root.isPresent()) {
+                return root.get();
+            }
+        }
         return RandomCoding.others(mean(), epsilon, saturation(), ENOUGH);
+    }
+
+    /** The crossing of f with ε, where the normal approximation leads to a bracket of it; so a search among depths where types are many is spared. */
+    private Optional<Enclosure> near(Curve f, double epsilon) {
+        double about = normalApproximation(epsilon).nats();
+        double away = 10 + Math.log(uses);
+        WideDouble level = WideDouble.of(epsilon);
+        WideDouble most = WideDouble.expUp(about + away);
+        if (!(about > away) || f.at(most).lowerWide().compareTo(level) <= 0) {
+            return Optional.empty();
+        }
+        Enclosure root = CurveRoot.of(f, level, WideDouble.expDown(about - away), most, ENOUGH);
+        return root.lowerWide().signum() > 0 ? Optional.of(root) : Optional.empty();
     }
 
     /**
@@ -287,7 +310,11 @@ public final class AssistedCoding {
         }
         AssistedLetters l = letters.get().get();
         double most = Math.nextUp(epsilon + l.excess(uses));
-        Information bound = TraceMinimumConverse.messagesOfWords(l.words(uses).curves(), Enclosure.of(epsilon, most));
+        LetterCurves words = l.words(uses).curves();
+        Optional<WideDouble> weight =
+                uses > FEW ? near(words.leastAgainst(), epsilon).map(Enclosure::lowerWide) : Optional.empty();
+        Information bound = TraceMinimumConverse.messagesOfWords(
+                words, Enclosure.of(epsilon, most), weight.or(() -> ErrorWeight.of(words.leastAgainst(), epsilon)));
         return bound.withSource(AssistedConverse.THEOREM.toString());
     }
 

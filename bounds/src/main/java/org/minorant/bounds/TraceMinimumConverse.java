@@ -61,12 +61,17 @@ final class TraceMinimumConverse {
      * @param epsilon the average error
      */
     static Information messagesOfWords(LetterCurves words, double epsilon) {
-        return messagesOfWords(words, Enclosure.exact(epsilon));
+        return messagesOfWords(words, Enclosure.exact(epsilon), ErrorWeight.of(words.leastAgainst(), epsilon));
     }
 
-    /** The same for each average error in an enclosure. */
-    static Information messagesOfWords(LetterCurves words, Enclosure epsilon) {
-        Optional<WideDouble> weight = ErrorWeight.of(words.leastAgainst(), epsilon.lower());
+    /**
+     * The same for each average error in an enclosure.
+     *
+     * @param words the curves of all words against a σ of trace one
+     * @param epsilon the average errors
+     * @param weight s, if one is known
+     */
+    static Information messagesOfWords(LetterCurves words, Enclosure epsilon, Optional<WideDouble> weight) {
         if (weight.isEmpty()) {
             return messages(words, epsilon);
         }

@@ -135,6 +135,20 @@ final class AssistedCodingTest {
         }
     }
 
+    /** Four different probabilities; a million uses take a minute. */
+    @Test
+    void manyUsesOfAPauliChannel() {
+        AssistedCoding bounds =
+                AssistedCoding.of(AssistedChannels.pauli(0.9, 0.05, 0.03, 0.02)).uses(10_000);
+        Enclosure low = bounds.achievable(ERROR).bits();
+        Enclosure high = bounds.converse(ERROR).bits();
+        assertTrue(low.width() < 1e-6, () -> low.toIntervalString(17));
+        assertTrue(high.width() < 1e-6, () -> high.toIntervalString(17));
+        double normal = bounds.normalApproximation(ERROR).bits();
+        assertTrue(low.upper() < high.lower() && high.lower() - low.upper() < 20);
+        assertTrue(low.lower() > normal - 20 && high.upper() < normal + 20);
+    }
+
     @Property(tries = 12, shrinking = ShrinkingMode.OFF)
     void achievableIsAtMostConverse(@ForAll long seed) {
         Random random = new Random(seed);

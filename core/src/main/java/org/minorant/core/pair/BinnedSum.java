@@ -95,6 +95,10 @@ final class BinnedSum {
             high.add(Math.min(scaled(bins.upperX[i] * x, ex), scaled(bins.upperY[i] * y, ey)));
         }
         double error = bins.error + 12 * U;
+        if (!(low.value() < Double.POSITIVE_INFINITY && bins.overlap() * bins.dropped < Double.POSITIVE_INFINITY)) {
+            // so many copies that bins say nothing
+            return Enclosure.of(WideDouble.ZERO, WideDouble.POSITIVE_INFINITY);
+        }
         WideDouble lower = WideDouble.of(Math.max(0, low.value() * (1 - error)), scale);
         double lnRest = Math.log(bins.overlap() * bins.dropped)
                 + bins.exponent * Math.log(2)

@@ -16,7 +16,7 @@ import org.minorant.core.internal.number.WideDoubleDouble;
  * <p><b>Enclosure.</b> All terms are positive. Each is a product of table entries of relative error 2^-53 (powers over factorials, made in double-double), so that f has relative error
  * (2K + 8) · 2^-53 plus n times that of the letters, at any depth. Types outside the windows of {@link Tilt} are left out; what they can amount to is added to the upper end.
  *
- * <p>Where more than 10^8 types matter, {@link LikelihoodBins} enclose the sum as closely as 2^14 bins allow.
+ * <p>Four letters go by {@link PairedLines} where types are many. Where more than 10^8 types, or 10^9 steps of these lines, matter, {@link LikelihoodBins} enclose the sum as closely as 2^14 bins allow.
  *
  * <p>Types and their use here: T. M. Cover and J. A. Thomas, Elements of Information Theory, ch. 11 (from memory).
  */
@@ -24,6 +24,9 @@ final class CommutingCopies extends PositivePair {
 
     /** Beyond this many types a value would take more than a second or so, and bins take over. */
     static final double MOST_TYPES = 1e8;
+
+    /** Beyond this many types four letters go by pairs. */
+    private static final double MANY_TYPES = 1e6;
 
     private static final double U = 0x1p-53;
     private static final int ATTEMPTS = 4;
@@ -137,12 +140,16 @@ final class CommutingCopies extends PositivePair {
                 from[i] = tilt.from(i, ln);
                 to[i] = tilt.to(i, ln);
             }
-            if (TypeBox.count(n, from, to) > MOST_TYPES) {
+            double count = TypeBox.count(n, from, to);
+            boolean paired = k == PairedLines.LETTERS
+                    && count > MANY_TYPES
+                    && PairedLines.work(from, to) < PairedLines.MOST_STEPS;
+            if (!paired && count > MOST_TYPES) {
                 Enclosure binned = bins().sum(wa, wb, (long) Math.ceil(lnBound / Math.log(2)));
                 WideDouble upper = binned.upperWide().min(WideDouble.expUp(lnBound));
                 return Enclosure.of(binned.lowerWide().min(upper), upper);
             }
-            Enclosure kept = sum(from, to, lnBound, wa, wb);
+            Enclosure kept = paired ? pairedSum(from, to, lnBound, wa, wb) : sum(from, to, lnBound, wa, wb);
             WideDouble skipped = WideDouble.expUp(lnBound - ln + Math.log(2 * k));
             f = Enclosure.of(kept.lowerWide(), kept.upperWide().plusUp(skipped));
             WideDouble allowed = kept.lowerWide().timesDown(WideDouble.of(effort.tolerance() / 8));
@@ -201,11 +208,49 @@ final class CommutingCopies extends PositivePair {
                     return new double[] {s.high(), s.low()};
                 })
                 .toArray(double[][]::new);
+        return total(sums, scale, (2 * k + 8) * U);
+    }
+
+    /** The same for four letters. */
+    private Enclosure pairedSum(int[] from, int[] to, double lnBound, WideDouble wa, WideDouble wb) {
+        PairedLines lines = new PairedLines(
+                n,
+                from,
+                to,
+                (i, lo, hi) -> PowerTable.scaledPowers(letters.first().get(i), lo, hi),
+                (i, lo, hi) -> PowerTable.scaledPowers(letters.second().get(i), lo, hi));
+        WideDoubleDouble multinomial = Factorials.of(n);
+        WideDoubleDouble a = multinomial.times(exact(wa));
+        WideDoubleDouble b = multinomial.times(exact(wb));
+        long scale = (long) Math.ceil(lnBound / Math.log(2));
+        int first = lines.outerFrom();
+        int count = Math.max(0, lines.outerTo() - first + 1);
+        long[] done = {0};
+        double[][] sums = IntStream.range(0, count)
+                .parallel()
+                .mapToObj(i -> {
+                    effort.checkpoint();
+                    double s = lines.sum(
+                            first + i,
+                            a.significand().hi(),
+                            a.exponent() - scale,
+                            b.significand().hi(),
+                            b.exponent() - scale);
+                    synchronized (done) {
+                        effort.listener().onProgress(++done[0], count);
+                    }
+                    return new double[] {s, 0};
+                })
+                .toArray(double[][]::new);
+        return total(sums, scale, lines.error() + 8 * U);
+    }
+
+    private Enclosure total(double[][] sums, long scale, double rounding) {
         DoubleDouble sum = DoubleDouble.ZERO;
         for (double[] s : sums) {
             sum = sum.plus(DoubleDouble.sum(s[0], s[1]));
         }
-        double error = (2 * k + 8) * U + n * letters.relativeError() + n * 0x1p-98;
+        double error = rounding + n * letters.relativeError() + n * 0x1p-98;
         // terms that were scaled to zero are below 2^-890 each, and at most 10^8
         WideDouble lower = WideDouble.of(Math.max(0, sum.value() * (1 - error)), scale);
         WideDouble upper = WideDouble.of(sum.value() * (1 + error) + 0x1p-860, scale);
