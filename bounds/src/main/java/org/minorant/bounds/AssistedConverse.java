@@ -1,5 +1,6 @@
 package org.minorant.bounds;
 
+import java.util.function.DoubleUnaryOperator;
 import org.minorant.core.EnclosedMatrix;
 import org.minorant.core.EnclosedSpectrum;
 import org.minorant.core.Enclosure;
@@ -32,7 +33,10 @@ final class AssistedConverse {
 
     private static final double UP = 1 + 0x1p-40;
 
+    /** Logarithms of t that are looked at: t is at least 1/M, and at most 1/ε. */
     private static final double MOST = 40;
+
+    private static final int GRID = 200;
 
     private final EnclosedMatrix joint;
     private final EnclosedMatrix product;
@@ -70,7 +74,7 @@ final class AssistedConverse {
 
     /** An upper bound on ln M at average error ε, a number. */
     Information messages(double epsilon) {
-        double lnT = Unimodal.minimiser(u -> roughLambda(Math.exp(u)) - Math.exp(u) * (1 - epsilon), -MOST, MOST);
+        double lnT = minimiser(u -> roughLambda(Math.exp(u)) - Math.exp(u) * (1 - epsilon));
         double t = Math.exp(lnT);
         Enclosure s = Enclosure.exact(epsilon).complement().times(t).minus(Enclosure.exact(lambda(t)));
         Enclosure least = Enclosure.of(s.lowerWide(), s.lowerWide());
@@ -83,13 +87,36 @@ final class AssistedConverse {
     /** A lower bound on the average error of M messages, a number. */
     Enclosure error(Enclosure messages) {
         double each = 1 / messages.lower();
-        double lnT = Unimodal.minimiser(u -> (roughLambda(Math.exp(u)) + each) / Math.exp(u), -MOST, MOST);
+        double lnT = minimiser(u -> (roughLambda(Math.exp(u)) + each) / Math.exp(u));
         double t = Math.exp(lnT);
         Enclosure bound = Enclosure.exact(lambda(t))
                 .plus(Enclosure.ONE.dividedBy(messages))
                 .dividedBy(Enclosure.exact(t))
                 .complement();
         return Enclosure.exact(Math.max(0, bound.lower()));
+    }
+
+    /** The positive part is not convex as an operator, so that there may be several minima: a grid, a finer one, then the best of its intervals. Any t gives a bound. */
+    private double minimiser(DoubleUnaryOperator f) {
+        double from = -2 * Math.log(in * out) - 2;
+        double step = (MOST - from) / GRID;
+        double best = onGrid(f, from, step);
+        double fine = 2 * step / GRID;
+        best = onGrid(f, best - step, fine);
+        return Unimodal.minimiser(f, best - fine, best + fine);
+    }
+
+    private static double onGrid(DoubleUnaryOperator f, double from, double step) {
+        double best = from;
+        double least = Double.POSITIVE_INFINITY;
+        for (int i = 0; i <= GRID; i++) {
+            double value = f.applyAsDouble(from + i * step);
+            if (value < least) {
+                least = value;
+                best = from + i * step;
+            }
+        }
+        return best;
     }
 
     private double roughLambda(double t) {

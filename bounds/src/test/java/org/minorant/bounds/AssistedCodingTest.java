@@ -174,7 +174,7 @@ final class AssistedCodingTest {
     }
 
     /** The number for one use of any channel holds against every input: β_ε(N(θ_ρ)‖ρ_R ⊗ σ) is at least 1/M, σ the output of the default input. */
-    @Property(tries = 15, shrinking = ShrinkingMode.OFF)
+    @Property(tries = 6, shrinking = ShrinkingMode.OFF)
     void theConverseHoldsForEveryInput(@ForAll long seed) {
         Random random = new Random(seed);
         KrausChannel channel = random.nextInt(3) == 0
@@ -185,6 +185,7 @@ final class AssistedCodingTest {
         double limit = bounds.converse(epsilon).nats().upper();
         assertTrue(bounds.achievable(epsilon).nats().lower() <= limit);
         DensityOperator sigma = channel.apply(bounds.input());
+        double floor = bounds.converseError(5).lower();
         double best = 0;
         for (int k = 0; k < 5; k++) {
             DensityOperator rho = k == 0 ? bounds.input() : RandomStates.hilbertSchmidt(2, random.nextLong());
@@ -197,11 +198,10 @@ final class AssistedCodingTest {
             double nats = TraceMinimumConverse.messages(one, epsilon).nats().lower();
             assertTrue(nats <= limit + 1e-12, () -> nats + " " + limit + " " + rho);
             best = Math.max(best, nats);
+            double least = TraceMinimumConverse.error(one, Enclosure.exact(5)).upper();
+            assertTrue(floor <= least + 1e-12, () -> floor + " " + least + " " + rho);
         }
         assertTrue(limit < best + 0.7, "far above every input met");
-        Information there = Information.ofNats(limit);
-        double floor = bounds.converseError(there).upper();
-        assertEquals(epsilon, floor, 1e-6);
     }
 
     /** The way for any channel, asked for a symmetric one, finds the same. */
