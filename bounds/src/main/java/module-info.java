@@ -4,4 +4,5 @@ module org.minorant.bounds {
     requires org.apache.commons.numbers.gamma;
 
     exports org.minorant.bounds;
+    exports org.minorant.bounds.codes;
 }

@@ -308,6 +308,28 @@ public final class EnclosedMatrix {
     }
 
     /**
+     * Returns an enclosure of the product entry by entry (Hadamard's, Schur's).
+     *
+     * @param other a matrix of the same shape
+     * @return the matrix of entry(i, j) · other.entry(i, j)
+     * @throws InvalidInputException if the shapes differ
+     */
+    public EnclosedMatrix timesEntrywise(EnclosedMatrix other) {
+        requireSameShape("EnclosedMatrix.timesEntrywise", other);
+        return EntrywiseProduct.of(this, other);
+    }
+
+    private void requireSameShape(String asked, EnclosedMatrix other) {
+        if (rows != other.rows || columns != other.columns) {
+            throw new InvalidInputException(
+                    asked,
+                    "the second matrix is " + other.rows + " x " + other.columns,
+                    rows + " x " + columns,
+                    "both must have the same shape");
+        }
+    }
+
+    /**
      * Returns an enclosure of the sum.
      *
      * @param other a matrix of the same shape
@@ -330,13 +352,7 @@ public final class EnclosedMatrix {
     }
 
     private EnclosedMatrix combine(EnclosedMatrix other, double sign) {
-        if (rows != other.rows || columns != other.columns) {
-            throw new InvalidInputException(
-                    "EnclosedMatrix.plus",
-                    "the second matrix is " + other.rows + " x " + other.columns,
-                    rows + " x " + columns,
-                    "both must have the same shape");
-        }
+        requireSameShape("EnclosedMatrix.plus", other);
         Builder c = new Builder(rows, columns, !isReal() || !other.isReal());
         for (int i = 0; i < rows; i++) {
             for (int j = 0; j < columns; j++) {

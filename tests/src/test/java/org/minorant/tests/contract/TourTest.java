@@ -15,6 +15,12 @@ import org.minorant.bounds.CodingBounds;
 import org.minorant.bounds.Ledger;
 import org.minorant.bounds.Side;
 import org.minorant.bounds.TestingBounds;
+import org.minorant.bounds.codes.Codebook;
+import org.minorant.bounds.codes.CodebookFamily;
+import org.minorant.bounds.codes.CodebookSearch;
+import org.minorant.bounds.codes.FoundCodebook;
+import org.minorant.bounds.codes.PrettyGoodDecoder;
+import org.minorant.bounds.codes.RationalInput;
 import org.minorant.core.Complex;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
@@ -169,6 +175,28 @@ class TourTest {
         assertEquals(1000 + Math.log(1e-3) / Math.log(2), sure.bits().midpoint(), 1e-6);
         assertEquals(1000 - Math.log1p(-1e-3) / Math.log(2), most.bits().midpoint(), 1e-6);
         assertEquals(1000, about.bits(), 1e-4);
+    }
+
+    @Test
+    void codesToHold() {
+        // snippet codes
+        ClassicalQuantumChannel link =
+                ClassicalQuantumChannel.of(DensityOperator.ofKet(1, 0), DensityOperator.ofKet(0.6, 0.8));
+        CodebookFamily family = CodebookFamily.of(RationalInput.uniform(2), 12, 32); // 32 words of 12 letters
+        FoundCodebook found = CodebookSearch.of(link, family).withSeed(1).find();
+        Enclosure error = found.error(); // its true average error under the pretty-good measurement
+        Enclosure promised = found.bound(); // f(31), which it does not exceed
+        int[] word = found.codebook().word(5); // the letters to send for message 5
+        Codebook again = family.ofCoefficients(found.codebook().coefficients()); // the same codebook
+        Enclosure own = PrettyGoodDecoder.of(link)
+                .errorProbability(Codebook.of(new int[] {0, 0, 1}, new int[] {1, 1, 0})); // 0.0118: any words
+        // end snippet
+
+        assertTrue(error.upper() <= promised.lower() && error.lower() > 0);
+        assertEquals(12, word.length);
+        assertEquals(found.codebook(), again);
+        // Helstrom's error of two kets of overlap 0.6³
+        assertEquals(0.5 * (1 - Math.sqrt(1 - Math.pow(0.6, 6))), own.midpoint(), 1e-15);
     }
 
     @Test

@@ -12,7 +12,7 @@ import org.minorant.core.internal.kernel.Defects;
  *
  * <pre>(√n ‖R‖_F + 2δ ‖Λ‖_F)/√(1−δ),</pre>
  *
- * and so is Σ|λ_i(A) − Λ_i| with both in ascending order (Mirsky).
+ * and so is Σ|λ_i(A) − Λ_i| with both in ascending order (Mirsky). Its Frobenius norm is at most (‖R‖_F + 2δ max|Λ|)/√(1−δ).
  */
 public final class EigenResidual {
 
@@ -20,11 +20,13 @@ public final class EigenResidual {
 
     private final double[] values;
     private final double traceError;
+    private final double frobeniusError;
     private final double defect;
 
-    private EigenResidual(double[] values, double traceError, double defect) {
+    private EigenResidual(double[] values, double traceError, double frobeniusError, double defect) {
         this.values = values;
         this.traceError = traceError;
+        this.frobeniusError = frobeniusError;
         this.defect = defect;
     }
 
@@ -51,12 +53,15 @@ public final class EigenResidual {
             throw new ArithmeticException("the eigenvectors are not orthonormal: defect " + defect);
         }
         double norm = 0;
+        double most = 0;
         for (double l : lambda) {
             norm += l * l;
+            most = Math.max(most, Math.abs(l));
         }
         norm = Math.sqrt(norm) * (1 + n * U) + 0x1p-500;
         double error = (Math.sqrt(n) * residual + 2 * defect * norm) / Math.sqrt(1 - defect) * (1 + 16 * U);
-        return new EigenResidual(e.values(), s.unscaleUp(error), defect);
+        double frobenius = (residual + 2 * defect * most) / Math.sqrt(1 - defect) * (1 + 16 * U) + 0x1p-500;
+        return new EigenResidual(e.values(), s.unscaleUp(error), s.unscaleUp(frobenius), defect);
     }
 
     /**
@@ -75,6 +80,15 @@ public final class EigenResidual {
      */
     public double traceError() {
         return traceError;
+    }
+
+    /**
+     * Returns a bound on the Frobenius norm of A − ŨΛŨ*.
+     *
+     * @return the bound, possibly infinite if it exceeds the largest double
+     */
+    public double frobeniusError() {
+        return frobeniusError;
     }
 
     /**
