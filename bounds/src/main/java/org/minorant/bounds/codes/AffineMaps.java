@@ -34,6 +34,24 @@ final class AffineMaps {
         return field.size();
     }
 
+    FiniteField field() {
+        return field;
+    }
+
+    /** What the word of a message is without b: Am. */
+    int[] difference(int[] c, int message) {
+        int[] out = new int[n];
+        for (int j = 0; j < n; j++) {
+            int at = j * (k + 1);
+            int v = 0;
+            for (int rest = message, i = 1; rest > 0; rest /= field.size(), i++) {
+                v = field.sum(v, field.product(c[at + i], rest % field.size()));
+            }
+            out[j] = v;
+        }
+        return out;
+    }
+
     /** The number of maps. */
     BigInteger size() {
         return BigInteger.valueOf(field.size()).pow(n * (k + 1));

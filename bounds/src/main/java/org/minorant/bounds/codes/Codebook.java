@@ -3,6 +3,7 @@ package org.minorant.bounds.codes;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.Optional;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.InvalidInputException;
@@ -20,15 +21,22 @@ public final class Codebook {
 
     private final int[][] words;
     private final List<int[]> coefficients;
+    private final Optional<CodebookFamily> family;
 
-    private Codebook(int[][] words, List<int[]> coefficients) {
+    private Codebook(int[][] words, List<int[]> coefficients, Optional<CodebookFamily> family) {
         this.words = words;
         this.coefficients = coefficients;
+        this.family = family;
     }
 
-    /** Takes over words that are right, and the coefficients that made them. */
-    static Codebook ofMaps(int[][] words, List<int[]> coefficients) {
-        return new Codebook(words, coefficients);
+    /** Takes over words that are right, the coefficients that made them and the family they belong to. */
+    static Codebook ofMaps(int[][] words, List<int[]> coefficients, CodebookFamily family) {
+        return new Codebook(words, coefficients, Optional.of(family));
+    }
+
+    /** The family that the coefficients belong to. */
+    Optional<CodebookFamily> family() {
+        return family;
     }
 
     /**
@@ -62,7 +70,7 @@ public final class Codebook {
                 }
             }
         }
-        return new Codebook(copy, List.of());
+        return new Codebook(copy, List.of(), Optional.empty());
     }
 
     static void requireMessages(String asked, int messages) {

@@ -163,6 +163,10 @@ public final class CodebookFamily {
         return make(copies);
     }
 
+    List<AffineMaps> maps() {
+        return maps;
+    }
+
     private Codebook make(List<int[]> coefficients) {
         int[][] words = new int[messages][length];
         int place = 1;
@@ -173,7 +177,7 @@ public final class CodebookFamily {
         for (int[] w : words) {
             Arrays.setAll(w, j -> input.letter(w[j]));
         }
-        return Codebook.ofMaps(words, coefficients);
+        return Codebook.ofMaps(words, coefficients, this);
     }
 
     /**

@@ -127,6 +127,15 @@ final class FiniteField {
         return out;
     }
 
+    int negative(int a) {
+        int out = 0;
+        int place = 1;
+        for (int x = a; x > 0; x /= p, place *= p) {
+            out += (p - x % p) % p * place;
+        }
+        return out;
+    }
+
     int product(int a, int b) {
         return a == 0 || b == 0 ? 0 : power[(logarithm[a] + logarithm[b]) % (q - 1)];
     }

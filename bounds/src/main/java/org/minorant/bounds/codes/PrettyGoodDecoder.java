@@ -1,5 +1,6 @@
 package org.minorant.bounds.codes;
 
+import java.util.Optional;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
@@ -18,7 +19,9 @@ import org.minorant.core.pair.WorkListener;
  * <tr><td>classical channels: sum over outputs</td><td>M |Y|^n up to 2^34</td><td>relative, about (n|Y| + M) 1e-15</td></tr>
  * <tr><td>Gram matrix of all columns of different words, to 30 digits</td><td>256 columns (a word has as many as the product of its letters' ranks, one for kets), any n up to 1000 for so many</td><td>that of a norm to about 1e-27: an error of 1e-30
  * has some ten digits; about 1e-14 where words are linearly dependent</td></tr>
- * <tr><td>the same in double</td><td>4096 columns, not more than dimensions, any n</td><td>an error ε within 2√ε 1e-11 or better; some 1e-8 where words are linearly dependent</td></tr>
+ * <tr><td>linear codes of kets that are alike: a codebook of a {@link CodebookFamily} with one field, M a power of its prime, and inner products of letters that depend on the difference of their symbols only (two kets with
+ * equal counts, kets at equal angles of prime number): sums over characters</td><td>2^22 messages, any n</td><td>relative, about 1e-14 and n 1e-15; some 1e-8 absolutely where words are linearly dependent</td></tr>
+ * <tr><td>the Gram matrix in double</td><td>4096 columns, not more than dimensions, any n</td><td>an error ε within 2√ε 1e-11 or better; some 1e-8 where words are linearly dependent</td></tr>
  * <tr><td>the space of outputs, in double</td><td>d^n up to 4096, 2^41 multiplications</td><td>absolute, about 1e-15/√λ with λ the least eigenvalue of the sum of the words' states; some 1e-7 where that is singular or nearly so</td></tr>
  * </table>
  *
@@ -112,8 +115,16 @@ public final class PrettyGoodDecoder {
         if (classical && ClassicalSums.terms(code, channel.dimension()) <= ClassicalSums.TERMS) {
             return ClassicalSums.error(code, rows, watch);
         }
+        Optional<CharacterSums> sums =
+                code.messages() > WordGram.PRECISE ? CharacterSums.of(code, letters.get(), watch) : Optional.empty();
         WordColumns words = WordColumns.of(code, letters.get());
         double columns = words.count();
+        // where different symbols stand for equal letters, sums over characters have eigenvalues 0, which cost digits
+        if (sums.isPresent()
+                && columns > WordGram.PRECISE
+                && (sums.get().size() == words.size() || columns > WordGram.LARGEST)) {
+            return sums.get().error();
+        }
         double dimension = Math.pow(channel.dimension(), code.length());
         boolean space = dimension <= OutputSpace.LARGEST
                 && OutputSpace.multiplications(words, dimension) <= OutputSpace.MULTIPLICATIONS;
