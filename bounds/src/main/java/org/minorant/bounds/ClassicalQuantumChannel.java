@@ -25,6 +25,7 @@ public final class ClassicalQuantumChannel {
     private final Lazy<ChannelOutputs> structure;
     private final Lazy<Capacity> capacity;
     private final Lazy<RenyiOutputs> renyi;
+    private final Lazy<ChannelDispersion> dispersion;
 
     private ClassicalQuantumChannel(List<DensityOperator> outputs, int dimension, Lazy<ChannelOutputs> structure) {
         this.outputs = outputs;
@@ -32,6 +33,7 @@ public final class ClassicalQuantumChannel {
         this.structure = structure;
         this.capacity = new Lazy<>(() -> CapacitySearch.of(outputs.size(), structure.get()));
         this.renyi = new Lazy<>(() -> structure.get().renyi());
+        this.dispersion = new Lazy<>(() -> ChannelDispersion.of(this));
     }
 
     private static ClassicalQuantumChannel ofChecked(List<DensityOperator> outputs) {
@@ -163,6 +165,15 @@ public final class ClassicalQuantumChannel {
 
     ChannelOutputs structure() {
         return structure.get();
+    }
+
+    /**
+     * Returns the dispersion: how much the information of one use spreads at the capacity.
+     *
+     * @return its least and largest value over the inputs that attain the capacity, worked out at the first call
+     */
+    public ChannelDispersion dispersion() {
+        return dispersion.get();
     }
 
     RenyiOutputs renyi() {

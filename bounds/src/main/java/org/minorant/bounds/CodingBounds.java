@@ -375,8 +375,7 @@ public final class CodingBounds {
     /**
      * Returns the normal approximation ln M ≈ nC − √(nV) Q⁻¹(ε), without a term of order ln n: no bound, and nothing is promised at any n.
      *
-     * <p>C is the capacity, V = Σ P(x) V(W_x‖σ) the dispersion at the capacity input P that was found; where others attain the capacity, too, theirs may differ. Chosen inputs and output states
-     * do not enter. It is given for every channel.
+     * <p>C is the capacity, V the least {@linkplain ChannelDispersion dispersion} for ε &lt; ½, the largest one above. Chosen inputs and output states do not enter. It is given for every channel.
      *
      * @param epsilon the average error allowed, between 0 and 1, both excluded
      * @return the approximation
@@ -385,6 +384,18 @@ public final class CodingBounds {
     public Approximation normalApproximation(double epsilon) {
         ChannelChecks.error("CodingBounds.normalApproximation", epsilon);
         return NormalApproximation.of(channel, uses, epsilon);
+    }
+
+    /**
+     * Returns the approximation of moderate deviations, ln M ≈ nC − √(2nV ln 1/ε) for ε ≤ ½, nC + √(2nV ln 1/(1−ε)) above: the leading terms where ε, or 1 − ε, vanishes with growing n, but not exponentially. No bound.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the approximation, with V as in {@link #normalApproximation}
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Approximation moderateDeviations(double epsilon) {
+        ChannelChecks.error("CodingBounds.moderateDeviations", epsilon);
+        return NormalApproximation.moderate(channel, uses, epsilon);
     }
 
     /**

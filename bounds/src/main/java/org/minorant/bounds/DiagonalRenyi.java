@@ -51,6 +51,24 @@ final class DiagonalRenyi implements RenyiOutputs {
         return against(s);
     }
 
+    @Override
+    public LettersAgainst againstLetter(int x) {
+        return new Rows(ln[x]);
+    }
+
+    @Override
+    public Enclosure zeroOrder(double[] p) {
+        Enclosure most = Enclosure.ZERO;
+        for (int y = 0; y < rows[0].length; y++) {
+            Enclosure sum = Enclosure.ZERO;
+            for (int x = 0; x < p.length; x++) {
+                sum = rows[x][y] > 0 ? sum.plus(Enclosure.exact(p[x])) : sum;
+            }
+            most = most.max(sum);
+        }
+        return most.dividedBy(Traces.sum(p)).ln().negate().max(Enclosure.ZERO);
+    }
+
     private LettersAgainst against(double[] s) {
         Enclosure trace = Traces.sum(s).ln();
         Enclosure[] lnS = new Enclosure[s.length];
@@ -141,7 +159,7 @@ final class DiagonalRenyi implements RenyiOutputs {
     @Override
     public Enclosure gallager(double s, double[] p) {
         Enclosure inverse = Enclosure.ONE.plus(Enclosure.exact(s));
-        return sibson(Enclosure.ONE.dividedBy(inverse), inverse, p).negate();
+        return sibson(Enclosure.ONE.dividedBy(inverse), inverse, p).negate().max(Enclosure.ZERO);
     }
 
     @Override

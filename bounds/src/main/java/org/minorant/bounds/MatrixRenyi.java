@@ -83,6 +83,31 @@ final class MatrixRenyi implements RenyiOutputs {
         return new Pairs(DensityOperator.mixture(outputs, p), ratio.ln());
     }
 
+    @Override
+    public LettersAgainst againstLetter(int x) {
+        return new Pairs(outputs.get(x), new Lazy<>(() -> letters.get(x)), Enclosure.ZERO);
+    }
+
+    @Override
+    public Enclosure zeroOrder(double[] p) {
+        EnclosedMatrix sum = EnclosedMatrix.builder(basis.rows(), basis.rows()).build();
+        for (int x = 0; x < p.length; x++) {
+            SpectralState w = letters.get(x);
+            if (p[x] > 0 && w.restRank() > 0) {
+                return Enclosure.of(0, Double.POSITIVE_INFINITY);
+            }
+            if (p[x] > 0) {
+                sum = sum.plus(w.vectors().times(w.vectors().adjoint()).times(p[x]));
+            }
+        }
+        EnclosedSpectrum s = EnclosedSpectrum.of(sum);
+        return s.eigenvalue(s.dimension() - 1)
+                .dividedBy(Traces.sum(p))
+                .ln()
+                .negate()
+                .max(Enclosure.ZERO);
+    }
+
     /** A in the basis, in double. */
     private Operator mixed(double s, double[] p) {
         Operator a = Operator.ofRowMajor(
@@ -139,7 +164,7 @@ final class MatrixRenyi implements RenyiOutputs {
         for (int i = 0; i < spectrum.dimension(); i++) {
             f = f.plus(EnclosedPowers.power(spectrum.eigenvalue(i), inverse));
         }
-        return f.ln().minus(Traces.sum(p).ln().times(inverse)).negate();
+        return f.ln().minus(Traces.sum(p).ln().times(inverse)).negate().max(Enclosure.ZERO);
     }
 
     @Override
@@ -181,8 +206,11 @@ final class MatrixRenyi implements RenyiOutputs {
          * @param slack what holds the logarithm of the factor by which its multiple of trace one may be off
          */
         Pairs(PositiveOperator sigma, Enclosure slack) {
+            this(sigma, new Lazy<>(() -> SpectralState.of(sigma)), slack);
+        }
+
+        Pairs(PositiveOperator sigma, Lazy<SpectralState> spectrum, Enclosure slack) {
             this.slack = slack;
-            Lazy<SpectralState> spectrum = new Lazy<>(() -> SpectralState.of(sigma));
             for (int x = 0; x < outputs.size(); x++) {
                 int letter = x;
                 pairs.add(new Lazy<>(

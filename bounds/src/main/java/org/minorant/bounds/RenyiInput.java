@@ -27,6 +27,9 @@ final class RenyiInput {
     /** Every letter starts with at least this part of an equal share. */
     private static final double SHARE = 0.1;
 
+    /** Further runs at most. */
+    private static final int RUNS = 2;
+
     private RenyiInput() {}
 
     /** Q_x e^(−lnScale). */
@@ -65,10 +68,16 @@ final class RenyiInput {
         if (search.gap() <= ENOUGH) {
             return equal;
         }
-        search.interior(
-                p,
-                Arrays.equals(p, equal) ? atEqual : search.noted(p),
-                IntStream.range(0, k).toArray());
+        int[] all = IntStream.range(0, k).toArray();
+        search.interior(p, Arrays.equals(p, equal) ? atEqual : search.noted(p), all);
+        // where letters should vanish, or differ little, the first run may end early; another from inside goes on
+        for (int again = 0; again < RUNS && search.gap() > ENOUGH; again++) {
+            double share = SHARE * Math.pow(0.1, again + 1);
+            double[] best = search.best();
+            double[] inside = new double[k];
+            Arrays.setAll(inside, x -> (1 - share) * best[x] + share / k);
+            search.interior(inside, search.noted(inside), all);
+        }
         return search.best();
     }
 

@@ -47,6 +47,22 @@ interface RenyiOutputs {
     LettersAgainst againstOptimum(double s, double[] p);
 
     /**
+     * Compares the letters with one of them.
+     *
+     * @param x the letter that takes the part of the state
+     * @return the letters against it
+     */
+    LettersAgainst againstLetter(int x);
+
+    /**
+     * Encloses −ln ‖Σ P(x) Π_x‖, Π_x the projectors on the supports of the letters: the limit of E0(s, P)/s for growing s.
+     *
+     * @param p a distribution
+     * @return the limit; from 0 on if the rank of a letter is not certain
+     */
+    Enclosure zeroOrder(double[] p);
+
+    /**
      * Encloses E0(s, P).
      *
      * @param s at least 0

@@ -11,8 +11,8 @@ import org.minorant.core.SpectralDecomposition;
  *
  * <pre>σ^(1+u) ∝ K(σ) = Σ_x P(x) W_x^½ (W_x^½ σ^(−u) W_x^½)^(α−1) W_x^½.</pre>
  *
- * <p>Iterated as σ ← (σ^(v/2) K σ^(v/2))^(1/(1+u+v)) with v = u(α−1)/2. To first order K answers a change of ln σ by −u(α−1) times it where all commute and by less elsewhere, so that an error shrinks at
- * least by v/(1+u+v) in every step.
+ * <p>Iterated as σ ← (σ^(v/2) K σ^(v/2))^(1/(1+u+v)) with v = u(α−1). To first order K answers a change of ln σ by −v times it where all commute, so that one step is enough there, and by less elsewhere, so that an error
+ * shrinks at least by v/(1+u+v) in every step and does not change its sign.
  *
  * @param sigma σ
  * @param traces Q_x = Tr (W_x^½ σ^(−u) W_x^½)^α over a factor that keeps them in range
@@ -22,7 +22,7 @@ import org.minorant.core.SpectralDecomposition;
  */
 record SandwichedState(Operator sigma, double[] traces, double lnScale, double norm, List<Operator> certificates) {
 
-    private static final int MOST_STEPS = 300;
+    private static final int MOST_STEPS = 100;
 
     /** Changes of a state below this are rounding. */
     private static final double STILL = 1e-12;
@@ -36,7 +36,7 @@ record SandwichedState(Operator sigma, double[] traces, double lnScale, double n
      * @param near a state to start from; the mixture if there is none
      */
     static SandwichedState of(List<Operator> roots, double u, double[] p, Optional<Operator> near) {
-        double v = 0.5 * u * u / (1 - u);
+        double v = u * u / (1 - u);
         Operator sigma = near.orElseGet(() -> mixture(roots, p));
         for (int step = 0; step < MOST_STEPS; step++) {
             Operator half = HermitianPowers.power(sigma, v / 2);

@@ -56,7 +56,7 @@ final class StrongConverseWords {
     }
 
     /** (α−1)/α for ln(α−1) = y. */
-    private static double order(double y) {
+    static double order(double y) {
         double e = Math.exp(y);
         return e / (1 + e);
     }

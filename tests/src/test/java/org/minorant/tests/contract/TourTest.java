@@ -12,6 +12,8 @@ import org.minorant.bounds.AssistedCoding;
 import org.minorant.bounds.Capacity;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.bounds.CodingBounds;
+import org.minorant.bounds.ErrorExponents;
+import org.minorant.bounds.Exponent;
 import org.minorant.bounds.Ledger;
 import org.minorant.bounds.Side;
 import org.minorant.bounds.TestingBounds;
@@ -164,6 +166,9 @@ class TourTest {
         Information sure = many.achievable(1e-3); // some code has as many messages: about 990.0 bits
         Information most = many.converse(1e-3); // no code has more: about 1000.0 bits
         Approximation about = many.normalApproximation(1e-3); // nC − √(nV) Q⁻¹(ε): a type of its own, no bound
+        Information anyway =
+                many.strongConverse(1e-3); // for every channel and any number of uses, as chernoffAchievable
+        Exponent decay = ErrorExponents.of(channel, Information.ofBits(0.3)).randomCoding(); // 0.7 bit each use
         // end snippet
 
         // three kets in a plane whose average is the maximally mixed state: one bit
@@ -175,6 +180,9 @@ class TourTest {
         assertEquals(1000 + Math.log(1e-3) / Math.log(2), sure.bits().midpoint(), 1e-6);
         assertEquals(1000 - Math.log1p(-1e-3) / Math.log(2), most.bits().midpoint(), 1e-6);
         assertEquals(1000, about.bits(), 1e-4);
+        assertTrue(anyway.nats().upper() >= most.nats().lower());
+        // E0 of a maximally mixed output is s ln 2
+        assertEquals(0.7, decay.bits().midpoint(), 1e-12);
     }
 
     @Test
