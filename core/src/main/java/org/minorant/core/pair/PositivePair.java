@@ -28,6 +28,7 @@ import org.minorant.core.WideDouble;
 public abstract sealed class PositivePair
         permits CommutingCopies,
                 CommutingPair,
+                CommutingProducts,
                 DensePair,
                 DirectSumPair,
                 FactorPair,

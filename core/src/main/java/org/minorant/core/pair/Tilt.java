@@ -73,6 +73,17 @@ final class Tilt {
         return new Tilt(n, z, rest, s * lnT + n * ln + SLACK);
     }
 
+    /** The derivative of ln Z by s, Σ z_i (ly_i − lx_i)/Z. */
+    static double slope(double[] lx, double[] ly, double s) {
+        double[] z = new double[lx.length];
+        tilt(lx, ly, s, z);
+        double slope = 0;
+        for (int i = 0; i < z.length; i++) {
+            slope += z[i] * (ly[i] - lx[i]);
+        }
+        return slope;
+    }
+
     /** Fills q and returns ln Z. */
     private static double tilt(double[] lx, double[] ly, double s, double[] q) {
         double most = Double.NEGATIVE_INFINITY;
