@@ -40,6 +40,7 @@ public final class CodingBounds {
     private final int uses;
     private final Lazy<Curve> mean;
     private final Lazy<LetterCurves> letters;
+    private final Lazy<ClassicalCodes> classical;
 
     private CodingBounds(
             ClassicalQuantumChannel channel,
@@ -52,6 +53,8 @@ public final class CodingBounds {
         this.chosenOutput = chosenOutput;
         this.mean = new Lazy<>(this::makeMean);
         this.letters = new Lazy<>(this::makeLetters);
+        this.classical = new Lazy<>(() -> new ClassicalCodes(
+                ClassicalCodes.outputs("CodingBounds", channel), input(), uses, mean.get(), saturation()));
     }
 
     /**
@@ -98,11 +101,11 @@ public final class CodingBounds {
      * Returns the same bounds for n uses of the channel: codewords are words of n letters, drawn letter by letter from the input P for the achievability bounds, and the output state
      * of the converse is σ^⊗n.
      *
-     * <p><b>What is covered.</b> The words' curves must be one curve that copies of one pair give:
+     * <p><b>What is covered.</b> The words' curves must be one curve that copies of one pair give, or few enough curves by the types of words:
      *
      * <ul>
      *   <li>two equiprobable kets, of any dimension;
-     *   <li>classical channels; for the converse only those where all letters have the same probabilities against the output state, up to their order, as symmetric channels have;
+     *   <li>classical channels, against output states that commute with the letters; for the converse by types of words where letters are not alike, which fits two kinds of letters to 10⁴ uses, three to a few hundred;
      *   <li>letters on a qubit, mixed or pure, of the same Bloch length and the same angle to the Bloch vector of the output state, or of the same length if that is maximally mixed.
      * </ul>
      *
@@ -237,6 +240,93 @@ public final class CodingBounds {
 
     private Enclosure others(double epsilon) {
         return RandomCoding.others(mean.get(), epsilon, saturation(), uses == 1 ? 0 : ENOUGH_FOR_WORDS);
+    }
+
+    /**
+     * Returns the dependence-testing bound of a classical channel, f((M−1)/2) with the f of {@link #achievableError(long)}: some code of M messages has at most this average error.
+     *
+     * <p>Source: Y. Polyanskiy, H. V. Poor, S. Verdú, IEEE Trans. Inf. Theory 56, 2307 (2010), theorem 17 (number from memory).
+     *
+     * @param messages M, at least 1
+     * @return the bound; 0 for one message
+     * @throws InvalidInputException if M is below 1 or the outputs are not diagonal
+     */
+    public Enclosure dependenceTestingError(long messages) {
+        Enclosure others = MessageCount.others("CodingBounds.dependenceTestingError", messages);
+        return classical("CodingBounds.dependenceTestingError").dependenceTestingError(others);
+    }
+
+    /**
+     * Returns the bound of {@link #dependenceTestingError(long)} for a real M.
+     *
+     * @param messages ln M, at least 0
+     * @return the bound
+     * @throws InvalidInputException if ln M is negative or beyond 7e8, or the outputs are not diagonal
+     */
+    public Enclosure dependenceTestingError(Information messages) {
+        Enclosure others = MessageCount.others("CodingBounds.dependenceTestingError", messages);
+        return classical("CodingBounds.dependenceTestingError").dependenceTestingError(others);
+    }
+
+    /**
+     * Returns the largest ln M at which {@link #dependenceTestingError(long)} is at most ε, with the reading of {@link #achievable}; M − 1 is twice that of {@link #achievable}, exactly.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold; 0 if it lies below two messages, and from 0 if that is not certain
+     * @throws InvalidInputException if ε is not in range or the outputs are not diagonal
+     */
+    public Information dependenceTesting(double epsilon) {
+        ChannelChecks.error("CodingBounds.dependenceTesting", epsilon);
+        ClassicalCodes codes = classical("CodingBounds.dependenceTesting");
+        return MessageCount.threshold(codes.dependenceTesting(epsilon), DependenceTesting.THEOREM);
+    }
+
+    /**
+     * Returns the random-coding union bound of a classical channel: some code of M messages has at most the average error E[min(1, (M−1) P[W(Y|X̄) ≥ W(Y|X) given X, Y])], words X and X̄ drawn
+     * from the input. Never above f(M − 1), nor far from dependence testing on either side.
+     *
+     * <p><b>Accuracy and cost.</b> By joint types: relative width about 1e-9. Likelihoods equal up to 2^-44 are taken for equal, which is a decoder, too. Two letters and outcomes fit to 10⁴ uses; where more than
+     * 5 · 10⁸ types matter it is refused.
+     *
+     * <p>Source: Y. Polyanskiy, H. V. Poor, S. Verdú, IEEE Trans. Inf. Theory 56, 2307 (2010), theorem 16 (number from memory).
+     *
+     * @param messages M, at least 1
+     * @return the bound; 0 for one message
+     * @throws InvalidInputException if M is below 1, the outputs are not diagonal or there are too many types
+     */
+    public Enclosure randomCodingUnionError(long messages) {
+        Enclosure others = MessageCount.others("CodingBounds.randomCodingUnionError", messages);
+        return classical("CodingBounds.randomCodingUnionError").unionError(others);
+    }
+
+    /**
+     * Returns the bound of {@link #randomCodingUnionError(long)} for a real M.
+     *
+     * @param messages ln M, at least 0
+     * @return the bound
+     * @throws InvalidInputException if ln M is negative or beyond 7e8, the outputs are not diagonal or there are too many types
+     */
+    public Enclosure randomCodingUnionError(Information messages) {
+        Enclosure others = MessageCount.others("CodingBounds.randomCodingUnionError", messages);
+        return classical("CodingBounds.randomCodingUnionError").unionError(others);
+    }
+
+    /**
+     * Returns the largest ln M at which {@link #randomCodingUnionError(long)} is at most ε, with the reading of {@link #achievable}.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold; 0 if it lies below two messages, and from 0 if that is not certain
+     * @throws InvalidInputException if ε is not in range, the outputs are not diagonal or there are too many types
+     */
+    public Information randomCodingUnion(double epsilon) {
+        ChannelChecks.error("CodingBounds.randomCodingUnion", epsilon);
+        ClassicalCodes codes = classical("CodingBounds.randomCodingUnion");
+        return MessageCount.threshold(codes.union(epsilon), RandomCodingUnion.THEOREM);
+    }
+
+    private ClassicalCodes classical(String asked) {
+        ClassicalCodes.outputs(asked, channel);
+        return classical.get();
     }
 
     /**
@@ -399,6 +489,40 @@ public final class CodingBounds {
     }
 
     /**
+     * Returns how many uses a fraction of the capacity takes at an error of ε, counted in whole messages: {@link #blockLengthFor(double, double, WholeUnit)}.
+     *
+     * @param fraction the fraction of the capacity, between 0 and 1, both excluded
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return a number of uses that is surely enough, and one before which it is impossible
+     * @throws InvalidInputException if an argument is out of range, the capacity is 0, or the bounds do not cover the uses needed
+     */
+    public BlockLength blockLengthFor(double fraction, double epsilon) {
+        return BlockLengthSearch.of(this, fraction, epsilon, WholeUnit.MESSAGES);
+    }
+
+    /**
+     * Returns how many uses of the channel a fraction of its capacity takes at an error of ε, for every channel that {@link #uses} covers, at the input and output state of these bounds. Classical channels take the best of
+     * dependence testing and the random-coding union, the others f(M − 1). Evaluates the converse some hundred times, which takes long where one value does.
+     *
+     * @param fraction the fraction of the capacity, between 0 and 1, both excluded
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @param unit what the size of codes is counted in
+     * @return a number of uses that is surely enough, and one before which it is impossible; {@link BlockLength} says exactly what is certified
+     * @throws InvalidInputException if an argument is out of range, the capacity is 0, or the bounds do not cover the uses needed
+     */
+    public BlockLength blockLengthFor(double fraction, double epsilon, WholeUnit unit) {
+        return BlockLengthSearch.of(this, fraction, epsilon, unit);
+    }
+
+    /** A bound by which M messages surely have an error of at most ε, if there is one. */
+    Optional<Theorem> reaching(WideDouble others, double epsilon) {
+        if (ClassicalCodes.cover(channel)) {
+            return classical.get().reaching(others, epsilon);
+        }
+        return mean.get().at(others).upper() <= epsilon ? Optional.of(RandomCoding.THEOREM) : Optional.empty();
+    }
+
+    /**
      * Returns every bound on ln of the largest whole number of messages that the uses carry with average error at most ε. The bound of Hayashi and Nagaoka, never the best one, is
      * listed for one use only: in many it takes long. A bound that {@link #uses} refuses for this channel is left out, which the name of the quantity says.
      *
@@ -414,6 +538,10 @@ public final class CodingBounds {
             ledger.whole(() -> older, HayashiNagaoka.THEOREM);
         }
         ledger.whole(() -> others(epsilon), RandomCoding.THEOREM);
+        if (ClassicalCodes.cover(channel)) {
+            ledger.whole(() -> classical.get().dependenceTesting(epsilon), DependenceTesting.THEOREM);
+            ledger.whole(() -> classical.get().union(epsilon), RandomCodingUnion.THEOREM);
+        }
         ledger.whole(() -> relaxed().others(epsilon), ChernoffWords.THEOREM);
         ledger.add(Side.UPPER, () -> converse(epsilon), TraceMinimumConverse.THEOREM);
         ledger.add(Side.UPPER, () -> strongConverse(epsilon), StrongConverseWords.THEOREM);
@@ -434,6 +562,10 @@ public final class CodingBounds {
         ledger.plain(Side.LOWER, () -> converseError(messages), TraceMinimumConverse.THEOREM);
         ledger.plain(Side.LOWER, () -> strong().error(others.plus(Enclosure.ONE)), StrongConverseWords.THEOREM);
         ledger.plain(Side.UPPER, () -> achievableError(messages), RandomCoding.THEOREM);
+        if (ClassicalCodes.cover(channel)) {
+            ledger.plain(Side.UPPER, () -> dependenceTestingError(messages), DependenceTesting.THEOREM);
+            ledger.plain(Side.UPPER, () -> randomCodingUnionError(messages), RandomCodingUnion.THEOREM);
+        }
         ledger.plain(Side.UPPER, () -> relaxed().error(others), ChernoffWords.THEOREM);
         if (uses == 1) {
             ledger.plain(Side.UPPER, () -> hayashiNagaokaError(messages), HayashiNagaoka.THEOREM);

@@ -1,5 +1,7 @@
 package org.minorant.bounds;
 
+import java.util.ArrayList;
+import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.pair.PositivePair;
 
@@ -9,11 +11,11 @@ import org.minorant.core.pair.PositivePair;
  * <pre>A = (P(x) W(y|x)),   B = (P(x) Q(y)),   Q = Σ_x P(x) W_x.</pre>
  *
  * <p>Against an output state alone, the curve of a word depends on its letters only through the pairs (W(y|x), Q(y)), in whatever order of y. Where these are the
- * same for all letters, as for symmetric channels, so are the curves of all words.
+ * same for all letters, as for symmetric channels, so are the curves of all words; otherwise a word's curve depends on how many letters of each kind it has ({@link WordTypes}).
  */
 final class CommutingWords {
 
-    /** Letters whose sorted eigenvalues differ by more than this, relatively, are not alike. */
+    /** Letters whose sorted eigenvalues differ by more than this, relatively, are of different kinds. */
     private static final double ALIKE = 0x1p-44;
 
     private static final double U = 0x1p-53;
@@ -60,21 +62,23 @@ final class CommutingWords {
      * @param trace what holds their sum, over its true value
      */
     WordCurves against(double[] s, Enclosure trace) {
-        MergedSpectra first = MergedSpectra.of(rows[0], s);
-        double error = first.error();
-        for (int x = 1; x < rows.length; x++) {
-            MergedSpectra other = MergedSpectra.of(rows[x], s);
-            double distance = first.distance(other);
-            if (!(distance <= ALIKE)) {
-                throw WordCurves.notCovered(
-                        "the rows of letters 0 and " + x
-                                + " against the output state are not alike, and the converse for such channels needs the types of words");
+        List<MergedSpectra> kinds = new ArrayList<>();
+        double error = 0;
+        for (double[] row : rows) {
+            MergedSpectra letter = MergedSpectra.of(row, s);
+            int k = 0;
+            while (k < kinds.size() && !(kinds.get(k).distance(letter) <= ALIKE)) {
+                k++;
             }
-            error = Math.max(error, first.error() + other.error() + 2 * distance);
+            if (k == kinds.size()) {
+                kinds.add(letter);
+            }
+            MergedSpectra kind = kinds.get(k);
+            error = Math.max(error, kind.error() + letter.error() + 2 * kind.distance(letter));
         }
-        PositivePair pair = first.copies(n);
+        List<PositivePair> pairs = kinds.size() == 1 ? List.of(kinds.get(0).copies(n)) : WordTypes.pairs(kinds, n);
         Enclosure one = Enclosure.ONE;
         Enclosure slack = one.dividedBy(traces).hull(one.dividedBy(trace)).hull(one);
-        return WordCurves.of(pair, traces, slack, error, 0, n);
+        return WordCurves.of(pairs, traces, slack, error, 0, n);
     }
 }

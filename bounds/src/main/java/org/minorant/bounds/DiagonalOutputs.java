@@ -214,6 +214,14 @@ final class DiagonalOutputs implements ChannelOutputs {
         return new CommutingWords(rows, traces, n).mean(p, mixture(p));
     }
 
+    /** The random-coding union bound of n uses. */
+    RandomCodingUnion union(double[] p, int n) {
+        if (!isShallow(p)) {
+            throw WordCurves.notCovered("products of probabilities of letters and outcomes below " + SHALLOW);
+        }
+        return new RandomCodingUnion(rows, p, traces, n);
+    }
+
     @Override
     public WordCurves wordsAgainst(DensityOperator sigma, int n) {
         if (!isDiagonal(sigma)) {

@@ -2,6 +2,8 @@ package org.minorant.bounds;
 
 import java.util.List;
 import java.util.function.ToDoubleBiFunction;
+import java.util.stream.IntStream;
+import java.util.stream.Stream;
 import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
 import org.minorant.core.curve.Curve;
@@ -16,6 +18,11 @@ import org.minorant.core.pair.PositivePair;
  * by their traces; the factor's enclosure includes 1, so that they enclose the values for those given, too.
  */
 final class LetterCurves {
+
+    /** Of more pairs than this a part is enough for a guess. */
+    private static final int MANY = 48;
+
+    private static final int FEW = 16;
 
     private final List<PositivePair> pairs;
     private final Enclosure traces;
@@ -40,13 +47,13 @@ final class LetterCurves {
     }
 
     private LetterCurves(WordCurves words) {
-        this.pairs = List.of(words.pair());
+        this.pairs = words.pairs();
         this.traces = words.traces();
         this.factor = words.factor();
         this.off = words.off();
     }
 
-    /** The curves of words that are all alike, taken as letters. */
+    /** The curves of words, taken as letters. */
     static LetterCurves ofWords(WordCurves words) {
         return new LetterCurves(words);
     }
@@ -120,11 +127,15 @@ final class LetterCurves {
     }
 
     private Curve guessed(Curve values, ToDoubleBiFunction<PositivePair, Double> estimate) {
-        Guess least = t -> pairs.stream()
-                .mapToDouble(pair -> estimate.applyAsDouble(pair, t))
+        boolean many = pairs.size() > MANY;
+        int step = many ? pairs.size() / FEW : 1;
+        Guess least = t -> IntStream.range(0, pairs.size())
+                .filter(i -> i % step == 0 || i == pairs.size() - 1)
+                .parallel()
+                .mapToDouble(i -> estimate.applyAsDouble(pairs.get(i), t))
                 .min()
                 .orElse(Double.NaN);
-        return pairs.stream().allMatch(PositivePair::hasCheapEstimate) ? values.withGuess(least) : values;
+        return many || pairs.stream().allMatch(PositivePair::hasCheapEstimate) ? values.withGuess(least) : values;
     }
 
     /** A number that no value of {@link #least} and {@link #leastAgainst} exceeds, nor its ratio to the weight. */
@@ -138,10 +149,8 @@ final class LetterCurves {
     }
 
     private Enclosure least(WideDouble a, WideDouble b) {
-        Enclosure least = Enclosure.infinite();
-        for (PositivePair pair : pairs) {
-            least = least.min(pair.traceMinimum(a, b));
-        }
+        Stream<PositivePair> all = pairs.size() > MANY ? pairs.parallelStream() : pairs.stream();
+        Enclosure least = all.map(pair -> pair.traceMinimum(a, b)).reduce(Enclosure.infinite(), Enclosure::min);
         Enclosure value = least.times(factor);
         if (off.signum() == 0) {
             return value;

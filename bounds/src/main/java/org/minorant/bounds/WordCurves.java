@@ -1,31 +1,42 @@
 package org.minorant.bounds;
 
+import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
 import org.minorant.core.pair.PositivePair;
 
 /**
- * What one pair of n copies says of all words of n letters: their curves against the n-fold output state are this pair's, within errors.
+ * What one pair of n copies, or one for each type of words, says of all words of n letters: their curves against the n-fold output state are those pairs', within errors.
  *
- * @param pair n copies
+ * @param pairs one pair for each type of words
  * @param traces what holds the traces of words
- * @param factor what the pair's curve is to be multiplied with, an enclosure around 1
- * @param off a bound on the trace norm by which a word differs from the operator that the pair stands for
+ * @param factor what the pairs' curves are to be multiplied with, an enclosure around 1
+ * @param off a bound on the trace norm by which a word differs from the operator that its pair stands for
  */
-record WordCurves(PositivePair pair, Enclosure traces, Enclosure factor, WideDouble off) {
+record WordCurves(List<PositivePair> pairs, Enclosure traces, Enclosure factor, WideDouble off) {
+
+    WordCurves {
+        pairs = List.copyOf(pairs);
+    }
+
+    /** The curves of n uses, all words alike. */
+    static WordCurves of(PositivePair pair, Enclosure traces, Enclosure slack, double error, double distance, int n) {
+        return of(List.of(pair), traces, slack, error, distance, n);
+    }
 
     /**
      * The curves of n uses.
      *
-     * @param pair n copies
+     * @param pairs one pair for each type of words
      * @param traces what holds the traces of letters
      * @param slack what holds 1 and the factors of normalisation of one use
      * @param error the relative error of the operators of one use
      * @param distance how far a letter is from what the pair stands for, in trace norm
      * @param n the number of uses
      */
-    static WordCurves of(PositivePair pair, Enclosure traces, Enclosure slack, double error, double distance, int n) {
+    static WordCurves of(
+            List<PositivePair> pairs, Enclosure traces, Enclosure slack, double error, double distance, int n) {
         Enclosure one = Enclosure.ONE;
         Enclosure relative = one.widen(error).hull(one.dividedBy(one.widen(error)));
         // ‖A_1 ⊗ … ⊗ A_n − A'_1 ⊗ … ⊗ A'_n‖₁ ≤ n δ T^(n−1), exchanging one factor after the other; T ≥ 1 bounds the
@@ -33,7 +44,7 @@ record WordCurves(PositivePair pair, Enclosure traces, Enclosure factor, WideDou
         WideDouble trace = traces.hull(one).widen(distance).upperWide();
         WideDouble off =
                 Enclosure.of(trace, trace).power(n).times(distance).times(n).upperWide();
-        return new WordCurves(pair, traces.power(n), slack.times(relative).power(n), off);
+        return new WordCurves(pairs, traces.power(n), slack.times(relative).power(n), off);
     }
 
     LetterCurves curves() {
@@ -45,7 +56,7 @@ record WordCurves(PositivePair pair, Enclosure traces, Enclosure factor, WideDou
         return new InvalidInputException(
                 "CodingBounds.uses",
                 found,
-                "two equiprobable kets; letters of one classical channel, for the converse with like rows; qubits of like length and angle to the output state",
+                "two equiprobable kets; letters of one classical channel; qubits of like length and angle to the output state",
                 "ask for one use, of a channel whose letters are the words, or choose input and output state by the symmetry of the letters");
     }
 }

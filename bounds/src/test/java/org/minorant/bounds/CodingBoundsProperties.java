@@ -65,7 +65,8 @@ final class CodingBoundsProperties {
         ClassicalQuantumChannel channel = Channels.random(random, 5, 6);
         double epsilon = epsilon(random);
         Ledger ledger = CodingBounds.of(channel).ledger(epsilon);
-        assertEquals(6, ledger.bounds().size());
+        // dependence testing and the random-coding union where outputs are diagonal
+        assertEquals(ClassicalCodes.cover(channel) ? 8 : 6, ledger.bounds().size());
         assertTrue(channel.capacity().gap() < 1e-10, channel.capacity().toString());
     }
 

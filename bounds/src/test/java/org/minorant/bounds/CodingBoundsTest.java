@@ -221,11 +221,17 @@ final class CodingBoundsTest {
         Ledger ledger = CodingBounds.of(ClassicalQuantumChannel.ofStochasticMatrix(rows))
                 .ledger(0.4);
         List<Bound> low = ledger.bounds(Side.LOWER);
-        assertEquals(3, low.size());
-        // f(1) = 1/3·(…) is about 0.34 and f(2) about 0.67: two messages, not three; the others certify only one
+        assertEquals(5, low.size());
+        // f(1) = 1/3·(…) is about 0.34 and f(2) about 0.67: two messages, not three; the first two certify only one
+        assertEquals(Enclosure.ZERO, low.get(0).value());
+        assertEquals(Enclosure.ZERO, low.get(1).value());
         assertEquals(RandomCoding.THEOREM, low.get(2).theorem());
         assertTrue(low.get(2).value().contains(Math.log(2)), low.get(2).toString());
-        assertEquals(Enclosure.ZERO, low.get(0).value());
+        // E[min(1, t T)] with T about 1/3 is below 0.4 for t = 1 only; f((M-1)/2) at M = 3 is f(1)
+        assertEquals(RandomCodingUnion.THEOREM, low.get(3).theorem());
+        assertTrue(low.get(3).value().contains(Math.log(2)), low.get(3).toString());
+        assertEquals(DependenceTesting.THEOREM, low.get(4).theorem());
+        assertTrue(low.get(4).value().contains(Math.log(3)), low.get(4).toString());
         List<Bound> high = ledger.bounds(Side.UPPER);
         assertEquals(3, high.size());
         assertTrue(high.get(0).value().upper() < 1.7, high.get(0).toString());

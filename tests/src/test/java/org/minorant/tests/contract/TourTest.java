@@ -9,6 +9,7 @@ import org.junit.jupiter.api.Test;
 import org.minorant.bounds.Approximation;
 import org.minorant.bounds.AssistedCapacity;
 import org.minorant.bounds.AssistedCoding;
+import org.minorant.bounds.BlockLength;
 import org.minorant.bounds.Capacity;
 import org.minorant.bounds.ClassicalQuantumChannel;
 import org.minorant.bounds.CodingBounds;
@@ -169,6 +170,7 @@ class TourTest {
         Information anyway =
                 many.strongConverse(1e-3); // for every channel and any number of uses, as chernoffAchievable
         Exponent decay = ErrorExponents.of(channel, Information.ofBits(0.3)).randomCoding(); // 0.7 bit each use
+        BlockLength needed = once.blockLengthFor(0.9, 1e-3); // uses for 90 % of capacity: sure, and impossible before
         // end snippet
 
         // three kets in a plane whose average is the maximally mixed state: one bit
@@ -183,6 +185,9 @@ class TourTest {
         assertTrue(anyway.nats().upper() >= most.nats().lower());
         // E0 of a maximally mixed output is s ln 2
         assertEquals(0.7, decay.bits().midpoint(), 1e-12);
+        // 2^(0.9 n) messages below 2^n/1000, and no converse against n bits
+        assertEquals(100, needed.sure());
+        assertEquals(1, needed.impossibleBefore());
     }
 
     @Test
