@@ -285,7 +285,7 @@ public final class CodingBounds {
      * Returns the random-coding union bound of a classical channel: some code of M messages has at most the average error E[min(1, (M−1) P[W(Y|X̄) ≥ W(Y|X) given X, Y])], words X and X̄ drawn
      * from the input. Never above f(M − 1), nor far from dependence testing on either side.
      *
-     * <p><b>Accuracy and cost.</b> By joint types: relative width about 1e-9. Likelihoods equal up to 2^-44 are taken for equal, which is a decoder, too. Two letters and outcomes fit to 10⁴ uses; where more than
+     * <p><b>Accuracy and cost.</b> By joint types: relative width about 1e-9. Likelihoods equal up to 2^-44 are taken for equal, which is a decoder, too. Two letters and outcomes fit to some 3000 uses, to 10⁴ with a zero among them; where more than
      * 5 · 10⁸ types matter it is refused.
      *
      * <p>Source: Y. Polyanskiy, H. V. Poor, S. Verdú, IEEE Trans. Inf. Theory 56, 2307 (2010), theorem 16 (number from memory).

@@ -109,7 +109,7 @@ final class ClassicalCodesTest {
         assertTrue(g.isPossiblyBelow(f), () -> g + " above " + f);
     }
 
-    /** T ≤ e^-i, so g ≤ f; and both sides of the converse. */
+    /** T ≤ e^-i, so g ≤ f; and nothing is above the converse. */
     @Property(tries = 25, shrinking = ShrinkingMode.OFF)
     void orderOfBounds(@ForAll long seed) {
         Random random = new Random(seed);
@@ -121,6 +121,10 @@ final class ClassicalCodesTest {
         Enclosure low = b.achievable(epsilon).nats();
         Enclosure union = b.randomCodingUnion(epsilon).nats();
         assertTrue(low.isPossiblyBelow(union), () -> low + " above " + union);
+        Enclosure most = b.converse(epsilon).nats();
+        Enclosure dependence = b.dependenceTesting(epsilon).nats();
+        assertTrue(union.isPossiblyBelow(most), () -> union + " above " + most);
+        assertTrue(dependence.isPossiblyBelow(most), () -> dependence + " above " + most);
         if (union.lower() > 0) {
             assertTrue(union.width() < 1e-6, () -> union.toIntervalString(17));
             Enclosure there = b.randomCodingUnionError(Information.ofNats(union));
