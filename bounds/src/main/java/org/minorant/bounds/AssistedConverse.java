@@ -36,7 +36,7 @@ final class AssistedConverse {
     /** Logarithms of t that are looked at: t is at least 1/M, and at most 1/ε. */
     private static final double MOST = 40;
 
-    private static final int GRID = 200;
+    private static final int GRID = 100;
 
     private final EnclosedMatrix joint;
     private final EnclosedMatrix product;

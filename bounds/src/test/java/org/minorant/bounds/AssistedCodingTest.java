@@ -139,7 +139,7 @@ final class AssistedCodingTest {
     @Test
     void manyUsesOfAPauliChannel() {
         AssistedCoding bounds =
-                AssistedCoding.of(AssistedChannels.pauli(0.9, 0.05, 0.03, 0.02)).uses(10_000);
+                AssistedCoding.of(AssistedChannels.pauli(0.9, 0.05, 0.03, 0.02)).uses(5_000);
         Enclosure low = bounds.achievable(ERROR).bits();
         Enclosure high = bounds.converse(ERROR).bits();
         assertTrue(low.width() < 1e-6, () -> low.toIntervalString(17));
@@ -174,7 +174,7 @@ final class AssistedCodingTest {
     }
 
     /** The number for one use of any channel holds against every input: β_ε(N(θ_ρ)‖ρ_R ⊗ σ) is at least 1/M, σ the output of the default input. */
-    @Property(tries = 6, shrinking = ShrinkingMode.OFF)
+    @Property(tries = 3, shrinking = ShrinkingMode.OFF)
     void theConverseHoldsForEveryInput(@ForAll long seed) {
         Random random = new Random(seed);
         KrausChannel channel = random.nextInt(3) == 0
