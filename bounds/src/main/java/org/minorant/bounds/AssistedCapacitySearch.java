@@ -50,8 +50,9 @@ final class AssistedCapacitySearch {
     }
 
     private static AssistedCapacity result(AssistedCapacityCertificate c, AssistedInput input, int steps) {
+        // both ends are certified: if they crossed, one would be wrong, and the enclosure refuses that
         WideDouble low = c.below().lowerWide();
-        Information value = Information.ofNats(Enclosure.of(low, c.above().max(low)))
+        Information value = Information.ofNats(Enclosure.of(low, c.above()))
                 .withSource("mutual information of an input and largest eigenvalue of its derivative");
         return new AssistedCapacity(value, input.state(), steps);
     }

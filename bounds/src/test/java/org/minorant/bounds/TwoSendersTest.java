@@ -203,30 +203,21 @@ final class TwoSendersTest {
     void achievableIsAtMostConverse(@ForAll long seed) {
         Random random = new Random(seed);
         TwoSenders both = TwoSenders.of(List.of(
-                List.of(
-                        RandomStates.hilbertSchmidt(3, seed),
-                        RandomStates.pure(3, seed + 1),
-                        RandomStates.pure(3, seed + 2)),
-                List.of(
-                        RandomStates.pure(3, seed + 3),
-                        RandomStates.pure(3, seed + 4),
-                        RandomStates.pure(3, seed + 5))));
+                List.of(RandomStates.hilbertSchmidt(3, seed), RandomStates.pure(3, seed + 1)),
+                List.of(RandomStates.pure(3, seed + 2), RandomStates.pure(3, seed + 3))));
         double epsilon = 0.3 + 0.6 * random.nextDouble();
         Information two = Information.ofNats(Enclosure.exact(1.5).ln());
+        Information most = both.converse(epsilon);
         Optional<Information> rest = both.achievable(two, epsilon);
         rest.ifPresent(r -> {
-            assertTrue(r.nats()
-                    .plus(two.nats())
-                    .isPossiblyBelow(both.converse(epsilon).nats()));
+            assertTrue(r.nats().plus(two.nats()).isPossiblyBelow(most.nats()));
             assertTrue(r.nats().isPossiblyBelow(both.converseOfSecond(epsilon).nats()));
             if (r.nats().lower() > 0) {
                 assertTrue(both.achievableError(two, r).widen(1e-8).contains(epsilon));
             }
         });
-        assertTrue(both.converseOfFirst(epsilon).nats().lower() >= 0);
-        assertTrue(both.converseOfFirst(epsilon)
-                .nats()
-                .isPossiblyBelow(both.converse(epsilon).nats().times(1 + 1e-9)));
+        assertTrue(
+                both.converseOfFirst(epsilon).nats().isPossiblyBelow(most.nats().times(1 + 1e-9)));
     }
 
     /** Numbers of messages far beyond doubles: all letters are confused. */
