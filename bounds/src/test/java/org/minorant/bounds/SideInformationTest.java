@@ -114,7 +114,7 @@ final class SideInformationTest {
         List<Double> weights = new ArrayList<>();
         double sum = 0;
         for (int x = 0; x < p.length; x++) {
-            if ((h >> x & 1) == value) {
+            if ((h >> x & 1) == value && p[x] > 0) {
                 inside.add(w.get(x));
                 weights.add(p[x]);
                 sum += p[x];
