@@ -29,7 +29,7 @@ import org.minorant.core.InvalidInputException;
  *
  * <p>From the critical rate on, random coding and sphere packing agree. Above the capacity the success decays with the strong converse exponent exactly: M. Mosonyi, T. Ogawa, Commun. Math. Phys. 355, 373 (2017).
  *
- * <p><b>Accuracy.</b> Values are enclosed for outputs and inputs divided by their sums. Searches find inputs, output states and s; certificates bound what they missed. Widths are about 1e-12 nats, up to some 1e-8 where nearly equal letters leave the best input open, and 1e-9 for the
+ * <p><b>Accuracy.</b> Values are enclosed for outputs and inputs divided by their sums. Searches find inputs, output states and s; certificates bound what they missed. Widths are about 1e-12 nats, up to some 1e-6 where the best input is nearly open or about to drop a letter, and 1e-9 for the
  * strong converse exponent. They are larger at rate zero for sphere packing, at rates where it becomes infinite, for ranks that doubles do not fix, and far above the capacity for the strong converse exponent, of which orders
  * beyond 5 are only bounded (1e-2 was met).
  *

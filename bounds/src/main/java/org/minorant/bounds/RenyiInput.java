@@ -27,6 +27,9 @@ final class RenyiInput {
     /** Every letter starts with at least this part of an equal share. */
     private static final double SHARE = 0.1;
 
+    /** Letters less probable than this, and than this part of what they fall short, are tried without. */
+    private static final double RARE = 1e-3;
+
     /** Further runs at most. */
     private static final int RUNS = 2;
 
@@ -70,6 +73,12 @@ final class RenyiInput {
         }
         int[] all = IntStream.range(0, k).toArray();
         search.interior(p, Arrays.equals(p, equal) ? atEqual : search.noted(p), all);
+        Slope there = slope(traces, scale, search.best());
+        double[] fewer = worthwhile(there.divergences(), search.best());
+        int[] active = IntStream.range(0, k).filter(x -> fewer[x] > 0).toArray();
+        if (active.length < k) {
+            search.interior(fewer, search.noted(fewer), active);
+        }
         // where letters should vanish, or differ little, the first run may end early; another from inside goes on
         for (int again = 0; again < RUNS && search.gap() > ENOUGH; again++) {
             double share = SHARE * Math.pow(0.1, again + 1);
@@ -79,6 +88,14 @@ final class RenyiInput {
             search.interior(inside, search.noted(inside), all);
         }
         return search.best();
+    }
+
+    /** The input without rare letters that fall short: powers of the mixture bend sharply where such a letter brings a dimension of its own, so that steps would crawl. */
+    private static double[] worthwhile(double[] d, double[] p) {
+        double most = Arrays.stream(d).max().orElse(0);
+        double[] q = new double[p.length];
+        Arrays.setAll(q, x -> p[x] < RARE && p[x] < RARE * (most - d[x]) ? 0 : p[x]);
+        return InteriorSearch.normalised(q);
     }
 
     /** Scaled such that the gradient is about that of the information itself, for orders near one. */

