@@ -72,8 +72,8 @@ interface ChannelOutputs {
      *
      * @param p the distribution of letters
      * @param n the length of words
-     * @return one pair that stands for all words
-     * @throws org.minorant.core.InvalidInputException if there is none
+     * @return one pair that stands for all words, or one for each type of words with its probability
+     * @throws org.minorant.core.InvalidInputException if there are none or too many
      */
     WordCurves words(double[] p, int n);
 

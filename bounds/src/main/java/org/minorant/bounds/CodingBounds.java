@@ -101,12 +101,14 @@ public final class CodingBounds {
      * Returns the same bounds for n uses of the channel: codewords are words of n letters, drawn letter by letter from the input P for the achievability bounds, and the output state
      * of the converse is σ^⊗n.
      *
-     * <p><b>What is covered.</b> The words' curves must be one curve that copies of one pair give, or few enough curves by the types of words:
+     * <p><b>What is covered.</b>
      *
      * <ul>
-     *   <li>two equiprobable kets, of any dimension;
      *   <li>classical channels, against output states that commute with the letters; for the converse by types of words where letters are not alike, which fits two kinds of letters to 10⁴ uses, three to a few hundred;
-     *   <li>letters on a qubit, mixed or pure, of the same Bloch length and the same angle to the Bloch vector of the output state, or of the same length if that is maximally mixed.
+     *   <li>kets: two equiprobable ones, or letters that are alike against the output state, by copies of one pair; others by the types of words, up to 20 000 of them;
+     *   <li>letters on a qubit: of the same Bloch length and the same angle to the Bloch vector of the output state, or of the same length if that is maximally mixed, by copies of one pair; others by up to 300 types of words,
+     *       which takes minutes beyond 50 uses;
+     *   <li>any letters while words have a dimension of at most 512.
      * </ul>
      *
      * Other channels are refused, when a bound is asked for that needs what they have not.

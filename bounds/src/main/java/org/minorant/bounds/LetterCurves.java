@@ -1,6 +1,7 @@
 package org.minorant.bounds;
 
 import java.util.List;
+import java.util.Optional;
 import java.util.function.ToDoubleBiFunction;
 import java.util.stream.IntStream;
 import java.util.stream.Stream;
@@ -11,7 +12,7 @@ import org.minorant.core.curve.Guess;
 import org.minorant.core.pair.PositivePair;
 
 /**
- * The curves t ↦ Tr[W_x ∧ tσ] of some letters of a channel against one state of its output.
+ * The curves t ↦ Tr[W_x ∧ tσ] of some letters of a channel against one state of its output, or of words, of which the least is asked for or a mean.
  *
  * <p><b>Normalisation.</b> Traces and sums of probabilities are one up to rounding only. Scaling A by λ and B by μ scales Tr[A ∧ B] by a number
  * between λ and μ, so the values for the operators given, times an enclosure of such factors, enclose the values for the operators divided
@@ -28,6 +29,8 @@ final class LetterCurves {
     private final Enclosure traces;
     private final Enclosure factor;
     private final WideDouble off;
+    /** Empty if the least curve is meant, as for letters. */
+    private final Optional<TypeMean> types;
 
     /**
      * Collects the curves.
@@ -44,6 +47,7 @@ final class LetterCurves {
                 .hull(Enclosure.ONE.dividedBy(trace))
                 .hull(Enclosure.ONE);
         this.off = WideDouble.ZERO;
+        this.types = Optional.empty();
     }
 
     private LetterCurves(WordCurves words) {
@@ -51,6 +55,7 @@ final class LetterCurves {
         this.traces = words.traces();
         this.factor = words.factor();
         this.off = words.off();
+        this.types = words.mean();
     }
 
     /** The curves of words, taken as letters. */
@@ -106,7 +111,7 @@ final class LetterCurves {
         return WideDouble.ONE.dividedByUp(least).timesUp(WideDouble.of(1 + 0x1p-30));
     }
 
-    /** t ↦ min over x of Tr[tW_x ∧ σ]. */
+    /** t ↦ min over x of Tr[tW_x ∧ σ], or the mean of words. */
     Curve least() {
         return guessed(t -> least(t, WideDouble.ONE), (pair, t) -> lnEstimate(pair, t, 0));
     }
@@ -129,6 +134,10 @@ final class LetterCurves {
     private Curve guessed(Curve values, ToDoubleBiFunction<PositivePair, Double> estimate) {
         boolean many = pairs.size() > MANY;
         int step = many ? pairs.size() / FEW : 1;
+        if (types.isPresent()) {
+            Guess mean = t -> types.get().lnEstimate(pairs, pair -> estimate.applyAsDouble(pair, t));
+            return pairs.stream().allMatch(PositivePair::hasCheapEstimate) ? values.withGuess(mean) : values;
+        }
         Guess least = t -> IntStream.range(0, pairs.size())
                 .filter(i -> i % step == 0 || i == pairs.size() - 1)
                 .parallel()
@@ -149,13 +158,22 @@ final class LetterCurves {
     }
 
     private Enclosure least(WideDouble a, WideDouble b) {
-        Stream<PositivePair> all = pairs.size() > MANY ? pairs.parallelStream() : pairs.stream();
-        Enclosure least = all.map(pair -> pair.traceMinimum(a, b)).reduce(Enclosure.infinite(), Enclosure::min);
-        Enclosure value = least.times(factor);
+        Enclosure value = types.map(mean -> mean.of(pairs, a, b))
+                .orElseGet(() -> leastOf(a, b))
+                .times(factor);
+        if (types.isPresent()) {
+            WideDouble rest = types.get().leftOut().timesUp(traces.upperWide()).timesUp(a);
+            value = Enclosure.of(value.lowerWide(), value.upperWide().plusUp(rest));
+        }
         if (off.signum() == 0) {
             return value;
         }
         WideDouble d = off.timesUp(a);
         return value.plus(Enclosure.of(d.negate(), d)).max(Enclosure.ZERO);
+    }
+
+    private Enclosure leastOf(WideDouble a, WideDouble b) {
+        Stream<PositivePair> all = pairs.size() > MANY ? pairs.parallelStream() : pairs.stream();
+        return all.map(pair -> pair.traceMinimum(a, b)).reduce(Enclosure.infinite(), Enclosure::min);
     }
 }

@@ -179,16 +179,27 @@ final class MatrixOutputs implements ChannelOutputs {
         List<DensityOperator> letters =
                 Arrays.stream(used).mapToObj(outputs::get).toList();
         List<LetterFactor> columns = Arrays.stream(used).mapToObj(factors::get).toList();
+        double[] weights = Arrays.stream(used).mapToDouble(x -> p[x]).toArray();
         SymmetricWords words = new SymmetricWords(letters, columns, traces, n);
         DensityOperator mixture = mixtureState(p);
-        return words.areTwoKets() && p[used[0]] == p[used[1]]
-                ? words.ofTwoKets(mixture, Traces.sum(p))
-                : words.against(mixture, Traces.sum(p).times(traces));
+        if (words.areTwoKets() && weights[0] == weights[1]) {
+            return words.ofTwoKets(mixture, Traces.sum(p));
+        }
+        return words.areAlike(mixture)
+                ? words.against(mixture, Traces.sum(p).times(traces))
+                : new QuantumWords(letters, traces, n).mean(weights, mixture);
     }
 
     @Override
     public WordCurves wordsAgainst(DensityOperator sigma, int n) {
-        return new SymmetricWords(outputs, factors, traces, n).against(sigma, Traces.of(sigma));
+        return wordsAgainst(sigma, Traces.of(sigma), n);
+    }
+
+    private WordCurves wordsAgainst(DensityOperator sigma, Enclosure trace, int n) {
+        SymmetricWords words = new SymmetricWords(outputs, factors, traces, n);
+        return words.areAlike(sigma)
+                ? words.against(sigma, trace)
+                : new QuantumWords(outputs, traces, n).against(sigma, trace);
     }
 
     @Override
@@ -197,6 +208,6 @@ final class MatrixOutputs implements ChannelOutputs {
         DensityOperator mixture = mixtureState(q);
         return words.areTwoKets() && q[0] == q[1]
                 ? words.ofTwoKets(mixture, Traces.sum(q))
-                : words.against(mixture, Traces.sum(q).times(traces));
+                : wordsAgainst(mixture, Traces.sum(q).times(traces), n);
     }
 }

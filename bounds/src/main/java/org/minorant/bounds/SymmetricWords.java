@@ -70,33 +70,17 @@ final class SymmetricWords {
     }
 
     /**
-     * The letters against a state of a qubit.
+     * The letters against a state of a qubit to which they are alike.
      *
      * @param sigma the state
      * @param trace what holds its trace
      */
     WordCurves against(DensityOperator sigma, Enclosure trace) {
-        if (sigma.dimension() != 2) {
-            throw WordCurves.notCovered(
-                    "letters that are neither classical nor two equiprobable kets, in dimension " + sigma.dimension());
-        }
-        List<BlochVector> vectors = new ArrayList<>();
-        for (LetterFactor f : factors) {
-            vectors.add(BlochVector.of(f));
-        }
+        List<BlochVector> vectors = vectors();
         BlochVector b = BlochVector.of(LetterFactor.of(sigma));
         double mixed = b.length().upper();
         boolean isMixed = mixed <= ALIKE;
-        double delta = 0;
-        for (int x = 1; x < letters.size(); x++) {
-            double d = isMixed ? lengths(vectors.get(0), vectors.get(x)) : positions(vectors.get(0), vectors.get(x), b);
-            delta = Math.max(delta, d);
-            if (!(d <= ALIKE)) {
-                throw WordCurves.notCovered(
-                        "letters 0 and " + x
-                                + " are qubits that no rotation around the output state's Bloch vector carries into each other");
-            }
-        }
+        double delta = apart(vectors, b);
         double least = vectors.get(0).least().lower();
         boolean relative = least > 0 && n * delta <= RELATIVE * least;
         double error = relative ? delta / (least - delta) * (1 + 0x1p-40) : 0;
@@ -109,6 +93,30 @@ final class SymmetricWords {
         }
         PositivePair one = PositivePair.of(letters.get(0), isMixed ? DensityOperator.maximallyMixed(2) : sigma);
         return WordCurves.of(one.copies(n), traces, slack(trace), error, relative ? 0 : delta, n);
+    }
+
+    /** Whether this is a qubit whose letters rotations around the Bloch vector of a state carry into each other, any rotations if that is none. */
+    boolean areAlike(DensityOperator sigma) {
+        return sigma.dimension() == 2 && apart(vectors(), BlochVector.of(LetterFactor.of(sigma))) <= ALIKE;
+    }
+
+    private List<BlochVector> vectors() {
+        List<BlochVector> vectors = new ArrayList<>();
+        for (LetterFactor f : factors) {
+            vectors.add(BlochVector.of(f));
+        }
+        return vectors;
+    }
+
+    /** The largest distance of a letter from what a rotation makes of the first. */
+    private static double apart(List<BlochVector> vectors, BlochVector b) {
+        boolean isMixed = b.length().upper() <= ALIKE;
+        double delta = 0;
+        for (int x = 1; x < vectors.size(); x++) {
+            double d = isMixed ? lengths(vectors.get(0), vectors.get(x)) : positions(vectors.get(0), vectors.get(x), b);
+            delta = d <= delta ? delta : d;
+        }
+        return delta;
     }
 
     private Enclosure slack(Enclosure trace) {

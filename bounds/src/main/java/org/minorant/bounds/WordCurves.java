@@ -1,9 +1,11 @@
 package org.minorant.bounds;
 
 import java.util.List;
+import java.util.Optional;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.core.pair.PairPowers;
 import org.minorant.core.pair.PositivePair;
 
 /**
@@ -13,8 +15,10 @@ import org.minorant.core.pair.PositivePair;
  * @param traces what holds the traces of words
  * @param factor what the pairs' curves are to be multiplied with, an enclosure around 1
  * @param off a bound on the trace norm by which a word differs from the operator that its pair stands for
+ * @param mean the probabilities of the types if a mean over words is meant
  */
-record WordCurves(List<PositivePair> pairs, Enclosure traces, Enclosure factor, WideDouble off) {
+record WordCurves(
+        List<PositivePair> pairs, Enclosure traces, Enclosure factor, WideDouble off, Optional<TypeMean> mean) {
 
     WordCurves {
         pairs = List.copyOf(pairs);
@@ -44,7 +48,12 @@ record WordCurves(List<PositivePair> pairs, Enclosure traces, Enclosure factor, 
         WideDouble trace = traces.hull(one).widen(distance).upperWide();
         WideDouble off =
                 Enclosure.of(trace, trace).power(n).times(distance).times(n).upperWide();
-        return new WordCurves(pairs, traces.power(n), slack.times(relative).power(n), off);
+        return new WordCurves(pairs, traces.power(n), slack.times(relative).power(n), off, Optional.empty());
+    }
+
+    /** The same pairs, for a mean over words. */
+    WordCurves withMean(TypeMean types) {
+        return new WordCurves(pairs, traces, factor, off, Optional.of(types));
     }
 
     LetterCurves curves() {
@@ -56,7 +65,8 @@ record WordCurves(List<PositivePair> pairs, Enclosure traces, Enclosure factor, 
         return new InvalidInputException(
                 "CodingBounds.uses",
                 found,
-                "two equiprobable kets; letters of one classical channel; qubits of like length and angle to the output state",
-                "ask for one use, of a channel whose letters are the words, or choose input and output state by the symmetry of the letters");
+                "classical letters, kets or qubits with few enough types of words; others while words have a dimension of at most "
+                        + PairPowers.MOST_DIMENSIONS,
+                "take fewer uses, choose input and output state by the symmetry of the letters, or ask for the relaxed bounds, which hold for every channel");
     }
 }

@@ -1,6 +1,5 @@
 package org.minorant.bounds;
 
-import java.util.ArrayList;
 import java.util.List;
 import java.util.Locale;
 import org.minorant.core.InvalidInputException;
@@ -31,10 +30,7 @@ final class WordTypes {
      * @param n the length of words
      */
     static List<PositivePair> pairs(List<MergedSpectra> kinds, int n) {
-        double count = 1;
-        for (int k = 1; k < kinds.size(); k++) {
-            count *= (n + k) / (double) k;
-        }
+        double count = TypeProbabilities.count(kinds.size(), n);
         if (!(count <= MOST_TYPES)) {
             throw tooMany(String.format(Locale.ROOT, "%.1e types of words", count), kinds, n);
         }
@@ -42,25 +38,12 @@ final class WordTypes {
                 kinds.stream().map(MergedSpectra::a).toList(),
                 kinds.stream().map(MergedSpectra::b).toList(),
                 n);
-        List<int[]> types = new ArrayList<>();
-        collect(types, new int[kinds.size()], 0, n);
+        List<int[]> types = TypeProbabilities.types(kinds.size(), n);
         double terms = types.stream().mapToDouble(powers::terms).sum();
         if (!(terms <= MOST_TERMS)) {
             throw tooMany(String.format(Locale.ROOT, "about %.0e terms", terms), kinds, n);
         }
         return types.stream().map(powers::pair).toList();
-    }
-
-    private static void collect(List<int[]> types, int[] type, int k, int left) {
-        if (k == type.length - 1) {
-            type[k] = left;
-            types.add(type.clone());
-            return;
-        }
-        for (int i = 0; i <= left; i++) {
-            type[k] = i;
-            collect(types, type, k + 1, left - i);
-        }
     }
 
     private static InvalidInputException tooMany(String found, List<MergedSpectra> kinds, int n) {

@@ -300,11 +300,11 @@ final class UsesTest {
         CodingBounds qubits = CodingBounds.of(ClassicalQuantumChannel.of(
                         DensityOperator.ofBloch(0.5, 0, 0), DensityOperator.ofBloch(0, 0, 0.7)))
                 .withInput(0.5, 0.5);
-        assertRefused("no rotation", () -> qubits.uses(2).achievable(0.1));
-        CodingBounds kets = kets().withInput(0.4, 0.6);
-        assertRefused("no rotation", () -> kets.uses(2).achievable(0.1));
-        CodingBounds words = CodingBounds.of(ClassicalQuantumChannel.of(Channels.pureWords(0.7, 2)));
-        assertRefused("dimension 4", () -> words.uses(2).achievable(0.1));
+        assertRefused("401 types", () -> qubits.uses(400).achievable(0.1));
+        CodingBounds mixed = CodingBounds.of(ClassicalQuantumChannel.of(
+                DensityOperator.maximallyMixed(4),
+                DensityOperator.ofBloch(0.1, 0, 0).tensor(DensityOperator.ofBloch(0, 0.2, 0.3))));
+        assertRefused("dimension 4", () -> mixed.uses(5).achievable(0.1));
         CodingBounds tilted = CodingBounds.of(
                         ClassicalQuantumChannel.ofStochasticMatrix(new double[][] {{0.89, 0.11}, {0.11, 0.89}}))
                 .withOutputState(DensityOperator.ofBloch(0.1, 0, 0));

@@ -117,12 +117,14 @@ public final class HypothesisPair {
     }
 
     /**
-     * Returns the pair of products of powers: n₁ copies of the first pair's qubits together with n₂ of the second's, and so on, all in their first states or all in their second states.
+     * Returns the pair of products of powers: n₁ copies of the first pair's systems together with n₂ of the second's, and so on, all in their first states or all in their second states.
      *
-     * @param pairs pairs of qubit states, one copy each
+     * <p>Qubits go by products of spin blocks; others as {@link org.minorant.core.pair.PairPowers} says.
+     *
+     * @param pairs pairs of states, one copy each
      * @param copies n₁, n₂, …, as many, each at least 1
      * @return the pair ρ₁^⊗n₁ ⊗ ρ₂^⊗n₂ ⊗ … against σ₁^⊗n₁ ⊗ σ₂^⊗n₂ ⊗ …
-     * @throws InvalidInputException if the numbers do not match or are below 1, a pair has no states of dimension 2, or there are too many products of blocks
+     * @throws InvalidInputException if the numbers do not match or are below 1, a pair has no states, or there are too many products of blocks, types or dimensions
      */
     public static HypothesisPair ofProducts(List<HypothesisPair> pairs, int... copies) {
         return ofCurve(PositivePair.ofPowers(

@@ -40,6 +40,9 @@ public final class DemoStates {
     /** Cosine and sine of a third of a turn. */
     private static final double[] THIRD = {-0.5, 0.8660254037844386};
 
+    /** Amplitudes of a photon whose polarisation leans a little; the sum of their squares is 1 but for the last digit of a double. */
+    private static final double[] LEAN = {0.936, 0.352};
+
     private DemoStates() {}
 
     /**
@@ -65,6 +68,20 @@ public final class DemoStates {
         light(directory.resolve("starboard.mtx"), HELM * THIRD[0], -HELM * THIRD[1]);
         polarised(directory.resolve("clear.mtx"), 0, 0, 0.9);
         polarised(directory.resolve("hazy.npy"), 0.6, 0, 0.5);
+        ket(directory.resolve("left.mtx"), LEAN[0], LEAN[1]);
+        ket(directory.resolve("right.mtx"), LEAN[0], -LEAN[1]);
+    }
+
+    /** One photon, polarised perfectly: a column of two amplitudes. */
+    private static void ket(Path file, double up, double across) throws IOException {
+        List<String> lines = List.of(
+                "%%MatrixMarket matrix array real general",
+                "% Invented demo data, made by org.minorant.study.DemoStates",
+                "% one photon, polarised perfectly: its two amplitudes",
+                "2 1",
+                Double.toString(up),
+                Double.toString(across));
+        Files.writeString(file, String.join("\n", lines) + "\n", StandardCharsets.US_ASCII);
     }
 
     /** Displaced thermal light of one mode. */

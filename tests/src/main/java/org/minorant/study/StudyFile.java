@@ -13,6 +13,7 @@ import java.util.List;
  * @param copies the pairs to tell apart by many copies
  * @param ensembles the ensembles to tell apart
  * @param channels the channels to code for
+ * @param uses the channels to code for in many uses
  * @param errors error levels in increasing order
  * @param messages numbers of messages in increasing order
  * @param output the directory that results go to
@@ -25,6 +26,7 @@ record StudyFile(
         List<CopiesLine> copies,
         List<EnsembleLine> ensembles,
         List<ChannelLine> channels,
+        List<UsesLine> uses,
         List<Double> errors,
         List<Long> messages,
         Path output) {
@@ -35,6 +37,7 @@ record StudyFile(
         copies = List.copyOf(copies);
         ensembles = List.copyOf(ensembles);
         channels = List.copyOf(channels);
+        uses = List.copyOf(uses);
         errors = List.copyOf(errors);
         messages = List.copyOf(messages);
     }
@@ -78,5 +81,17 @@ record StudyFile(
         ChannelLine {
             letters = List.copyOf(letters);
         }
+    }
+
+    /** A channel that was named above, an average error, and numbers of uses in increasing order. */
+    record UsesLine(int line, String channel, double error, List<Integer> uses) {
+        UsesLine {
+            uses = List.copyOf(uses);
+        }
+    }
+
+    /** The channel of a name. */
+    ChannelLine channel(String name) {
+        return channels.stream().filter(c -> c.name().equals(name)).findFirst().orElseThrow();
     }
 }

@@ -14,6 +14,7 @@ import org.minorant.study.StudyFile.EnsembleLine;
 import org.minorant.study.StudyFile.PairLine;
 import org.minorant.study.StudyFile.Repair;
 import org.minorant.study.StudyFile.StateLine;
+import org.minorant.study.StudyFile.UsesLine;
 
 /**
  * Reads a study file. One statement a line, a keyword first, words apart by spaces or tabs; {@code #} at the start of a line or after a space
@@ -21,7 +22,8 @@ import org.minorant.study.StudyFile.StateLine;
  */
 final class StudyParser {
 
-    static final String KEYWORDS = "title, state, nearest, pair, copies, ensemble, channel, errors, messages, output";
+    static final String KEYWORDS =
+            "title, state, nearest, pair, copies, ensemble, channel, uses, errors, messages, output";
 
     private static final List<Double> DEFAULT_ERRORS = List.of(0.001, 0.01, 0.1);
 
@@ -36,6 +38,7 @@ final class StudyParser {
     private final List<CopiesLine> copies = new ArrayList<>();
     private final List<EnsembleLine> ensembles = new ArrayList<>();
     private final List<ChannelLine> channels = new ArrayList<>();
+    private final List<UsesLine> uses = new ArrayList<>();
     private String title;
     private List<Double> errors = DEFAULT_ERRORS;
     private List<Long> messages = DEFAULT_MESSAGES;
@@ -71,7 +74,7 @@ final class StudyParser {
         if (pairs.isEmpty() && ensembles.isEmpty() && channels.isEmpty()) {
             throw BadInputException.in(path, "asks for nothing; add a pair, an ensemble or a channel line");
         }
-        return new StudyFile(path, title, states, pairs, copies, ensembles, channels, errors, messages, output);
+        return new StudyFile(path, title, states, pairs, copies, ensembles, channels, uses, errors, messages, output);
     }
 
     private void line(int number, String text) {
@@ -88,6 +91,7 @@ final class StudyParser {
             case "copies" -> copies(words);
             case "ensemble" -> ensemble(words);
             case "channel" -> channel(words);
+            case "uses" -> uses(words);
             case "errors" -> errors(words);
             case "messages" -> messages(words);
             case "output" -> output(words);
@@ -173,6 +177,23 @@ final class StudyParser {
             throw words.fault("a channel needs at least two letters, this has " + letters.size());
         }
         channels.add(new ChannelLine(words.line(), name, letters));
+    }
+
+    private void uses(StudyWords words) {
+        String name = words.next("the name of a channel");
+        if (channels.stream().noneMatch(c -> c.name().equals(name))) {
+            throw words.fault(
+                    "no channel " + OneLine.quote(name) + " is named above this line; add a channel line before it");
+        }
+        for (UsesLine u : uses) {
+            if (u.channel().equals(name)) {
+                throw words.fault("uses of " + name + " were already asked for in line " + u.line()
+                        + "; give all numbers in one line");
+            }
+        }
+        words.expect("error");
+        double error = words.level(words.next("the average error allowed"));
+        uses.add(new UsesLine(words.line(), name, error, words.increasing("a number of uses", words::uses)));
     }
 
     private void errors(StudyWords words) {

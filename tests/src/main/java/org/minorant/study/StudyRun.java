@@ -10,6 +10,7 @@ import org.minorant.study.StudyFile.ChannelLine;
 import org.minorant.study.StudyFile.CopiesLine;
 import org.minorant.study.StudyFile.EnsembleLine;
 import org.minorant.study.StudyFile.PairLine;
+import org.minorant.study.StudyFile.UsesLine;
 
 /** One study from its file to its results: read all, check all, compute, write, draw. */
 final class StudyRun {
@@ -36,7 +37,8 @@ final class StudyRun {
         int analyses =
                 file.pairs().size() + file.ensembles().size() + file.channels().size();
         int copies = file.copies().stream().mapToInt(l -> l.copies().size()).sum();
-        progress.expect(file.states().size() + analyses + copies + 1);
+        int uses = file.uses().stream().mapToInt(l -> l.uses().size()).sum();
+        progress.expect(file.states().size() + analyses + copies + uses + 1);
         States states = States.read(file, progress);
         check(states);
         // a place that cannot be written to must not cost the user the computation
@@ -107,6 +109,18 @@ final class StudyRun {
                             Charts.title(file.title(), "messages that one use of " + line.name() + " carries"),
                             "number of messages (logarithmic axis)",
                             Bars.ofChannel(section))));
+        }
+        for (UsesLine line : file.uses()) {
+            UsesSection many = at(
+                    line.line(),
+                    () -> UsesSection.of(
+                            line,
+                            file.channel(line.channel()),
+                            states,
+                            n -> progress.step("channel " + line.channel() + ", uses: " + n)));
+            sections.add(many.section());
+            drawings.add(new Drawing(
+                    "uses-" + line.channel() + ".svg", () -> UsesChart.svg(file.title(), line.channel(), many.plot())));
         }
     }
 

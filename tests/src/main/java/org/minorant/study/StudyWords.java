@@ -121,10 +121,18 @@ final class StudyWords {
         return Long.parseLong(word);
     }
 
+    int uses(String word) {
+        return repeats(word, "uses");
+    }
+
     int copies(String word) {
+        return repeats(word, "copies");
+    }
+
+    private int repeats(String word, String what) {
         if (!WHOLE.matcher(word).matches() || Long.parseLong(word) < 1 || Long.parseLong(word) > MOST_COPIES) {
-            throw fault(
-                    OneLine.quote(word) + " is not a number of copies; give a whole number from 1 to " + MOST_COPIES);
+            throw fault(OneLine.quote(word) + " is not a number of " + what + "; give a whole number from 1 to "
+                    + MOST_COPIES);
         }
         return Integer.parseInt(word);
     }

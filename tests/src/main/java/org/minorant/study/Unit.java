@@ -11,7 +11,9 @@ enum Unit {
     /** Information, logarithm to base 2. */
     BITS("bit"),
     /** Information for each copy. */
-    BITS_PER_COPY("bit per copy");
+    BITS_PER_COPY("bit per copy"),
+    /** Information for each use of a channel. */
+    BITS_PER_USE("bit per use");
 
     private final String text;
 

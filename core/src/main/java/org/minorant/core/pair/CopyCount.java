@@ -17,6 +17,16 @@ final class CopyCount {
         return (int) product;
     }
 
+    /** Copies beside others. */
+    static int plus(int n, int k) {
+        long sum = (long) n + k;
+        if (sum > Integer.MAX_VALUE) {
+            throw new InvalidInputException(
+                    "PositivePair.copies", k + " copies beside " + n, "fewer than 2^31 in all", "take fewer");
+        }
+        return (int) sum;
+    }
+
     /** d^n, or the largest int if that is smaller. */
     static int dimension(int d, int n) {
         long p = 1;

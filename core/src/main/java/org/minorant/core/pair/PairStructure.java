@@ -51,7 +51,7 @@ final class PairStructure {
         return UnitaryBlocksPair.of(a, b, n);
     }
 
-    private static boolean isKet(PositiveOperator a) {
+    static boolean isKet(PositiveOperator a) {
         return a.knownColumns().isPresent() && a.knownColumns().getAsInt() == 1;
     }
 

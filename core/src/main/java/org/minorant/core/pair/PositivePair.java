@@ -1,6 +1,5 @@
 package org.minorant.core.pair;
 
-import java.util.ArrayList;
 import java.util.List;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
@@ -34,6 +33,7 @@ public abstract sealed class PositivePair
                 FactorPair,
                 RankOneCopies,
                 RankOnePair,
+                RankOneProducts,
                 SpinBlocksPair,
                 SpinProductsPair,
                 UnitaryBlocksPair {
@@ -73,37 +73,26 @@ public abstract sealed class PositivePair
     }
 
     /**
-     * Returns the pair A₁^⊗n₁ ⊗ A₂^⊗n₂ ⊗ … against B₁^⊗n₁ ⊗ B₂^⊗n₂ ⊗ … of qubit operators: n₁ copies of one pair with n₂ of another, and so on. The order of the factors makes no difference.
+     * Returns the pair A₁^⊗n₁ ⊗ A₂^⊗n₂ ⊗ … against B₁^⊗n₁ ⊗ B₂^⊗n₂ ⊗ …: n₁ copies of one pair with n₂ of another, and so on. The order of the factors makes no difference.
      *
-     * @param first A₁, A₂, …, each of dimension 2
+     * <p>{@link PairPowers} says what is known, and how accurately.
+     *
+     * @param first A₁, A₂, …
      * @param second B₁, B₂, …, as many
      * @param copies n₁, n₂, …, as many, each at least 1
      * @return the pair
-     * @throws InvalidInputException if the lists differ in length or are empty, a dimension is not 2, a number is below 1, or there are too many products of blocks
+     * @throws InvalidInputException if the lists differ in length or are empty, dimensions do, a number is below 1, or there are too many products of blocks, types or dimensions
      */
     public static PositivePair ofPowers(
             List<? extends PositiveOperator> first, List<? extends PositiveOperator> second, int... copies) {
-        String asked = "PositivePair.ofPowers";
-        if (first.isEmpty() || first.size() != second.size() || first.size() != copies.length) {
+        if (copies.length != first.size() || java.util.Arrays.stream(copies).anyMatch(n -> n < 1)) {
             throw new InvalidInputException(
-                    asked,
-                    first.size() + " and " + second.size() + " operators with " + copies.length + " numbers of copies",
-                    "as many of each, at least 1",
-                    "give two operators and a number of copies for every factor");
+                    "PositivePair.ofPowers",
+                    first.size() + " operators with numbers of copies " + java.util.Arrays.toString(copies),
+                    "as many of each, and at least 1 copy",
+                    "give a number of copies for every factor");
         }
-        List<QubitPower> powers = new ArrayList<>();
-        for (int i = 0; i < copies.length; i++) {
-            if (first.get(i).dimension() != 2 || second.get(i).dimension() != 2 || copies[i] < 1) {
-                throw new InvalidInputException(
-                        asked,
-                        "factor " + i + " has dimensions " + first.get(i).dimension() + " and "
-                                + second.get(i).dimension() + " and " + copies[i] + " copies",
-                        "dimension 2 and at least 1 copy",
-                        "products of powers are for qubits");
-            }
-            powers.add(new QubitPower(QubitSpectra.of(first.get(i), second.get(i)), copies[i]));
-        }
-        return SpinProductsPair.of(powers);
+        return PairPowers.of(first, second).pair(copies);
     }
 
     /**

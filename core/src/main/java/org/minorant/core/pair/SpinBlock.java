@@ -8,7 +8,7 @@ import org.minorant.core.internal.number.DoubleDouble;
  * One spin block of many copies of two qubits: A = diag(x_a) in its eigenbasis, B = diag(y_b) in its own, overlaps C between the two; leading indices only.
  *
  * <p>The inner products are what defines the pair: X*X = diag(x_a), Y*Y = diag(y_b), X*Y = √x_a C_ab √y_b. The columns only guide the rotations: x_a lies along the a-th axis, and
- * y_b has C_ab there and, beyond, column b of a triangle R with R*R = 1 − C*C.
+ * y_b has C_ab there and, beyond, column b of an R with R*R = 1 − C*C.
  */
 final class SpinBlock {
 
@@ -49,62 +49,81 @@ final class SpinBlock {
     private static EnclosedMatrix axes(ColumnWeights x, int k, int l) {
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, k);
         for (int a = 0; a < k; a++) {
-            m.set(a, a, x.root(a).hi(), 0, 0, 0, 0);
+            m.set(a, a, x.root(a).hi(), x.root(a).lo(), 0, 0, 0);
         }
         return m.build();
     }
 
     private static EnclosedMatrix guides(ColumnWeights y, double[][] ch, double[][] cl, int k, int l) {
-        double[][] r = triangle(ch, cl, l);
+        DoubleDouble[][] r = root(ch, cl, l);
         EnclosedMatrix.Builder m = EnclosedMatrix.builder(k + l, l);
         for (int b = 0; b < l; b++) {
-            double scale = y.root(b).hi();
+            DoubleDouble scale = y.root(b);
             for (int a = 0; a < k; a++) {
-                m.set(a, b, scale * ch[a][b], 0, 0, 0, 0);
+                set(m, a, b, new DoubleDouble(ch[a][b], cl[a][b]).times(scale));
             }
-            for (int i = 0; i <= b; i++) {
-                m.set(k + i, b, scale * r[i][b], 0, 0, 0, 0);
+            for (int i = 0; i < l; i++) {
+                set(m, k + i, b, r[i][b].times(scale));
             }
         }
         return m.build();
     }
 
-    /** R upper triangular with R*R = 1 − C*C, nearly; in double-double, as columns that nearly depend on each other leave pivots far below 1e-16. */
-    private static double[][] triangle(double[][] ch, double[][] cl, int l) {
+    private static void set(EnclosedMatrix.Builder m, int i, int j, DoubleDouble v) {
+        m.set(i, j, v.hi(), v.lo(), 0, 0, 0);
+    }
+
+    /**
+     * R with R*R = 1 − C*C, nearly: Cholesky's method with the largest pivot next, in double-double. Columns that nearly depend on each other leave pivots far below 1e-16, and without the order those that are
+     * rounding would be divided by.
+     */
+    private static DoubleDouble[][] root(double[][] ch, double[][] cl, int l) {
         double[][] sh = new double[l][l];
         double[][] sl = new double[l][l];
         for (int b = 0; b < l; b++) {
             sh[b][b] = 1;
         }
         DdProducts.addProduct(transposed(ch, l), transposed(cl, l), ch, cl, -1, sh, sl);
-        double[][] r = new double[l][l];
-        for (int i = 0; i < l; i++) {
-            DoubleDouble pivot = new DoubleDouble(sh[i][i], sl[i][i]);
-            if (!(pivot.hi() > NOTHING)) {
-                continue;
+        DoubleDouble[][] r = new DoubleDouble[l][l];
+        for (DoubleDouble[] row : r) {
+            java.util.Arrays.fill(row, DoubleDouble.ZERO);
+        }
+        boolean[] used = new boolean[l];
+        for (int step = 0; step < l; step++) {
+            int next = largest(sh, used);
+            if (!(sh[next][next] > NOTHING)) {
+                break;
             }
-            DoubleDouble root = pivot.sqrt();
+            used[next] = true;
+            DoubleDouble pivot = new DoubleDouble(sh[next][next], sl[next][next]).sqrt();
             double[][] rowHigh = new double[1][l];
             double[][] rowLow = new double[1][l];
-            for (int j = i; j < l; j++) {
-                DoubleDouble v = new DoubleDouble(sh[i][j], sl[i][j]).dividedBy(root);
-                rowHigh[0][j] = v.hi();
-                rowLow[0][j] = v.lo();
+            for (int j = 0; j < l; j++) {
+                if (j == next || !used[j]) {
+                    DoubleDouble v = new DoubleDouble(sh[next][j], sl[next][j]).dividedBy(pivot);
+                    rowHigh[0][j] = v.hi();
+                    rowLow[0][j] = v.lo();
+                    r[step][j] = v;
+                }
             }
-            r[i] = rowHigh[0];
-            // the Schur complement of what is left
+            // the Schur complement; rows that are done stay as they are, their columns hold zeros
             double[][] columnHigh = transposed(rowHigh, l);
             double[][] columnLow = transposed(rowLow, l);
-            DdProducts.addProduct(
-                    java.util.Arrays.copyOfRange(columnHigh, i + 1, l),
-                    java.util.Arrays.copyOfRange(columnLow, i + 1, l),
-                    rowHigh,
-                    rowLow,
-                    -1,
-                    java.util.Arrays.copyOfRange(sh, i + 1, l),
-                    java.util.Arrays.copyOfRange(sl, i + 1, l));
+            DdProducts.addProduct(columnHigh, columnLow, rowHigh, rowLow, -1, sh, sl);
         }
         return r;
+    }
+
+    private static int largest(double[][] s, boolean[] used) {
+        int best = 0;
+        double most = Double.NEGATIVE_INFINITY;
+        for (int j = 0; j < s.length; j++) {
+            if (!used[j] && s[j][j] > most) {
+                most = s[j][j];
+                best = j;
+            }
+        }
+        return best;
     }
 
     private static double[][] transposed(double[][] m, int columns) {

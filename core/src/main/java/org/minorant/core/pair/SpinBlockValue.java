@@ -4,7 +4,7 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
 
 /**
- * The value of one spin block, or of a product of spin blocks: by one eigendecomposition if an operator fills the block and the answer is not much smaller than the traces, else by rotations.
+ * The value of one spin block, or of a product of spin blocks: by one eigendecomposition if the answer is not much smaller than the traces, else by rotations.
  *
  * @param dimension the dimension of the block
  * @param most an upper end of the block's share, by its traces
@@ -18,6 +18,9 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
 
     /** The relative error of a weight is below 4n · 2^-102, n at most 2^27 or so. */
     private static final double ROUNDING = 0x1p-70;
+
+    /** Eigendecompositions are usually closer by so many binary digits than what is expected of them, and a block's answer is no smaller beside its traces where it matters. */
+    private static final int USUAL = 3;
 
     /** A block this narrow needs no rotations. */
     private static final double ENOUGH = 0x1p-45;
@@ -40,19 +43,32 @@ record SpinBlockValue(int dimension, WideDouble most, WideDouble allowance, doub
             return Enclosure.of(WideDouble.ZERO, most);
         }
         WideDouble leftOut = WideDouble.of(x.leftOut()).plusUp(WideDouble.of(y.leftOut()));
-        if (!DenseBlock.fits(dimension, x, y)) {
-            return share(byRotations(SpinBlock.columns(x, y, window), proven, stop), leftOut, shift);
+        Enclosure shallow = Enclosure.of(WideDouble.ZERO, most);
+        boolean fits = DenseBlock.fits(dimension, x, y);
+        if (fits) {
+            shallow = share(DenseBlock.enclose(x, y, window, stop), leftOut, shift);
+        } else if (isWorthTrying(x, y, shift)) {
+            shallow = share(SpanBlock.enclose(SpinBlock.columns(x, y, window), stop), leftOut, shift);
         }
-        Enclosure dense = share(DenseBlock.enclose(x, y, window, stop), leftOut, shift);
-        WideDouble width = dense.upperWide().plusUp(dense.lowerWide().negate());
-        if (width.compareTo(allowance) <= 0 || dense.relativeWidth() <= Math.max(ENOUGH, tolerance / 4)) {
-            return dense;
+        WideDouble width = shallow.upperWide().plusUp(shallow.lowerWide().negate());
+        if (width.compareTo(allowance) <= 0 || shallow.relativeWidth() <= Math.max(ENOUGH, tolerance / 4)) {
+            return shallow;
         }
         Enclosure rotated = share(byRotations(SpinBlock.columns(x, y, window), proven, stop), leftOut, shift);
         if (proven) {
-            return dense.intersect(rotated);
+            return shallow.intersect(rotated);
         }
-        return rotated.relativeWidth() <= dense.relativeWidth() ? rotated : dense;
+        return rotated.relativeWidth() <= shallow.relativeWidth() ? rotated : shallow;
+    }
+
+    /** Whether one eigendecomposition may be enough, by the width that is usual for it. */
+    private boolean isWorthTrying(ColumnWeights x, ColumnWeights y, long shift) {
+        int columns = x.held() + y.held();
+        double traces = x.trace(x.held()).hi() + y.trace(y.held()).hi();
+        WideDouble width =
+                WideDouble.of(WholeBlock.widthInDouble(columns, traces)).timesPowerOfTwo(shift);
+        WideDouble shareOfMost = most.timesDown(WideDouble.of(tolerance)).timesPowerOfTwo(-USUAL - 2);
+        return width.compareTo(allowance.timesPowerOfTwo(USUAL).max(shareOfMost)) <= 0;
     }
 
     private static Enclosure byRotations(ColumnPair columns, boolean proven, Runnable stop) {

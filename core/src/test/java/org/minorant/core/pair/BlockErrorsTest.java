@@ -47,6 +47,24 @@ class BlockErrorsTest {
         }
     }
 
+    /** The Gram matrix errs by about the radius, and √f by the root of that. */
+    @Test
+    void blocksInTheSpanOfTheirColumnsHoldWhatTheRadiiLeaveOpen() {
+        double radius = 1e-6;
+        for (double turn : new double[] {-0.9e-6, 0, 0.9e-6}) {
+            Enclosure f = SpanBlock.enclose(
+                    SpinBlock.columns(weights(0.7, 0.4), weights(0.6, 0.5), rotation(0.3, radius)), () -> {});
+            double value = exact(0.7, 0.4, 0.6, 0.5, 0.3 + turn);
+            assertTrue(f.contains(value), () -> f + " and " + value);
+            assertTrue(f.upper() - f.lower() < 20 * Math.sqrt(radius), f::toString);
+        }
+        Enclosure sharp =
+                SpanBlock.enclose(SpinBlock.columns(weights(0.7, 0.4), weights(0.6, 0.5), rotation(0.3, 0)), () -> {});
+        assertTrue(sharp.widen(1e-15).contains(exact(0.7, 0.4, 0.6, 0.5, 0.3)), sharp::toString);
+        // the window is orthogonal to 1e-16 only, so that its root finds 1e-16 more of a column
+        assertTrue(sharp.upper() - sharp.lower() < 1e-7, sharp::toString);
+    }
+
     @Test
     void crossProductsHaveTheRadiiOfTheirOverlaps() {
         double radius = 1e-6;
