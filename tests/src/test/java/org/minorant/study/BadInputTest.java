@@ -54,7 +54,7 @@ class BadInputTest {
     @Test
     void aBadStudyLine() throws IOException {
         assertEquals(
-                "s.study:2: unknown word 'sate'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, errors,"
+                "s.study:2: unknown word 'sate'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, uses, errors,"
                         + " messages, output",
                 refusal("state a a.mtx", "sate b b.npy"));
     }

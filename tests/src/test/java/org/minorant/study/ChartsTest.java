@@ -151,6 +151,7 @@ class ChartsTest {
                 List.of(),
                 List.of(),
                 List.of(),
+                List.of(),
                 Path.of("o"));
         BadInputException e = assertThrows(
                 BadInputException.class,

@@ -77,7 +77,7 @@ class DemoTest {
         List<Path> shipped = DemoRun.shipped().stream()
                 .filter(f -> !f.toString().endsWith(".study"))
                 .toList();
-        assertEquals(7, shipped.size());
+        assertEquals(9, shipped.size());
         for (Path file : shipped) {
             String name = String.valueOf(file.getFileName());
             assertEquals(comments(made.resolve(name)), comments(file), name);

@@ -59,7 +59,8 @@ class StudyParserTest {
                 "errors 1e-3 0.25",
                 "messages 2 1000000000000",
                 "output ../out dir",
-                "copies p 1 10 1000000"));
+                "copies p 1 10 1000000",
+                "uses c error 1e-3 1 50 1000000"));
         assertEquals("Lamp signals,  two spaces kept", s.title());
         assertEquals(
                 List.of(
@@ -71,6 +72,7 @@ class StudyParserTest {
         assertEquals(
                 List.of(new EnsembleLine(7, "e", List.of("a", "b", "a"), List.of(0.5, 0.25, 0.25))), s.ensembles());
         assertEquals(List.of(new ChannelLine(8, "c", List.of("a", "b", "a"))), s.channels());
+        assertEquals(List.of(new StudyFile.UsesLine(13, "c", 0.001, List.of(1, 50, 1_000_000))), s.uses());
         assertEquals(List.of(0.001, 0.25), s.errors());
         assertEquals(List.of(2L, 1_000_000_000_000L), s.messages());
         assertEquals(directory.getParent().resolve("out dir"), s.output());
@@ -114,6 +116,23 @@ class StudyParserTest {
     }
 
     @Test
+    void usesOfAChannelAreAskedForOnce() throws IOException {
+        assertEquals(
+                ":5: uses of c were already asked for in line 4; give all numbers in one line",
+                refusal(TWO_STATES + "channel c a b\nuses c error 0.1 2\nuses c error 0.1 3"));
+        assertEquals(":4: the line ends where 'error' should stand", refusal(TWO_STATES + "channel c a b\nuses c"));
+        assertEquals(
+                ":4: '1' is not an error level; give a number above 0 and below 1",
+                refusal(TWO_STATES + "channel c a b\nuses c error 1 5"));
+        assertEquals(
+                ":4: the line ends where a number of uses should stand",
+                refusal(TWO_STATES + "channel c a b\nuses c error 0.1"));
+        assertEquals(
+                ":4: '0' is not a number of uses; give a whole number from 1 to 1000000",
+                refusal(TWO_STATES + "channel c a b\nuses c error 0.1 0"));
+    }
+
+    @Test
     void absolutePathsStay() throws IOException {
         Path absolute = directory.resolve("elsewhere").resolve("a.mtx");
         assertEquals(
@@ -129,9 +148,9 @@ class StudyParserTest {
             delimiter = '|',
             quoteCharacter = '`',
             value = {
-                "stat a a.mtx | unknown word 'stat'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, errors,"
+                "stat a a.mtx | unknown word 'stat'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, uses, errors,"
                         + " messages, output",
-                "STATE c c.mtx | unknown word 'STATE'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, errors,"
+                "STATE c c.mtx | unknown word 'STATE'; a line begins with one of title, state, nearest, pair, copies, ensemble, channel, uses, errors,"
                         + " messages, output",
                 "title | the line ends where a title should stand",
                 "state | the line ends where a name should stand",
@@ -162,6 +181,8 @@ class StudyParserTest {
                 "copies q 1000001 | '1000001' is not a number of copies; give a whole number from 1 to 1000000",
                 "copies q 1.5 | '1.5' is not a number of copies; give a whole number from 1 to 1000000",
                 "copies q 5 5 | '5' does not exceed the value before it; give them in increasing order",
+                "uses | the line ends where the name of a channel should stand",
+                "uses q error 0.1 2 | no channel 'q' is named above this line; add a channel line before it",
                 "ensemble e | an ensemble needs at least two states, this has 0",
                 "ensemble e a:1 | an ensemble needs at least two states, this has 1",
                 "ensemble e a b:1 | only 1 of 2 states have a prior; give STATE:PRIOR for all, or none for equal priors",

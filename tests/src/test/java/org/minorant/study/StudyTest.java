@@ -165,6 +165,29 @@ class StudyTest {
         }
     }
 
+    /** Two kets of overlap 0.78 in 100 and 500 uses: computed in closed form by an independent program. */
+    @Test
+    void usesHaveTheirTableAndTheirChart() throws IOException {
+        String head = "%%MatrixMarket matrix array real general\n2 1\n";
+        Files.writeString(small.file("u.mtx"), head + "1\n0\n");
+        Files.writeString(small.file("v.mtx"), head + "0.78\n" + Math.sqrt(1 - 0.78 * 0.78) + "\n");
+        SmallStudy.Outcome o = small.run(
+                "state u u.mtx", "state v v.mtx", "channel c u v", "uses c error 0.001 100 500", "output out");
+        assertEquals(Exit.DONE, o.exit(), o.err());
+        List<List<String>> rows = Csv.parse(result("numbers.csv")).stream()
+                .filter(r -> r.get(0).equals("uses") && r.get(2).equals("bits for each use"))
+                .toList();
+        double[] known = {23.094144, 34.574485, 187.711840, 200.881080};
+        for (int i = 0; i < 4; i++) {
+            int n = i < 2 ? 100 : 500;
+            assertEquals(i % 2 == 0 ? "lower" : "upper", rows.get(i).get(4));
+            // printed to six decimals; whole messages cost up to 2^-23 of them
+            assertEquals(known[i], n * Double.parseDouble(rows.get(i).get(6)), 1e-6);
+        }
+        assertTrue(o.out().contains("Normal approximation, 500 uses: 18"), o.out());
+        assertTrue(result("uses-c.svg").contains("what uses of c carry</title>"));
+    }
+
     @Test
     void copiesWithoutErrorOrWithoutInformationAreAnsweredToo() throws IOException {
         for (String pair : List.of("pair p a b prior 1", "pair p a a prior 0.5")) {
