@@ -36,6 +36,12 @@ final class DiagonalRenyi implements RenyiOutputs {
         }
     }
 
+    /** The optimal states have a closed form. */
+    @Override
+    public boolean isWellConditioned() {
+        return true;
+    }
+
     @Override
     public int letters() {
         return rows.length;
@@ -114,6 +120,12 @@ final class DiagonalRenyi implements RenyiOutputs {
 
     private double[] optimum(double alpha, double[] p) {
         return normalised(Arrays.stream(lnSums(alpha, p)).map(v -> v / alpha).toArray());
+    }
+
+    /** Supports are certain here. */
+    @Override
+    public LettersAgainst againstFlooredMixture(double[] p) {
+        return againstMixture(p);
     }
 
     @Override

@@ -35,6 +35,12 @@ final class MatrixRenyi implements RenyiOutputs {
     /** Output states of orders above one get this weight of the maximally mixed state, so that they surely have full support. */
     private static final double FLOOR = 0x1p-43;
 
+    /** The same for mixtures, whose letters may be known only to the rounding of their entries. */
+    private static final double FLOOR_OF_MIXTURES = 0x1p-34;
+
+    /** Eigenvalues below this make roots of negative order lose too many digits. */
+    private static final double TINY = 1e-6;
+
     private final List<DensityOperator> outputs;
     private final Enclosure traces;
     private final List<SpectralState> letters = new ArrayList<>();
@@ -64,6 +70,23 @@ final class MatrixRenyi implements RenyiOutputs {
         return s.values().stream()
                 .mapToDouble(b -> Math.pow(b.hi() / trace, exponent))
                 .toArray();
+    }
+
+    @Override
+    public boolean isWellConditioned() {
+        double[] even = new double[outputs.size()];
+        Arrays.fill(even, 1.0 / even.length);
+        Operator mixture = mixed(0, even);
+        return Arrays.stream(HermitianPowers.spectrum(mixture).eigenvalues())
+                        .min()
+                        .orElse(0)
+                > TINY;
+    }
+
+    @Override
+    public LettersAgainst againstFlooredMixture(double[] p) {
+        PositiveOperator sigma = full(DensityOperator.mixture(outputs, p), FLOOR_OF_MIXTURES);
+        return new Pairs(sigma, Enclosure.ZERO);
     }
 
     @Override
@@ -172,10 +195,7 @@ final class MatrixRenyi implements RenyiOutputs {
         SandwichedState state = SandwichedState.of(roots, u, p, near);
         SpectralDecomposition s = HermitianPowers.spectrum(state.sigma());
         Operator inside = basis.times(HermitianPowers.columns(s, 0.5));
-        PositiveOperator sigma = PositiveOperator.ofFactor(inside)
-                .plus(PositiveOperator.ofFactor(floor(Math.sqrt(FLOOR / basis.rows()))));
-        PositiveOperator full =
-                PositiveOperator.ofFactor(HermitianPowers.columns(HermitianPowers.spectrum(sigma), 0.5));
+        PositiveOperator full = full(PositiveOperator.ofFactor(inside), FLOOR);
         return new Sandwich(
                 Optional.of(state.sigma()),
                 new Pairs(full, Enclosure.ZERO),
@@ -183,6 +203,12 @@ final class MatrixRenyi implements RenyiOutputs {
                 state.lnScale(),
                 state.norm(),
                 new Lazy<>(() -> DualNorm.lower(letters, u, p, state.certificates())));
+    }
+
+    /** The operator with a weight of the maximally mixed state, by a factor with as many columns as rows. */
+    private PositiveOperator full(PositiveOperator sigma, double weight) {
+        PositiveOperator sum = sigma.plus(PositiveOperator.ofFactor(floor(Math.sqrt(weight / basis.rows()))));
+        return PositiveOperator.ofFactor(HermitianPowers.columns(HermitianPowers.spectrum(sum), 0.5));
     }
 
     private Operator floor(double root) {

@@ -22,6 +22,13 @@ interface RenyiOutputs {
     int letters();
 
     /**
+     * Returns whether the even mixture of the letters has no tiny eigenvalues on its support, so that iterations in double find optimal states.
+     *
+     * @return whether these states can be searched for
+     */
+    boolean isWellConditioned();
+
+    /**
      * Compares the letters with a state.
      *
      * @param sigma the state
@@ -36,6 +43,14 @@ interface RenyiOutputs {
      * @return the letters against it
      */
     LettersAgainst againstMixture(double[] p);
+
+    /**
+     * Compares the letters with their mixture and, where its support is not certain, a trace of the maximally mixed state.
+     *
+     * @param p a distribution
+     * @return the letters against it
+     */
+    LettersAgainst againstFlooredMixture(double[] p);
 
     /**
      * Compares the letters with a state near A^(1+s)/Tr A^(1+s).

@@ -118,6 +118,27 @@ final class StrongConverseWords {
                     y -> objective.applyAsDouble(largest(sigma, order(y)).upper(), order(y)), LEAST, MOST));
             return new Choice(sigma, u);
         }
+        Choice simple = mixture(objective);
+        if (!outputs.isWellConditioned()) {
+            return simple;
+        }
+        Choice found = search(objective);
+        return value(objective, found) < value(objective, simple) ? found : simple;
+    }
+
+    private double value(DoubleBinaryOperator objective, Choice c) {
+        return objective.applyAsDouble(largest(c.sigma, c.u).upper(), c.u);
+    }
+
+    /** The mixture of the letters at the input that the search starts from, the one of the capacity: near the best state for orders near one. */
+    private Choice mixture(DoubleBinaryOperator objective) {
+        LettersAgainst sigma = outputs.againstFlooredMixture(start);
+        double y = Unimodal.minimiser(
+                z -> objective.applyAsDouble(largest(sigma, order(z)).upper(), order(z)), LEAST, MOST, WIDTHS[0]);
+        return new Choice(sigma, order(y));
+    }
+
+    private Choice search(DoubleBinaryOperator objective) {
         double[] p = start;
         double u = 0;
         AtomicReference<Optional<Operator>> near = new AtomicReference<>(Optional.empty());

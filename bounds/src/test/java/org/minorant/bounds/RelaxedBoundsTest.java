@@ -4,6 +4,7 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertThrows;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import java.util.ArrayList;
 import java.util.List;
 import java.util.Random;
 import java.util.function.DoubleUnaryOperator;
@@ -14,10 +15,13 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.CsvSource;
 import org.junit.jupiter.params.provider.ValueSource;
+import org.minorant.core.Complex;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
 import org.minorant.core.Information;
 import org.minorant.core.InvalidInputException;
+import org.minorant.core.state.LightStates;
+import org.minorant.core.state.Truncation;
 
 /** The bounds that hold for every channel and any number of uses, against the exact ones, closed forms and each other. */
 final class RelaxedBoundsTest {
@@ -88,6 +92,29 @@ final class RelaxedBoundsTest {
     }
 
     /** Two kets and the mixture at its optimum: D̃_α(ψ‖σ) = (1/u) ln⟨ψ|σ^(−u)|ψ⟩, least for σ ∝ ρ^(1/(1+u)), so that u D̃_α = (1+u) ln Tr ρ^(1/(1+u)). */
+    /** Light in stray light, as files hold it: eigenvalues fall below the rounding of the entries, and no state is certainly above a letter but those with a floor. */
+    @Test
+    void lettersOfRoundedEntriesHaveAStrongConverse() {
+        List<DensityOperator> letters = new ArrayList<>();
+        for (double amplitude : new double[] {-1.2, 0, 1.2}) {
+            DensityOperator light = LightStates.displacedThermal(
+                            new Complex(amplitude, 0), 0.1, Truncation.ofDimension(14))
+                    .state();
+            double[][] entries = new double[14][14];
+            for (int i = 0; i < 14; i++) {
+                for (int j = 0; j < 14; j++) {
+                    entries[i][j] = light.re(i, j);
+                }
+            }
+            letters.add(DensityOperator.ofReal(entries));
+        }
+        Information bound = CodingBounds.of(ClassicalQuantumChannel.of(letters)).strongConverse(0.05);
+        // log2 3 + log2 1/0.95 is the bound of order infinity at the even mixture, which is above a third of each
+        // letter
+        assertTrue(bound.bits().upper() < Math.log(3 / 0.95) / Math.log(2) + 1e-6, bound::toString);
+        assertTrue(bound.bits().lower() > 1.1, bound::toString);
+    }
+
     @Test
     void strongConverseOfTwoKets() {
         double c = 0.78;
