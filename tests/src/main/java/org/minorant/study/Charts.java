@@ -12,7 +12,10 @@ import java.util.regex.Matcher;
 import org.knowm.xchart.VectorGraphicsEncoder;
 import org.knowm.xchart.VectorGraphicsEncoder.VectorGraphicsFormat;
 import org.knowm.xchart.XYChart;
+import org.knowm.xchart.XYSeries;
+import org.knowm.xchart.style.Styler.LegendPosition;
 import org.knowm.xchart.style.XYStyler;
+import org.knowm.xchart.style.markers.SeriesMarkers;
 
 /** What all charts share: plain looks, colours that stay apart for every kind of colour vision, and the way to SVG. */
 final class Charts {
@@ -31,6 +34,11 @@ final class Charts {
 
     /** Reddish purple of the same palette. */
     static final Color PURPLE = new Color(0xCC79A7);
+
+    static final BasicStroke LINE = new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND);
+
+    static final BasicStroke DASHED =
+            new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND, 10, new float[] {8, 5}, 0);
 
     private static final Color GRID = new Color(0xDDDDDD);
 
@@ -61,6 +69,25 @@ final class Charts {
         s.setLegendSeriesLineLength(40);
         s.setLegendPadding(14);
         s.setMarkerSize(11);
+    }
+
+    /** A dashed line at one height, for what curves approach. */
+    static void level(XYChart chart, String name, double from, double to, double height) {
+        XYSeries line = chart.addSeries(name, new double[] {from, to}, new double[] {height, height});
+        line.setMarker(SeriesMarkers.NONE);
+        line.setLineColor(Color.GRAY);
+        line.setLineStyle(DASHED);
+    }
+
+    /** Whole numbers on a logarithmic axis, heights from 0 on, the legend beside the chart. */
+    static void againstNumbers(XYChart chart) {
+        XYStyler s = chart.getStyler();
+        s.setXAxisLogarithmic(true);
+        s.setXAxisDecimalPattern("0");
+        s.setYAxisMin(0.0);
+        s.setYAxisDecimalPattern("0.00");
+        s.setPlotGridVerticalLinesVisible(false);
+        s.setLegendPosition(LegendPosition.OutsideE);
     }
 
     /** The chart as SVG. Letters are drawn as outlines, so it looks the same everywhere; the title is there as text for screen readers. */

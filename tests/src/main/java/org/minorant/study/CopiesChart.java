@@ -10,7 +10,6 @@ import org.knowm.xchart.XYChart;
 import org.knowm.xchart.XYChartBuilder;
 import org.knowm.xchart.XYSeries;
 import org.knowm.xchart.style.Styler.LegendPosition;
-import org.knowm.xchart.style.XYStyler;
 import org.knowm.xchart.style.markers.Marker;
 import org.knowm.xchart.style.markers.SeriesMarkers;
 import org.minorant.bounds.Side;
@@ -34,12 +33,7 @@ final class CopiesChart {
 
     private static final List<Color> UPPER = List.of(Charts.VERMILION, Charts.PURPLE);
 
-    private static final BasicStroke LINE = new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND);
-
     private static final BasicStroke BROAD = new BasicStroke(3, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND);
-
-    private static final BasicStroke DASHED =
-            new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND, 10, new float[] {8, 5}, 0);
 
     private CopiesChart() {}
 
@@ -67,20 +61,9 @@ final class CopiesChart {
                 .max()
                 .orElse(1);
         if (Double.isFinite(plot.chernoff())) {
-            XYSeries line = chart.addSeries("Chernoff divergence", new double[] {1, Math.max(2, most)}, new double[] {
-                plot.chernoff(), plot.chernoff()
-            });
-            line.setMarker(SeriesMarkers.NONE);
-            line.setLineColor(Color.GRAY);
-            line.setLineStyle(DASHED);
+            Charts.level(chart, "Chernoff divergence", 1, Math.max(2, most), plot.chernoff());
         }
-        XYStyler s = chart.getStyler();
-        s.setXAxisLogarithmic(true);
-        s.setXAxisDecimalPattern("0");
-        s.setYAxisMin(0.0);
-        s.setYAxisDecimalPattern("0.00");
-        s.setPlotGridVerticalLinesVisible(false);
-        s.setLegendPosition(LegendPosition.OutsideE);
+        Charts.againstNumbers(chart);
         return Charts.svg(chart);
     }
 
@@ -123,7 +106,7 @@ final class CopiesChart {
             series.setLineColor(color);
             series.setMarkerColor(color);
             series.setMarker(marker(c));
-            series.setLineStyle(color.equals(Color.BLACK) ? BROAD : LINE);
+            series.setLineStyle(color.equals(Color.BLACK) ? BROAD : Charts.LINE);
         }
     }
 

@@ -1,13 +1,10 @@
 package org.minorant.study;
 
-import java.awt.BasicStroke;
 import java.awt.Color;
 import java.util.List;
 import org.knowm.xchart.XYChart;
 import org.knowm.xchart.XYChartBuilder;
 import org.knowm.xchart.XYSeries;
-import org.knowm.xchart.style.Styler.LegendPosition;
-import org.knowm.xchart.style.XYStyler;
 import org.knowm.xchart.style.markers.SeriesMarkers;
 import org.minorant.bounds.Side;
 import org.minorant.study.UsesPlot.Curve;
@@ -26,11 +23,6 @@ final class UsesChart {
     private static final List<Color> LOWER = List.of(Charts.BLUE, Charts.SKY);
 
     private static final List<Color> UPPER = List.of(Charts.VERMILION, Charts.PURPLE);
-
-    private static final BasicStroke LINE = new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND);
-
-    private static final BasicStroke DASHED =
-            new BasicStroke(1.6f, BasicStroke.CAP_BUTT, BasicStroke.JOIN_ROUND, 10, new float[] {8, 5}, 0);
 
     private UsesChart() {}
 
@@ -52,26 +44,15 @@ final class UsesChart {
             List<Color> colors = achieved ? LOWER : UPPER;
             XYSeries series = add(chart, c.name(), c.points(), most, colors.get(number % colors.size()));
             series.setMarker(achieved ? SeriesMarkers.TRIANGLE_UP : SeriesMarkers.TRIANGLE_DOWN);
-            series.setLineStyle(number < colors.size() ? LINE : DASHED);
+            series.setLineStyle(number < colors.size() ? Charts.LINE : Charts.DASHED);
         }
         XYSeries normal = add(chart, "normal approximation (no bound)", plot.normal(), most, Charts.ORANGE);
         normal.setMarker(SeriesMarkers.CIRCLE);
-        normal.setLineStyle(LINE);
+        normal.setLineStyle(Charts.LINE);
         int last = plot.normal().stream().mapToInt(Point::uses).max().orElse(1);
         int first = plot.normal().stream().mapToInt(Point::uses).min().orElse(1);
-        XYSeries line = chart.addSeries("capacity", new double[] {first, Math.max(first + 1, last)}, new double[] {
-            plot.capacity(), plot.capacity()
-        });
-        line.setMarker(SeriesMarkers.NONE);
-        line.setLineColor(Color.GRAY);
-        line.setLineStyle(DASHED);
-        XYStyler s = chart.getStyler();
-        s.setXAxisLogarithmic(true);
-        s.setXAxisDecimalPattern("0");
-        s.setYAxisMin(0.0);
-        s.setYAxisDecimalPattern("0.00");
-        s.setPlotGridVerticalLinesVisible(false);
-        s.setLegendPosition(LegendPosition.OutsideE);
+        Charts.level(chart, "capacity", first, Math.max(first + 1, last), plot.capacity());
+        Charts.againstNumbers(chart);
         return Charts.svg(chart);
     }
 

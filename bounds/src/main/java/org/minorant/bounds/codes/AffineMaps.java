@@ -3,6 +3,7 @@ package org.minorant.bounds.codes;
 import java.math.BigInteger;
 import java.util.Arrays;
 import org.minorant.core.InvalidInputException;
+import org.minorant.measurement.SplitMix;
 
 /** All maps m ↦ Am + b from the first M vectors of F_q^k to F_q^n, k as small as can be. Coefficients of a map: b_0, A_00, …, A_0(k−1), b_1, …. */
 final class AffineMaps {
@@ -57,7 +58,7 @@ final class AffineMaps {
         return BigInteger.valueOf(field.size()).pow(n * (k + 1));
     }
 
-    int[] draw(Draws draws) {
+    int[] draw(SplitMix draws) {
         int[] c = new int[n * (k + 1)];
         for (int i = 0; i < c.length; i++) {
             c[i] = draws.below(field.size());

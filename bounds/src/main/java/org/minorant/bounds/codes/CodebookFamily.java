@@ -9,6 +9,7 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.Estimate;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.WideDouble;
+import org.minorant.measurement.SplitMix;
 
 /**
  * The codebooks that affine maps over finite fields make: any two of their words are independent, with letters drawn from a rational input distribution P.
@@ -112,7 +113,7 @@ public final class CodebookFamily {
      * @return a codebook of the family
      */
     public Codebook draw(long seed) {
-        Draws draws = new Draws(seed);
+        SplitMix draws = new SplitMix(seed);
         return make(maps.stream().map(m -> m.draw(draws)).toList());
     }
 
@@ -222,7 +223,7 @@ public final class CodebookFamily {
                     "a spread needs two codebooks");
         }
         PrettyGoodDecoder decoder = PrettyGoodDecoder.of(channel);
-        Draws seeds = new Draws(seed);
+        SplitMix seeds = new SplitMix(seed);
         double[] errors = new double[draws];
         Arrays.setAll(
                 errors, i -> decoder.errorProbability(draw(seeds.nextLong())).midpoint());

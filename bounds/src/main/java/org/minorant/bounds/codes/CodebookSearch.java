@@ -5,6 +5,7 @@ import org.minorant.bounds.CodingBounds;
 import org.minorant.core.Enclosure;
 import org.minorant.core.InvalidInputException;
 import org.minorant.core.pair.WorkListener;
+import org.minorant.measurement.SplitMix;
 
 /**
  * Looks for a codebook that keeps what the random-coding bound promises: its certified error under the pretty-good measurement is at most f(M − 1).
@@ -139,7 +140,7 @@ public final class CodebookSearch {
             }
         };
         PrettyGoodDecoder decoder = PrettyGoodDecoder.of(channel).withProgress(quiet);
-        Draws seeds = new Draws(seed);
+        SplitMix seeds = new SplitMix(seed);
         double least = Double.POSITIVE_INFINITY;
         while (drawn < draws) {
             Codebook code = family.draw(seeds.nextLong());
