@@ -46,10 +46,7 @@ final class SpinBlocksRun {
                 effort,
                 blocks,
                 block -> {
-                    while (overlaps.order() < block.order()) {
-                        overlaps.step();
-                        effort.checkpoint();
-                    }
+                    overlaps.advanceTo(block.order(), effort::checkpoint);
                     SpinOverlaps.Window window = overlaps.window(block.first(), block.second());
                     return stop -> {
                         Enclosure f = value(block, window, stop);

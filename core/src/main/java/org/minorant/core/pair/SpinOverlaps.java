@@ -15,6 +15,8 @@ import org.minorant.core.internal.number.ProductError;
  *
  * The leading window is closed under it, so only as many indices are carried as are kept.
  *
+ * <p>From k to 2k the same goes with Sym^2k ⊂ Sym^k ⊗ Sym^k ({@link SpinDoubling}), so that high orders are near.
+ *
  * <p><b>Error.</b> The step does not increase operator norms. Errors therefore only add up: the error of the window has operator norm at most {@link #normError}, the sum of the
  * Frobenius norms of the rounding errors of all steps. Beside it every entry carries its own radius, propagated with absolute values; that grows where terms cancel, but keeps the
  * relative accuracy of entries deep in the corner, where none do. The smaller one holds.
@@ -25,6 +27,13 @@ import org.minorant.core.internal.number.ProductError;
 final class SpinOverlaps {
 
     private static final double STEP = 0x1p-97;
+
+    /** Doublings begin at an order of so many binary digits. */
+    private static final int FIRST = 3;
+
+    /** A doubling costs about rows · columns/30 steps. */
+    private static final double LESS = 30;
+
     private static final double UNDERFLOW = 0x1p-1060;
     private static final double UP = 1 + 0x1p-45;
 
@@ -110,6 +119,42 @@ final class SpinOverlaps {
         return c;
     }
 
+    /** Goes to a higher order, by doublings if that is less work than so many steps. */
+    void advanceTo(int k, Runnable checkpoint) {
+        int doublings = Math.max(0, 31 - Integer.numberOfLeadingZeros(k) - FIRST);
+        if (order == 0 && (double) rows * columns * doublings < LESS * k) {
+            int start = k >> doublings;
+            while (order < start) {
+                step();
+            }
+            for (int bit = doublings - 1; bit >= 0; bit--) {
+                checkpoint.run();
+                twice();
+                if ((k >> bit & 1) == 1) {
+                    step();
+                }
+            }
+        }
+        while (order < k) {
+            step();
+            checkpoint.run();
+        }
+    }
+
+    /** Goes from k to 2k. */
+    private void twice() {
+        SpinDoubling d = new SpinDoubling(order, rows, columns);
+        double square = d.of(hi, lo, radius, nextHi, nextLo, nextRadius);
+        // ‖C ⊗ C − C' ⊗ C'‖ ≤ (‖C‖ + ‖C'‖)‖C − C'‖, and windows of unitaries have norm 1 at most
+        normError = ((2 + normError) * normError
+                        + d.rounding() * Math.sqrt(square)
+                        + (double) rows * columns * rows * columns * UNDERFLOW)
+                * UP;
+        order *= 2;
+        cap(Math.min(order, rows - 1));
+        exchange();
+    }
+
     /** Goes from k to k + 1. */
     void step() {
         int k = ++order;
@@ -134,6 +179,11 @@ final class SpinOverlaps {
         }
         normError = (normError + STEP * Math.sqrt(square) + (double) rows * columns * UNDERFLOW) * UP;
         cap(last);
+        exchange();
+    }
+
+    /** What was made next becomes what is. */
+    private void exchange() {
         double[][] h = hi;
         double[][] l = lo;
         double[][] r = radius;

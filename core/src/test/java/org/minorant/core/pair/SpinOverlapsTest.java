@@ -1,5 +1,6 @@
 package org.minorant.core.pair;
 
+import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
 import java.math.BigDecimal;
@@ -50,6 +51,32 @@ class SpinOverlapsTest {
                 String where = "(" + a + ", " + b + ") " + exact.round(new MathContext(20)) + " but " + found;
                 assertTrue(error <= w.radius()[a][b], where);
                 assertTrue(w.radius()[a][b] <= 1e-25, where + " with the radius " + w.radius()[a][b]);
+            }
+        }
+    }
+
+    /** By doublings the same overlaps come out, within both radii, and hardly less accurate. */
+    @ParameterizedTest
+    @CsvSource({"1000, 0.4, 12, 9", "4097, 0.05, 20, 20", "3000, 0.001, 6, 30", "2047, 0.95, 30, 6", "5000, 0, 5, 4"})
+    void doublingsAgreeWithSteps(int k, double sine, int rows, int columns) {
+        BigDecimal s = new BigDecimal(sine);
+        DoubleDouble c = DoubleDouble.of(BigDecimal.ONE.subtract(s.multiply(s)).sqrt(DIGITS));
+        SpinOverlaps steps = new SpinOverlaps(c, DoubleDouble.of(sine), rows, columns);
+        while (steps.order() < k) {
+            steps.step();
+        }
+        SpinOverlaps jumps = new SpinOverlaps(c, DoubleDouble.of(sine), rows, columns);
+        jumps.advanceTo(k, () -> {});
+        assertEquals(k, jumps.order());
+        SpinOverlaps.Window u = steps.window(rows, columns);
+        SpinOverlaps.Window v = jumps.window(rows, columns);
+        for (int a = 0; a < rows; a++) {
+            for (int b = 0; b < columns; b++) {
+                double apart = new DoubleDouble(u.high()[a][b], u.low()[a][b])
+                        .minus(new DoubleDouble(v.high()[a][b], v.low()[a][b]))
+                        .hi();
+                assertTrue(Math.abs(apart) <= u.radius()[a][b] + v.radius()[a][b], a + ", " + b + ": " + apart);
+                assertTrue(v.radius()[a][b] <= 1e-23, a + ", " + b + ": " + v.radius()[a][b]);
             }
         }
     }
