@@ -30,19 +30,30 @@ class SpinOverlapsTest {
         "101, 0.001, 10, 40",
         "200, 0.7, 40, 60",
         "64, 0, 6, 5",
-        "64, 1, 5, 65"
+        "64, 1, 5, 65",
+        "200, 0.3, 12, 9",
+        "333, 0.05, 14, 14",
+        "512, 0.9, 8, 20"
     })
     void entriesLieWithinTheirRadii(int k, double sine, int rows, int columns) {
         BigDecimal s = new BigDecimal(sine);
         DoubleDouble sin = DoubleDouble.of(sine);
         BigDecimal c = BigDecimal.ONE.subtract(s.multiply(s)).sqrt(DIGITS);
-        SpinOverlaps overlaps = new SpinOverlaps(DoubleDouble.of(c), sin, rows, columns);
-        while (overlaps.order() < k) {
-            overlaps.step();
+        SpinOverlaps steps = new SpinOverlaps(DoubleDouble.of(c), sin, rows, columns);
+        while (steps.order() < k) {
+            steps.step();
         }
+        assertWithinRadii(steps.window(rows, columns), k, c, s);
+        SpinOverlaps jumps = new SpinOverlaps(DoubleDouble.of(c), sin, rows, columns);
+        jumps.advanceTo(k, () -> {});
+        assertWithinRadii(jumps.window(rows, columns), k, c, s);
+    }
+
+    private static void assertWithinRadii(SpinOverlaps.Window w, int k, BigDecimal c, BigDecimal s) {
         BigDecimal[] powersOfC = powers(c, k);
         BigDecimal[] powersOfS = powers(s, k);
-        SpinOverlaps.Window w = overlaps.window(rows, columns);
+        int rows = w.high().length;
+        int columns = w.high()[0].length;
         for (int a = 0; a < Math.min(rows, k + 1); a++) {
             for (int b = 0; b < Math.min(columns, k + 1); b++) {
                 BigDecimal exact = wigner(k, a, b, powersOfC, powersOfS);
