@@ -96,4 +96,21 @@ interface ChannelOutputs {
      * @throws org.minorant.core.InvalidInputException if there is none
      */
     WordCurves wordsAgainstMixture(double[] q, int n);
+
+    /**
+     * Prepares the curves of words of single types against n copies of the mixture Σ q_x W_x, exactly.
+     *
+     * @param q a distribution over all letters
+     * @param n the length of words
+     * @return the curves, for types over all letters
+     * @throws org.minorant.core.InvalidInputException if the letters allow none
+     */
+    TypedWords typed(double[] q, int n);
+
+    /**
+     * Tells what a type of words costs.
+     *
+     * @return the kind of work
+     */
+    TypeCost typeCost();
 }

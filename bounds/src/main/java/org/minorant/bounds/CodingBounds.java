@@ -14,7 +14,7 @@ import org.minorant.core.curve.Curve;
  * What codes for one use of a classical-quantum channel, or for n uses ({@link #uses}), can and cannot do, certified from both sides.
  *
  * <p>A code of M messages is a letter x(m) for each message and a measurement {T_m}; its average error is 1 − (1/M) Σ_m Tr[W_x(m) T_m]. All
- * bounds here are on the <em>average</em> error probability. A converse for the average error holds for the largest error, too; an
+ * bounds here but {@link #achievableLargest} are on the <em>average</em> error probability. A converse for the average error holds for the largest error, too; an
  * achievable average error ε gives a code with half the messages and a largest error of at most 2ε.
  *
  * <p><b>Real and whole M.</b> Formulas are evaluated for real M ≥ 1, as in the literature, so that thresholds vary smoothly. A code has a whole number of
@@ -240,6 +240,50 @@ public final class CodingBounds {
         return MessageCount.threshold(others(epsilon), RandomCoding.THEOREM);
     }
 
+    /**
+     * Returns ln M such that some code of ⌊M⌋ messages has a <em>largest</em> error of at most ε, for every message: M = (1 + t)(1 − f(t)/ε) with the f of {@link #achievableError(long)}, at a t that a search found. Of a code of 1 + t messages and
+     * average error f(t), these are the messages of error at most ε. No converse needs to be told apart: what no code exceeds at average error ε is not exceeded at largest error ε.
+     *
+     * @param epsilon the largest error allowed, between 0 and 1, both excluded
+     * @return the value at that t, enclosed: its lower end is surely reached, and another t may give more; 0 if it lies below two messages
+     * @throws InvalidInputException if ε is not in range
+     */
+    public Information achievableLargest(double epsilon) {
+        ChannelChecks.error("CodingBounds.achievableLargest", epsilon);
+        return MessageCount.threshold(LargestError.others(mean.get(), epsilon, others(epsilon)), LargestError.THEOREM);
+    }
+
+    /**
+     * Returns the largest ln M at which {@link #constantCompositionError} is at most ε, with the reading of {@link #achievable}: there is a code in all of whose words each letter occurs equally often.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the threshold, with the counts of letters in its source
+     * @throws InvalidInputException if ε is not in range, or the letters are not covered in so many uses
+     */
+    public Information constantComposition(double epsilon) {
+        ChannelChecks.error("CodingBounds.constantComposition", epsilon);
+        return composition().messages(epsilon);
+    }
+
+    /**
+     * Returns an average error that some code of M words of one type T surely does not exceed: with P = T/n, T the type nearest to n times the input, and Pⁿ(T) its probability,
+     *
+     * <pre>Tr[W_T ∧ (M − 1)/Pⁿ(T) ρ_B^⊗n],   ρ_B = Σ_x P(x) W_x.</pre>
+     *
+     * <p>Source: H.-C. Cheng, PRX Quantum 4, 040330 (2023), with words drawn from the class of T, whose mean output is at most ρ_B^⊗n/Pⁿ(T).
+     *
+     * @param messages ln M, at least 0
+     * @return the bound
+     * @throws InvalidInputException if ln M is negative or beyond 7e8, or the letters are not covered in so many uses
+     */
+    public Enclosure constantCompositionError(Information messages) {
+        return composition().error(MessageCount.others("CodingBounds.constantCompositionError", messages));
+    }
+
+    private ConstantComposition composition() {
+        return ConstantComposition.of(channel.structure(), input(), uses);
+    }
+
     private Enclosure others(double epsilon) {
         return RandomCoding.others(mean.get(), epsilon, saturation(), uses == 1 ? 0 : ENOUGH_FOR_WORDS);
     }
@@ -412,6 +456,23 @@ public final class CodingBounds {
     }
 
     /**
+     * Returns ln M that no code of average error ε exceeds, with an output state of its own for each group of types of words: where letters are not alike, {@link #converse} is that of the best word, often far above. The output states do
+     * not depend on those of these bounds. For numbers s_G, one for each group G of types P,
+     *
+     * <pre>M ≤ Σ_G s_G / (c − ε),   c = min over P of Tr[W_P ∧ s_G σ_G^⊗n].</pre>
+     *
+     * <p>The value at the s_G and σ_G that a search found is enclosed, to about 1e-9, for mixed letters 1e-5. It covers classical channels up to 20 000 types of words, kets up to 2000, others, which take minutes then, up to 33, all while {@link #uses} covers them. {@link #ledger} lists it, and {@link #constantComposition}, for a tenth of that.
+     *
+     * @param epsilon the average error allowed, between 0 and 1, both excluded
+     * @return the bound; infinite if no output states were found
+     * @throws InvalidInputException if ε is not in range, or there are too many types of words
+     */
+    public Information converseByTypes(double epsilon) {
+        ChannelChecks.error("CodingBounds.converseByTypes", epsilon);
+        return TypesConverse.messages(channel, uses, epsilon);
+    }
+
+    /**
      * Returns the weak converse ln M ≤ (nC + h(ε))/(1 − ε) from Fano's and Holevo's inequalities.
      *
      * @param epsilon the average error allowed, between 0 and 1, both excluded
@@ -546,6 +607,10 @@ public final class CodingBounds {
         }
         ledger.whole(() -> relaxed().others(epsilon), ChernoffWords.THEOREM);
         ledger.add(Side.UPPER, () -> converse(epsilon), TraceMinimumConverse.THEOREM);
+        if (TypesConverse.helps(letters, channel, uses)) {
+            ledger.whole(() -> composition().others(epsilon), ConstantComposition.THEOREM);
+            ledger.add(Side.UPPER, () -> converseByTypes(epsilon), TypesConverse.THEOREM);
+        }
         ledger.add(Side.UPPER, () -> strongConverse(epsilon), StrongConverseWords.THEOREM);
         ledger.add(Side.UPPER, () -> weakConverse(epsilon), FanoHolevo.THEOREM);
         return ledger.of("logarithm of the largest number of messages at average error " + epsilon);

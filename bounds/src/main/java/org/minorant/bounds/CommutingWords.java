@@ -1,8 +1,10 @@
 package org.minorant.bounds;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import org.minorant.core.Enclosure;
+import org.minorant.core.pair.CommutingPowers;
 import org.minorant.core.pair.PositivePair;
 
 /**
@@ -80,5 +82,24 @@ final class CommutingWords {
         Enclosure one = Enclosure.ONE;
         Enclosure slack = one.dividedBy(traces).hull(one.dividedBy(trace)).hull(one);
         return WordCurves.of(pairs, traces, slack, error, 0, n);
+    }
+
+    /**
+     * Words of single types against an output state.
+     *
+     * @param s its eigenvalues
+     * @param trace what holds their sum, over its true value
+     */
+    TypedWords typed(double[] s, Enclosure trace) {
+        List<MergedSpectra> letters =
+                Arrays.stream(rows).map(row -> MergedSpectra.of(row, s)).toList();
+        double error = letters.stream().mapToDouble(MergedSpectra::error).max().orElse(0);
+        CommutingPowers powers = CommutingPowers.of(
+                letters.stream().map(MergedSpectra::a).toList(),
+                letters.stream().map(MergedSpectra::b).toList(),
+                n);
+        Enclosure one = Enclosure.ONE;
+        Enclosure slack = one.dividedBy(traces).hull(one.dividedBy(trace)).hull(one);
+        return new TypedWords(powers::pair, powers::terms, traces, slack, error, n);
     }
 }

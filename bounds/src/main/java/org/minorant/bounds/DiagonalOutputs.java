@@ -236,4 +236,17 @@ final class DiagonalOutputs implements ChannelOutputs {
                 ? new CommutingWords(rows, traces, n).against(mixture(q), traceOfMixture(q))
                 : wordsAgainst(DensityOperator.mixture(states(), q), n);
     }
+
+    @Override
+    public TypedWords typed(double[] q, int n) {
+        if (!isShallow(q)) {
+            throw WordCurves.notCovered("products of probabilities of letters and outcomes below " + SHALLOW);
+        }
+        return new CommutingWords(rows, traces, n).typed(mixture(q), traceOfMixture(q));
+    }
+
+    @Override
+    public TypeCost typeCost() {
+        return TypeCost.SUMS;
+    }
 }

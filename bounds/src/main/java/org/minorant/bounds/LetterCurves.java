@@ -147,6 +147,11 @@ final class LetterCurves {
         return many || pairs.stream().allMatch(PositivePair::hasCheapEstimate) ? values.withGuess(least) : values;
     }
 
+    /** Whether one curve is that of all. */
+    boolean areAlike() {
+        return pairs.size() == 1;
+    }
+
     /** A number that no value of {@link #least} and {@link #leastAgainst} exceeds, nor its ratio to the weight. */
     WideDouble most() {
         WideDouble most = traces.upperWide();

@@ -210,4 +210,17 @@ final class MatrixOutputs implements ChannelOutputs {
                 ? words.ofTwoKets(mixture, Traces.sum(q))
                 : wordsAgainst(mixture, Traces.sum(q).times(traces), n);
     }
+
+    @Override
+    public TypedWords typed(double[] q, int n) {
+        return new QuantumWords(outputs, traces, n)
+                .typed(mixtureState(q), Traces.sum(q).times(traces));
+    }
+
+    @Override
+    public TypeCost typeCost() {
+        boolean kets = outputs.stream()
+                .allMatch(w -> w.isDefinedByFactor() && w.factor().rank() == 1);
+        return kets ? TypeCost.EQUATIONS : TypeCost.BLOCKS;
+    }
 }

@@ -164,4 +164,27 @@ final class QuantumWords {
         }
         return TypeProbabilities.types(kinds.count, n);
     }
+
+    /**
+     * Words of single types against an output state.
+     *
+     * @param sigma the state
+     * @param trace what holds its trace
+     */
+    TypedWords typed(DensityOperator sigma, Enclosure trace) {
+        PairPowers powers = PairPowers.of(letters, Collections.nCopies(letters.size(), sigma));
+        if (powers.isMultipliedOut() && !(Math.pow(sigma.dimension(), n) <= PairPowers.MOST_DIMENSIONS)) {
+            throw WordCurves.notCovered("letters of dimension " + sigma.dimension()
+                    + " that are neither kets nor on a qubit, in " + n + " uses");
+        }
+        Enclosure one = Enclosure.ONE;
+        Enclosure slack = one.dividedBy(traces).hull(one.dividedBy(trace)).hull(one);
+        return new TypedWords(
+                type -> powers.pair(type).withEffort(Effort.DEFAULT.withTolerance(ENOUGH)),
+                type -> 0,
+                traces,
+                slack,
+                0,
+                n);
+    }
 }
