@@ -5,6 +5,7 @@ import java.util.ArrayList;
 import java.util.Collection;
 import java.util.List;
 import java.util.Locale;
+import org.openjdk.jmh.results.Result;
 import org.openjdk.jmh.results.RunResult;
 import org.openjdk.jmh.runner.Runner;
 import org.openjdk.jmh.runner.RunnerException;
@@ -13,8 +14,8 @@ import org.openjdk.jmh.runner.options.OptionsBuilder;
 import org.openjdk.jmh.util.Statistics;
 
 /**
- * Runs benchmarks between two measurements of one native LAPACK eigendecomposition (real symmetric, 1024 × 1024, values and vectors, one thread), if the native profile is on, and prints
- * least and median times in milliseconds and the median in units of the smaller median of the two.
+ * Runs benchmarks between two measurements of one native LAPACK eigendecomposition (real symmetric, 1024 × 1024, values and vectors, one thread), if the native profile is on. Prints elapsed time and
+ * {@linkplain ProcessorTime processor time}, least and median, in milliseconds and in units of what the eigendecomposition takes: medians over the smaller of its two medians.
  */
 final class UnitTable {
 
@@ -27,35 +28,39 @@ final class UnitTable {
      * @param parts the benchmarks
      */
     static void run(String parameter, ChainedOptionsBuilder... parts) throws RunnerException {
-        System.out.printf(Locale.ROOT, "load average before: %.2f%n", load());
+        double load = load();
         List<RunResult> units = new ArrayList<>(run(unit()));
         List<RunResult> results = new ArrayList<>();
         for (ChainedOptionsBuilder part : parts) {
             results.addAll(run(part));
         }
         units.addAll(run(unit()));
-        double unit = units.stream().mapToDouble(UnitTable::median).min().orElse(Double.NaN);
-        System.out.printf(Locale.ROOT, "%nload average after: %.2f%n", load());
-        System.out.printf(
-                Locale.ROOT, "%-20s %-28s %12s %12s %8s%n", parameter, "what", "least ms", "median ms", "units");
+        double elapsed = least(units, true);
+        double processor = least(units, false);
+        System.out.printf(Locale.ROOT, "%nload average %.2f before, %.2f after%n", load, load());
+        System.out.printf("%-18s %-24s %-32s %s%n", parameter, "what", "elapsed: least, median, units", "processor");
         for (RunResult r : units) {
-            print(r, "", unit);
+            print(r, "", elapsed, processor);
         }
         for (RunResult r : results) {
-            print(r, r.getParams().getParam(parameter), unit);
+            print(r, r.getParams().getParam(parameter), elapsed, processor);
         }
     }
 
-    private static void print(RunResult r, String row, double unit) {
+    private static void print(RunResult r, String row, double elapsed, double processor) {
         String name = r.getParams().getBenchmark();
         System.out.printf(
                 Locale.ROOT,
-                "%-20s %-28s %12.1f %12.1f %8.2f%n",
+                "%-18s %-24s %s %s%n",
                 row,
                 name.substring(name.lastIndexOf('.') + 1),
-                times(r).getMin(),
-                median(r),
-                median(r) / unit);
+                text(times(r, true), elapsed),
+                text(times(r, false), processor));
+    }
+
+    private static String text(Statistics s, double unit) {
+        double median = s.getPercentile(50);
+        return String.format(Locale.ROOT, "%10.1f %10.1f %8.2f", s.getMin(), median, median / unit);
     }
 
     private static ChainedOptionsBuilder unit() {
@@ -67,7 +72,7 @@ final class UnitTable {
 
     private static Collection<RunResult> run(ChainedOptionsBuilder options) throws RunnerException {
         try {
-            return new Runner(options.build()).run();
+            return new Runner(options.addProfiler(ProcessorTime.class).build()).run();
         } catch (RunnerException e) {
             // without the native profile there is no yardstick
             if (String.valueOf(e.getMessage()).contains("No benchmarks")) {
@@ -77,12 +82,17 @@ final class UnitTable {
         }
     }
 
-    private static Statistics times(RunResult r) {
-        return r.getPrimaryResult().getStatistics();
+    private static double least(List<RunResult> units, boolean elapsed) {
+        return units.stream()
+                .mapToDouble(r -> times(r, elapsed).getPercentile(50))
+                .min()
+                .orElse(Double.NaN);
     }
 
-    private static double median(RunResult r) {
-        return times(r).getPercentile(50);
+    private static Statistics times(RunResult r, boolean elapsed) {
+        Result<?> result =
+                elapsed ? r.getPrimaryResult() : r.getSecondaryResults().get(ProcessorTime.NAME);
+        return result.getStatistics();
     }
 
     private static double load() {
