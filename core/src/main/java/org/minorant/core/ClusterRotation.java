@@ -14,9 +14,10 @@ import org.minorant.core.internal.number.DoubleDouble;
  * coupled is that much smaller, so that a few rounds reach the working precision. Trusted by nobody, see {@link EnclosedSpectrum}.
  *
  * @param unitary the rotation, identity outside the clusters
+ * @param label the same number for all indices of a cluster
  * @param isTrivial whether there was no cluster
  */
-record ClusterRotation(Operator unitary, boolean isTrivial) {
+record ClusterRotation(Operator unitary, int[] label, boolean isTrivial) {
 
     static ClusterRotation of(EnclosedMatrix b, double small, double apart) {
         int n = b.rows();
@@ -26,17 +27,18 @@ record ClusterRotation(Operator unitary, boolean isTrivial) {
             re[i * n + i] = 1;
         }
         boolean trivial = true;
-        for (int[] cluster : clusters(b, small, apart)) {
+        int[] label = labels(b, small, apart);
+        for (int[] cluster : clusters(label)) {
             if (cluster.length > 1) {
                 trivial = false;
                 rotate(b, cluster, re, im);
             }
         }
-        return new ClusterRotation(new Operator(n, n, re, im), trivial);
+        return new ClusterRotation(new Operator(n, n, re, im), label, trivial);
     }
 
     /** Connected components of the graph whose edges are entries that are not small and not much smaller than their gap. */
-    private static List<int[]> clusters(EnclosedMatrix b, double small, double apart) {
+    private static int[] labels(EnclosedMatrix b, double small, double apart) {
         int n = b.rows();
         int[] label = new int[n];
         Arrays.setAll(label, i -> i);
@@ -53,6 +55,11 @@ record ClusterRotation(Operator unitary, boolean isTrivial) {
                 }
             }
         }
+        return label;
+    }
+
+    private static List<int[]> clusters(int[] label) {
+        int n = label.length;
         List<int[]> out = new ArrayList<>();
         for (int c = 0; c < n; c++) {
             int root = c;

@@ -1,6 +1,7 @@
 package org.minorant.core;
 
 import org.minorant.core.internal.number.DoubleDouble;
+import org.minorant.core.internal.work.Checkpoint;
 
 /**
  * A certified spectral decomposition of a Hermitian matrix A: vectors V and values Λ with
@@ -9,7 +10,7 @@ import org.minorant.core.internal.number.DoubleDouble;
  *
  * both about 1e-30 of ‖A‖ for well-scaled input up to a few hundred dimensions.
  *
- * <p><b>Argument.</b> Vectors come from a double eigendecomposition, are made orthonormal in double-double by Newton–Schulz
+ * <p><b>Argument.</b> Vectors come from a double eigendecomposition, are made orthonormal to double-double by Newton–Schulz
  * steps and corrected to first order where eigenvalues are apart, by decompositions of their clusters where they are not. How they were
  * found does not matter: residual and defect are computed afterwards with {@link EnclosedMatrix}. By the theorems of Weyl and
  * Ostrowski the i-th smallest eigenvalue of A is within residual + defect · max|Λ| of the i-th smallest entry of Λ (Horn and
@@ -53,6 +54,7 @@ public final class EnclosedSpectrum {
         EnclosedMatrix v = r.vectors();
         DoubleDouble[] values = r.values();
         EnclosedMatrix back = scaleColumns(v, values).times(v.adjoint());
+        Checkpoint.current().run();
         double residual = a.minus(back).frobeniusUpper();
         double defect =
                 v.adjoint().times(v).minus(EnclosedMatrix.identity(a.rows())).frobeniusUpper();
@@ -63,9 +65,11 @@ public final class EnclosedSpectrum {
     private static EnclosedMatrix scaleColumns(EnclosedMatrix v, DoubleDouble[] values) {
         EnclosedMatrix.Builder d = EnclosedMatrix.builder(values.length, values.length);
         for (int i = 0; i < values.length; i++) {
-            d.set(i, i, values[i].hi(), values[i].lo(), 0, 0, 0);
+            for (int j = 0; j < values.length; j++) {
+                d.set(i, j, values[j].hi(), values[j].lo(), 0, 0, 0);
+            }
         }
-        return v.times(d.build());
+        return v.timesEntrywise(d.build());
     }
 
     /**

@@ -7,12 +7,15 @@ import static org.junit.jupiter.api.Assertions.assertTrue;
 import java.math.BigDecimal;
 import java.math.MathContext;
 import java.util.Random;
+import java.util.concurrent.CancellationException;
+import java.util.concurrent.atomic.AtomicInteger;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.EnumSource;
 import org.minorant.core.internal.TestMatrices;
 import org.minorant.core.internal.TestMatrices.Flat;
 import org.minorant.core.internal.TestMatrices.Spectrum;
+import org.minorant.core.internal.work.Checkpoint;
 
 class EnclosedSpectrumTest {
 
@@ -97,6 +100,39 @@ class EnclosedSpectrumTest {
         assertTrue(s.residual() >= 1e-10 && s.residual() < 1.1e-10);
         assertTrue(s.eigenvalue(0).contains(1 + 1e-10) && s.eigenvalue(0).contains(1 - 1e-10));
         assertEquals(2, s.dimension());
+    }
+
+    @Test
+    void asksTheCheckpointOfItsThreadOnly() {
+        Random random = new Random(3);
+        HermitianOperator a =
+                operator(TestMatrices.hermitian(TestMatrices.spectrum(Spectrum.CLUSTERED, 6, random), true, random));
+        AtomicInteger asked = new AtomicInteger();
+        AtomicInteger outer = new AtomicInteger();
+        double residual = Checkpoint.during(
+                outer::incrementAndGet,
+                () -> Checkpoint.during(
+                        asked::incrementAndGet, () -> EnclosedSpectrum.of(a).residual()));
+        // the decomposition, one step, two products, the certificate; rounds add to it
+        assertTrue(asked.get() >= 5, () -> asked + " polls");
+        assertEquals(0, outer.get());
+        int before = asked.get();
+        assertEquals(residual, EnclosedSpectrum.of(a).residual());
+        assertEquals(before, asked.get());
+        for (int k = 1; k <= before; k++) {
+            int last = k;
+            AtomicInteger polls = new AtomicInteger();
+            Runnable stop = () -> {
+                if (polls.incrementAndGet() == last) {
+                    throw new CancellationException();
+                }
+            };
+            assertThrows(CancellationException.class, () -> Checkpoint.during(stop, () -> EnclosedSpectrum.of(a)));
+            assertEquals(last, polls.get());
+        }
+        // cancelled work leaves nothing behind
+        assertEquals(residual, EnclosedSpectrum.of(a).residual());
+        assertEquals(before, asked.get());
     }
 
     @Test

@@ -6,6 +6,7 @@ import org.minorant.core.Enclosure;
 import org.minorant.core.WideDouble;
 import org.minorant.core.internal.number.DoubleDouble;
 import org.minorant.core.internal.number.WideDoubleDouble;
+import org.minorant.core.internal.work.Checkpoint;
 
 /** Evaluates the blocks of a plan: one thread makes the overlaps and hands them to the others; the sum is taken in the order of the blocks. */
 final class UnitaryBlocksRun {
@@ -52,7 +53,7 @@ final class UnitaryBlocksRun {
         List<Enclosure> parts = Parallel.inOrder(effort, blocks, block -> {
             IrrepOverlaps overlaps = tree.overlaps(block, effort::checkpoint);
             return stop -> {
-                Enclosure f = value(block, overlaps, stop);
+                Enclosure f = Checkpoint.during(stop, () -> value(block, overlaps, stop));
                 effort.listener().onProgress(done.incrementAndGet(), blocks.size());
                 return f;
             };

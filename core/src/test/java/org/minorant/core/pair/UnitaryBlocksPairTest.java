@@ -251,6 +251,34 @@ class UnitaryBlocksPairTest {
                 () -> pair.withEffort(Effort.DEFAULT.withListener(stops)).traceMinimum(1));
     }
 
+    /** Counts only what is asked from inside an enclosed spectrum, and cancels there: an answer would mean that nothing is asked in there. */
+    @Test
+    void canBeCancelledInsideASpectrum() {
+        SplittableRandom r = new SplittableRandom(3);
+        PositivePair pair = PositivePair.of(random(r, 3, 3, false, 0.4), random(r, 3, 3, false, 0.4))
+                .copies(8);
+        for (int polls : new int[] {1, 4, 12}) {
+            AtomicLong asked = new AtomicLong();
+            WorkListener stops = new WorkListener() {
+                @Override
+                public void onProgress(long done, long total) {}
+
+                @Override
+                public boolean isCancelled() {
+                    boolean inside = StackWalker.getInstance()
+                            .walk(frames -> frames.anyMatch(
+                                    f -> f.getClassName().equals("org.minorant.core.EnclosedSpectrum")));
+                    return inside && asked.incrementAndGet() >= polls;
+                }
+            };
+            assertThrows(
+                    CancellationException.class,
+                    () -> pair.withEffort(Effort.DEFAULT.withListener(stops)).traceMinimum(1));
+            assertTrue(asked.get() >= polls);
+        }
+        assertTrue(pair.traceMinimum(1).relativeWidth() <= NARROW);
+    }
+
     @Test
     void refusesWhatDoesNotFit() {
         SplittableRandom r = new SplittableRandom(4);

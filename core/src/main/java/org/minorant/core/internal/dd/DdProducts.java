@@ -2,6 +2,7 @@ package org.minorant.core.internal.dd;
 
 import java.util.Arrays;
 import org.minorant.core.internal.number.ProductError;
+import org.minorant.core.internal.work.Checkpoint;
 
 /**
  * Matrix products in double-double on arrays of rows, with the low word left unnormalised inside the loop (the form the compiler
@@ -34,6 +35,9 @@ public final class DdProducts {
     /** Shorter rows have a loop of their own, which is compiled for what it meets. */
     private static final int SHORT = 16;
 
+    /** Rows after which the thread's {@link Checkpoint} is asked. */
+    private static final int POLL = 64;
+
     private DdProducts() {}
 
     /** The factor γ of the error bound γ·Σ|a||b| for an inner dimension n, real or complex. */
@@ -53,22 +57,30 @@ public final class DdProducts {
      */
     public static void addProduct(
             double[][] ah, double[][] al, double[][] bh, double[][] bl, double sign, double[][] ch, double[][] cl) {
-        double[] ph = new double[ch.length == 0 ? 0 : ch[0].length];
-        double[] pl = new double[ph.length];
+        Runnable check = Checkpoint.current();
         for (int i = 0; i < ah.length; i++) {
-            double[] xh = ah[i];
-            double[] xl = al[i];
-            for (int from = 0; from < xh.length; from += CHUNK) {
-                int to = Math.min(xh.length, from + CHUNK);
-                Arrays.fill(ph, 0);
-                Arrays.fill(pl, 0);
-                for (int k = from; k < to; k++) {
-                    if (xh[k] != 0 || xl[k] != 0) {
-                        addScaled(sign * xh[k], sign * xl[k], bh[k], bl[k], ph, pl);
-                    }
-                }
-                merge(ph, pl, ch[i], cl[i]);
+            if (i % POLL == POLL - 1) {
+                check.run();
             }
+            addRow(ah[i], al[i], bh, bl, sign, ch[i], cl[i], ch[i].length);
+        }
+    }
+
+    /** The first entries of one row of {@link #addProduct}, as many as asked for. */
+    public static void addRow(
+            double[] xh, double[] xl, double[][] bh, double[][] bl, double sign, double[] ch, double[] cl, int length) {
+        double[] ph = new double[length];
+        double[] pl = new double[length];
+        for (int from = 0; from < xh.length; from += CHUNK) {
+            int to = Math.min(xh.length, from + CHUNK);
+            Arrays.fill(ph, 0);
+            Arrays.fill(pl, 0);
+            for (int k = from; k < to; k++) {
+                if (xh[k] != 0 || xl[k] != 0) {
+                    addScaled(sign * xh[k], sign * xl[k], bh[k], bl[k], ph, pl);
+                }
+            }
+            merge(ph, pl, ch, cl);
         }
     }
 
@@ -105,7 +117,7 @@ public final class DdProducts {
 
     /** (h, l) += (p, q), and every pair is brought to |l| ≤ ½ ulp(h). */
     private static void merge(double[] p, double[] q, double[] h, double[] l) {
-        for (int j = 0; j < h.length; j++) {
+        for (int j = 0; j < p.length; j++) {
             double s = h[j] + p[j];
             double t = s - h[j];
             double v = l[j] + (((h[j] - (s - t)) + (p[j] - t)) + q[j]);

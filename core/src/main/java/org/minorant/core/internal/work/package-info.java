@@ -1,0 +1,2 @@
+/** What long computations do beside their work. */
+package org.minorant.core.internal.work;
