@@ -21,10 +21,7 @@ public final class CodingTable {
         if (args.length > 1) {
             UnitTable.run(
                     "channel",
-                    Arrays.stream(args)
-                            .skip(1)
-                            .map(c -> of(args[0], c))
-                            .toArray(ChainedOptionsBuilder[]::new));
+                    Arrays.stream(args).skip(1).map(c -> of(args[0], c)).toArray(ChainedOptionsBuilder[]::new));
             return;
         }
         UnitTable.run(
