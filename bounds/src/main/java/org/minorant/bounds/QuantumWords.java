@@ -31,7 +31,7 @@ final class QuantumWords {
     private static final double RARE = 0x1p-70;
 
     /** The relative width that curves are worth knowing to. */
-    private static final double ENOUGH = 1e-9;
+    private static final double ENOUGH = 1e-8;
 
     private final List<DensityOperator> letters;
     private final Enclosure traces;

@@ -39,14 +39,16 @@ final class RandomCoding {
      */
     static Enclosure others(Curve f, double epsilon, WideDouble saturation, double relativeGap) {
         WideDouble level = WideDouble.of(epsilon);
+        Enclosure none = Enclosure.of(WideDouble.ZERO, WideDouble.of(Math.nextDown(1.0)));
+        if (f.at(WideDouble.ONE).lowerWide().compareTo(level) > 0) {
+            return none;
+        }
         WideDouble[] bracket = {WideDouble.ONE, saturation};
         if (f.guess().isEmpty() && saturation.exponent() > LONG) {
             bracket = ErrorWeight.halved(f, level, bracket[0], bracket[1]);
         }
         Enclosure root = CurveRoot.of(f, level, bracket[0], bracket[1], relativeGap);
         // an end at 1 is one where f exceeds the level
-        return root.upperWide().compareTo(WideDouble.ONE) > 0
-                ? root
-                : Enclosure.of(WideDouble.ZERO, WideDouble.of(Math.nextDown(1.0)));
+        return root.upperWide().compareTo(WideDouble.ONE) > 0 ? root : none;
     }
 }
