@@ -107,7 +107,7 @@ public final class CodingBounds {
      *   <li>classical channels, against output states that commute with the letters; for the converse by types of words where letters are not alike, which fits two kinds of letters to 10⁴ uses, three to a few hundred;
      *   <li>kets: two equiprobable ones, or letters that are alike against the output state, by copies of one pair; others by the types of words, up to 20 000 of them;
      *   <li>letters on a qubit: of the same Bloch length and the same angle to the Bloch vector of the output state, or of the same length if that is maximally mixed, by copies of one pair; others by up to 300 types of words,
-     *       which takes minutes beyond 50 uses;
+     *       which takes minutes at 30 uses and long beyond;
      *   <li>any letters while words have a dimension of at most 512.
      * </ul>
      *
