@@ -30,8 +30,8 @@ final class QuantumWords {
     /** Types that together have less than this probability are left out of a mean. */
     private static final double RARE = 0x1p-70;
 
-    /** The relative width that curves are worth knowing to. */
-    private static final double ENOUGH = 1e-8;
+    /** The share of a curve's value that truncation may cost; it costs far less as a rule, and M is asked for to 1e-6 bit. */
+    private static final double ENOUGH = 1e-7;
 
     private final List<DensityOperator> letters;
     private final Enclosure traces;

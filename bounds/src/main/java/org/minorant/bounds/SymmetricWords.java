@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import org.minorant.core.DensityOperator;
 import org.minorant.core.Enclosure;
+import org.minorant.core.pair.Effort;
 import org.minorant.core.pair.PositivePair;
 
 /**
@@ -28,6 +29,9 @@ final class SymmetricWords {
 
     /** n δ/ℓ up to which relative errors are used. */
     private static final double RELATIVE = 0x1p-20;
+
+    /** The share of a curve's value that truncation may cost; it costs far less as a rule, and M is asked for to 1e-6 bit. */
+    private static final double ENOUGH = 1e-7;
 
     private final List<DensityOperator> letters;
     private final List<LetterFactor> factors;
@@ -92,7 +96,8 @@ final class SymmetricWords {
             error += 2 * (mixed + miss);
         }
         PositivePair one = PositivePair.of(letters.get(0), isMixed ? DensityOperator.maximallyMixed(2) : sigma);
-        return WordCurves.of(one.copies(n), traces, slack(trace), error, relative ? 0 : delta, n);
+        PositivePair many = one.copies(n).withEffort(Effort.DEFAULT.withTolerance(ENOUGH));
+        return WordCurves.of(many, traces, slack(trace), error, relative ? 0 : delta, n);
     }
 
     /** Whether this is a qubit whose letters rotations around the Bloch vector of a state carry into each other, any rotations if that is none. */

@@ -91,7 +91,6 @@ final class RelaxedBoundsTest {
         assertEquals(best, nats.midpoint(), n * SEARCH);
     }
 
-    /** Two kets and the mixture at its optimum: D̃_α(ψ‖σ) = (1/u) ln⟨ψ|σ^(−u)|ψ⟩, least for σ ∝ ρ^(1/(1+u)), so that u D̃_α = (1+u) ln Tr ρ^(1/(1+u)). */
     /** Light in stray light, as files hold it: eigenvalues fall below the rounding of the entries, and no state is certainly above a letter but those with a floor. */
     @Test
     void lettersOfRoundedEntriesHaveAStrongConverse() {
@@ -115,6 +114,7 @@ final class RelaxedBoundsTest {
         assertTrue(bound.bits().lower() > 1.1, bound::toString);
     }
 
+    /** Two kets and the mixture at its optimum: D̃_α(ψ‖σ) = (1/u) ln⟨ψ|σ^(−u)|ψ⟩, least for σ ∝ ρ^(1/(1+u)), so that u D̃_α = (1+u) ln Tr ρ^(1/(1+u)). */
     @Test
     void strongConverseOfTwoKets() {
         double c = 0.78;
